@@ -1,0 +1,30 @@
+package org.spikewright.reading;
+
+import java.util.Optional;
+import org.spikewright.quantity.Measured;
+
+/**
+ * Everything known about a flask but its signal. Equal for all readings of a flask, and mostly
+ * equal for the same flask position of many samples, so that it is stored once.
+ *
+ * @param role what the row was measured for
+ * @param design how the additions were made
+ * @param addition what was added
+ * @param aliquot the volume of sample solution in the flask
+ * @param finalVolume the volume measured: the mark, or in one vessel the volume at this reading;
+ *     empty when it follows from the other facts
+ * @param startVolume one vessel: the volume before the first addition
+ * @param preparation what was done before the aliquot
+ * @param blanks the blanks that apply
+ * @param method what the method says about the series
+ */
+public record FlaskFacts(
+    Role role,
+    Design design,
+    Addition addition,
+    Optional<Measured> aliquot,
+    Optional<Measured> finalVolume,
+    Optional<Measured> startVolume,
+    Preparation preparation,
+    Blanks blanks,
+    MethodFacts method) {}

@@ -1,0 +1,60 @@
+package org.spikewright.series;
+
+import java.time.Instant;
+import java.util.List;
+import java.util.Optional;
+import org.spikewright.quantity.Unit;
+import org.spikewright.reading.Design;
+import org.spikewright.reading.MethodFacts;
+import org.spikewright.reading.Preparation;
+import org.spikewright.reading.Role;
+
+/**
+ * The flasks of one sample and analyte on a common axis.
+ *
+ * @param key its identity
+ * @param batchName the batch to show
+ * @param role what it was measured for
+ * @param design how the additions were made
+ * @param preparation what was done before the aliquot
+ * @param method what the method says
+ * @param axisUnit the unit of every flask's {@code x}
+ * @param toResult how a concentration on the axis becomes the result
+ * @param flasks ordered by addition, then label; at least one
+ * @param notes remarks from the gathering
+ * @param lastReadingAt the time of its last reading, or of its last arrival where no time is mapped
+ * @param timed whether times of measurement are mapped
+ */
+public record AdditionSeries(
+    SeriesKey key,
+    String batchName,
+    Role role,
+    Design design,
+    Preparation preparation,
+    MethodFacts method,
+    Unit axisUnit,
+    ToResult toResult,
+    List<Flask> flasks,
+    List<SeriesNote> notes,
+    Instant lastReadingAt,
+    boolean timed)
+    implements Gathered {
+
+  /** The flasks that take part in the fit, in order. */
+  public List<Flask> usableFlasks() {
+    return flasks.stream().filter(Flask::isUsable).toList();
+  }
+
+  /** The number of readings, of all flasks, that count. */
+  public int readings() {
+    return flasks.stream().mapToInt(flask -> flask.readings().size()).sum();
+  }
+
+  /** The time of its first reading, where times are mapped. */
+  public Optional<Instant> startedAt() {
+    return flasks.stream()
+        .flatMap(flask -> flask.readings().stream())
+        .flatMap(recorded -> recorded.reading().measuredAt().stream())
+        .min(Instant::compareTo);
+  }
+}

@@ -1,0 +1,46 @@
+package org.spikewright.series;
+
+import java.util.List;
+import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.Recorded;
+
+/**
+ * One flask of a series (in one vessel: its state after an addition), as the line sees it.
+ *
+ * @param label the flask's label, or its addition where none is mapped
+ * @param facts what is known about it
+ * @param x the addition referred to the aliquot, in the series' axis unit
+ * @param volumeFactor the factor by which a signal is multiplied to allow for the flask's volume
+ * @param readings the readings that count, ordered by replicate and time
+ * @param secondRun readings of a second run of this flask, never averaged with the first
+ * @param meanSignal mean of the readings that are numbers, after the baseline, before the volume
+ *     factor; NaN when no reading is a number
+ * @param replicateSd standard deviation of those readings; NaN with fewer than two
+ * @param numbers how many readings are numbers
+ */
+public record Flask(
+    String label,
+    FlaskFacts facts,
+    double x,
+    double volumeFactor,
+    List<Recorded> readings,
+    List<Recorded> secondRun,
+    double meanSignal,
+    double replicateSd,
+    int numbers) {
+
+  /** Whether the flask takes part in the fit. */
+  public boolean isUsable() {
+    return numbers > 0;
+  }
+
+  /** The signal that the line is fitted to. */
+  public double y() {
+    return meanSignal * volumeFactor;
+  }
+
+  /** Whether nothing was added to it. */
+  public boolean isUnspiked() {
+    return facts.addition().isNone();
+  }
+}

@@ -1,0 +1,38 @@
+package org.spikewright.summary;
+
+import java.time.Instant;
+import java.time.LocalDate;
+import java.time.ZoneId;
+import java.util.List;
+import org.spikewright.judgement.Outcome;
+
+/**
+ * Everything a revision of a lab day's summary is made from. The three sequences can be walked more
+ * than once and may be long: no more than one element of each is held at a time.
+ *
+ * @param labDay the lab day
+ * @param revision from 1
+ * @param moment the instant the revision stands for
+ * @param inProgress whether the lab day had not closed at that moment
+ * @param zone in which times are shown
+ * @param laboratory the laboratory's name; may be empty
+ * @param seriesCount how many elements {@code outcomes} and {@code results} have
+ * @param results verdicts that need a person first, then by key
+ * @param outcomes by key
+ * @param files by arrival
+ * @param refused by arrival and place
+ * @param settings in order
+ */
+public record Night(
+    LocalDate labDay,
+    int revision,
+    Instant moment,
+    boolean inProgress,
+    ZoneId zone,
+    String laboratory,
+    int seriesCount,
+    Iterable<ResultRow> results,
+    Iterable<Outcome> outcomes,
+    List<FileEntry> files,
+    Iterable<RefusedRow> refused,
+    List<Setting> settings) {}

@@ -1,0 +1,12 @@
+package org.spikewright.table;
+
+/** Takes rows one by one, in file order. */
+@FunctionalInterface
+public interface RowSink {
+  /**
+   * Takes the next row.
+   *
+   * @return whether more rows are wanted; on false the decoder stops and reports no fault
+   */
+  boolean accept(Row row);
+}
