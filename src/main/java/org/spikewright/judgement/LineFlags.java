@@ -104,12 +104,12 @@ final class LineFlags {
   }
 
   private Flag oddFlask(Odd odd) {
-    NativeEstimate without = NativeEstimate.of(odd.residual().without());
-    double other = result.series().toResult().value(without.value());
     String otherWords =
-        odd.residual().without().slope() > 0 && Double.isFinite(other)
-            ? n(other) + " " + unit
-            : "no result";
+        NativeEstimate.of(odd.residual().without())
+            .map(without -> result.series().toResult().value(without.value()))
+            .filter(other -> odd.residual().without().slope() > 0 && Double.isFinite(other))
+            .map(other -> n(other) + " " + unit)
+            .orElse("no result");
     return new Flag(
         FlagKind.ODD_FLASK,
         Weight.REVIEW,

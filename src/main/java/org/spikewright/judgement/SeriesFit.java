@@ -42,14 +42,15 @@ public sealed interface SeriesFit {
     if (!(line.slope() > 0)) {
       return new Unfitted("the signal does not rise with the additions");
     }
-    SeriesResult result = result(series, flasks, line);
-    return isFinite(result)
-        ? new Fitted(result)
-        : new Unfitted("the numbers are too large or too small to compute with");
+    return NativeEstimate.of(line)
+        .map(estimate -> result(series, flasks, line, estimate))
+        .filter(SeriesFit::isFinite)
+        .<SeriesFit>map(Fitted::new)
+        .orElse(new Unfitted("the numbers are too large or too small to compute with"));
   }
 
-  private static SeriesResult result(AdditionSeries series, List<Flask> flasks, StraightLine line) {
-    NativeEstimate estimate = NativeEstimate.of(line);
+  private static SeriesResult result(
+      AdditionSeries series, List<Flask> flasks, StraightLine line, NativeEstimate estimate) {
     ToResult scale = series.toResult();
     return new SeriesResult(
         series,
@@ -91,9 +92,6 @@ public sealed interface SeriesFit {
 
   private static boolean isFinite(SeriesResult result) {
     return Double.isFinite(result.value())
-        && Double.isFinite(result.estimate().g().orElse(0))
-        && result.residuals().stream()
-            .allMatch(residual -> residual.map(r -> Double.isFinite(r.t())).orElse(true))
         && Double.isFinite(result.standardError().orElse(0))
         && Double.isFinite(result.lower95().orElse(0))
         && Double.isFinite(result.upper95().orElse(0))
