@@ -163,7 +163,7 @@ final class LineFlags {
             "Correlation coefficient "
                 + Numbers.rounded(r.getAsDouble(), 4)
                 + ", below "
-                + n(limit.value())
+                + Numbers.plain(limit.value())
                 + ".",
             "Look at the plot; the coefficient does not tell scatter from a bend."));
   }

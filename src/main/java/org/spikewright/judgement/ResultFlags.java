@@ -8,6 +8,7 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import org.spikewright.fit.Detection;
 import org.spikewright.judgement.Flag.Weight;
+import org.spikewright.quantity.Numbers;
 import org.spikewright.series.Flask;
 
 /** Flags on the size of the result: its uncertainty, its additions, its detection limit. */
@@ -103,7 +104,7 @@ final class ResultFlags {
             "The expanded uncertainty is "
                 + n(100 * relative.getAsDouble())
                 + " % of the result; the target is "
-                + n(100 * limit.value())
+                + Numbers.plain(100 * limit.value())
                 + " %.",
             "More flasks, or additions of two to three times what is there."));
   }
@@ -141,7 +142,7 @@ final class ResultFlags {
             "The largest addition is "
                 + n(ratio)
                 + " times what is there; at least "
-                + n(limit.value())
+                + Numbers.plain(limit.value())
                 + " times is needed"
                 + (meetsTarget ? ", but the uncertainty meets its target." : "."),
             "Prepare again with the largest addition at 1.5 to 3 times what is there."));
@@ -149,7 +150,11 @@ final class ResultFlags {
 
   private Optional<Flag> tooLarge() {
     double floor = result.detection().map(Detection::detectionLimit).orElse(0.0);
-    double ratio = topAddition() / Math.max(found(), floor);
+    double reference = Math.max(found(), floor);
+    if (!(reference > 0)) {
+      return Optional.empty();
+    }
+    double ratio = topAddition() / reference;
     Limit review = criteria.largestTopAddition();
     Limit note = criteria.largeTopAddition();
     boolean isReview = review.on() && ratio > review.value();
@@ -198,7 +203,7 @@ final class ResultFlags {
             "The highest signal "
                 + n(top)
                 + " lies above the trusted range ("
-                + n(limit.value())
+                + Numbers.plain(limit.value())
                 + ").",
             "Use smaller additions or dilute the sample."));
   }

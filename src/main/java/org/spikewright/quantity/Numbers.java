@@ -33,16 +33,14 @@ public final class Numbers {
     if (value == 0) {
       return "0";
     }
-    BigDecimal rounded =
-        new BigDecimal(value).round(new MathContext(significant, RoundingMode.HALF_EVEN));
-    return inReach(value) ? rounded.toPlainString() : rounded.toString();
+    return roundedLike(value, value, significant);
   }
 
   /**
    * A number for people, to the decimal place of the given number of significant digits of another:
    * with 0.0234 and 2, {@code 1.235}.
    *
-   * @param guide above 0
+   * @param guide not 0
    */
   public static String roundedLike(double value, double guide, int significant) {
     BigDecimal digits =
