@@ -18,7 +18,15 @@ record FittedCase(String id, StraightLine line, Map<String, Double> quantities) 
   }
 
   static FittedCase of(String id) {
-    List<CSVRecord> rows = POINTS.stream().filter(row -> row.get("case").equals(id)).toList();
+    FittedCase fitted = of(id, POINTS.stream().filter(row -> row.get("case").equals(id)).toList());
+    if (id.equals("LA06")) {
+      addKnownUncertainty(fitted.quantities, fitted.line);
+    }
+    return fitted;
+  }
+
+  /** Fits rows with the columns x and y. */
+  static FittedCase of(String id, List<CSVRecord> rows) {
     double[] x = rows.stream().mapToDouble(row -> ReferenceTable.number(row, "x")).toArray();
     double[] y = rows.stream().mapToDouble(row -> ReferenceTable.number(row, "y")).toArray();
     StraightLine line = (StraightLine) StraightLine.fit(x, y);
@@ -27,9 +35,6 @@ record FittedCase(String id, StraightLine line, Map<String, Double> quantities) 
     addNative(all, NativeEstimate.of(line).orElseThrow());
     addCurve(all, line);
     addOdd(all, line);
-    if (id.equals("LA06")) {
-      addKnownUncertainty(all, line);
-    }
     return new FittedCase(id, line, all);
   }
 
@@ -105,6 +110,9 @@ record FittedCase(String id, StraightLine line, Map<String, Double> quantities) 
     double largest = 0;
     for (int i = 0; i < line.n(); i++) {
       Optional<DeletedResidual> odd = DeletedResidual.of(line, i, 0);
+      if (odd.isPresent()) {
+        all.put("rstudent" + (i + 1), odd.get().t());
+      }
       if (odd.isPresent() && Math.abs(odd.get().t()) > largest) {
         largest = Math.abs(odd.get().t());
         all.put("del_point", i + 1.0);
