@@ -29,16 +29,27 @@ import java.util.TreeMap;
 public final class Inbox {
   private final Path watched;
   private final SettleRule rule;
+  private final Opening opening;
   private Map<Path, FileState> states = new HashMap<>();
   private Map<String, Standing> standing = new TreeMap<>();
   private boolean heldSomething;
+
+  /** Tries whether a file opens. */
+  interface Opening {
+    void open(Path file) throws IOException;
+  }
 
   /** A notice that has begun and not ended. */
   private record Standing(Path place, String text) {}
 
   public Inbox(Path watched, SettleRule rule) {
+    this(watched, rule, Inbox::open);
+  }
+
+  Inbox(Path watched, SettleRule rule, Opening opening) {
     this.watched = watched;
     this.rule = rule;
+    this.opening = opening;
   }
 
   /**
@@ -165,15 +176,19 @@ public final class Inbox {
   }
 
   /** Why a file does not open; empty when it does. */
-  private static Optional<String> tryToOpen(Path path) throws NoSuchFileException {
+  private Optional<String> tryToOpen(Path path) throws NoSuchFileException {
     try {
-      FileChannel.open(path, StandardOpenOption.READ, LinkOption.NOFOLLOW_LINKS).close();
+      opening.open(path);
       return Optional.empty();
     } catch (NoSuchFileException gone) {
       throw gone;
     } catch (IOException trouble) {
       return Optional.of(Trouble.words(trouble));
     }
+  }
+
+  private static void open(Path file) throws IOException {
+    FileChannel.open(file, StandardOpenOption.READ, LinkOption.NOFOLLOW_LINKS).close();
   }
 
   private static String unopened(FileState.Waiting waiting) {
