@@ -8,6 +8,7 @@ import java.nio.file.NotDirectoryException;
 import java.nio.file.Path;
 import java.time.DateTimeException;
 import java.time.LocalDate;
+import java.util.Arrays;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
@@ -80,15 +81,13 @@ public final class Archive {
    * @throws IllegalArgumentException for a path outside the archive
    */
   public Path at(String target) {
-    Path path = watched.resolve(target);
     boolean inside =
-        path.startsWith(watched)
-            && watched.relativize(path).normalize().equals(watched.relativize(path))
-            && (target.startsWith(DONE + "/") || target.startsWith(REJECTED + "/"));
+        target.matches("(" + DONE + "|" + REJECTED + ")(/[^/\\\\]+)+")
+            && Arrays.stream(target.split("/")).noneMatch(part -> part.matches("\\.+"));
     if (!inside) {
       throw new IllegalArgumentException("'" + target + "' lies outside the archive");
     }
-    return path;
+    return watched.resolve(target);
   }
 
   /**
