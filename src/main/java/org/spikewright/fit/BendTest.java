@@ -2,7 +2,6 @@ package org.spikewright.fit;
 
 import java.util.Optional;
 import java.util.OptionalDouble;
-import org.apache.commons.math3.distribution.TDistribution;
 
 /**
  * The test for a bend: the quadratic coefficient against its standard error, one-sided towards
@@ -19,24 +18,31 @@ import org.apache.commons.math3.distribution.TDistribution;
 public record BendTest(
     double t, double df, double pOneSided, double pTwoSided, OptionalDouble nativeConcentration) {
 
-  /** The test with the parabola's own residual variance; empty without degrees of freedom. */
+  /**
+   * The test with the parabola's own residual variance. A scatter below the last digits of the
+   * numbers counts as those digits, so that flasks exactly on a line are not found bent by
+   * arithmetic.
+   *
+   * @param line through at least four points, at three or more distinct x
+   * @return empty without degrees of freedom, or when all signals are 0
+   */
   public static Optional<BendTest> of(StraightLine line) {
     return QuadraticFit.of(line).flatMap(BendTest::of);
   }
 
   private static Optional<BendTest> of(QuadraticFit parabola) {
-    OptionalDouble se = parabola.c2StandardError();
-    if (se.isEmpty() || !(se.getAsDouble() > 0)) {
+    double se = parabola.c2StandardError().orElse(0);
+    double t = parabola.c2() / se;
+    if (!(se > 0) || !Double.isFinite(t)) {
       return Optional.empty();
     }
-    double t = parabola.c2() / se.getAsDouble();
-    TDistribution student = new TDistribution(null, parabola.residualDf());
+    int df = parabola.residualDf();
     return Optional.of(
         new BendTest(
             t,
-            parabola.residualDf(),
-            student.cumulativeProbability(t),
-            2 * student.cumulativeProbability(-Math.abs(t)),
+            df,
+            StudentT.cumulative(t, df),
+            StudentT.twoSided(t, df),
             parabola.nativeConcentration()));
   }
 }

@@ -1,7 +1,6 @@
 package org.spikewright.fit;
 
 import java.util.Optional;
-import org.apache.commons.math3.distribution.TDistribution;
 
 /**
  * How far a point lies from the line through the others: the externally studentised residual.
@@ -16,32 +15,33 @@ import org.apache.commons.math3.distribution.TDistribution;
 public record DeletedResidual(double t, double df, double p, StraightLine without) {
 
   /**
-   * The deleted residual of a point.
+   * The deleted residual of a point. Where the others lie exactly on a line, the last digits of the
+   * numbers stand for their scatter.
    *
    * @param line with at least four points
    * @param i the point, from 0
-   * @param floor smallest standard deviation of a flask that the readings' resolution allows to be
-   *     seen, in signal units; 0 when not known
+   * @param floor 0 or more: smallest standard deviation of a flask that the readings' resolution
+   *     allows to be seen, in signal units; 0 when not known
    * @return empty when the point alone holds the line (leverage 1), when fewer than four points are
-   *     there, or when neither scatter nor floor gives a standard deviation
+   *     there, or when all signals are 0 and there is no floor
    */
   public static Optional<DeletedResidual> of(StraightLine line, int i, double floor) {
     int df = line.n() - 3;
-    double rest = 1 - line.leverage(i);
-    if (df < 1 || !(rest > 1e-12)) {
+    if (df < 1) {
       return Optional.empty();
     }
     LineOutcome others = StraightLine.fit(without(line.x(), i), without(line.y(), i));
     if (!(others instanceof StraightLine without)) {
       return Optional.empty();
     }
-    double sd = Math.max(floor, without.residualSd().orElse(0));
-    if (!(sd > 0)) {
-      return Optional.empty();
-    }
-    double t = line.residual(i) / (sd * Math.sqrt(rest));
-    double p = 2 * new TDistribution(null, df).cumulativeProbability(-Math.abs(t));
-    return Optional.of(new DeletedResidual(t, df, p, without));
+    double own = Math.max(without.residualSd().orElse(0), line.rounding());
+    double u = line.x()[i] - without.xMean();
+    // The same number as residual over s·√(1 − leverage), without the differences of near equals.
+    double spread = Math.sqrt(1 + 1.0 / without.n() + u / without.sxx() * u);
+    double t = (line.y()[i] - without.at(line.x()[i])) / (Math.max(floor, own) * spread);
+    return Double.isFinite(t)
+        ? Optional.of(new DeletedResidual(t, df, StudentT.twoSided(t, df), without))
+        : Optional.empty();
   }
 
   private static double[] without(double[] values, int i) {

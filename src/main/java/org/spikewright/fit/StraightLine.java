@@ -1,22 +1,23 @@
 package org.spikewright.fit;
 
+import java.util.Optional;
 import java.util.OptionalDouble;
 
 /**
  * An ordinary least-squares line {@code y = signalIntercept + slope · x} with what is needed to go
- * on from it, so that nobody computes it again.
+ * on from it, so that nobody computes it again. Every number of a line is finite.
  *
  * <p>Source: Danzer and Currie, Pure Appl. Chem. 70 (1998) 993; Miller and Miller, Statistics and
  * Chemometrics for Analytical Chemistry, ch. 5.
  *
  * @param n number of points, 2 or more
- * @param xMean mean of x
- * @param yMean mean of y
- * @param sxx sum of squares of x about its mean, above 0
- * @param syy sum of squares of y about its mean
- * @param slope signal per axis unit
+ * @param xMean mean of x, in axis units
+ * @param yMean mean of y, in signal units
+ * @param sxx sum of squares of x about its mean, axis units squared, above 0
+ * @param syy sum of squares of y about its mean, signal units squared, 0 or more
+ * @param slope signal per axis unit; may be 0
  * @param signalIntercept signal at x = 0
- * @param residualSumOfSquares signal squared
+ * @param residualSumOfSquares signal units squared, 0 or more
  * @param x the points, in the order given; not to be changed
  * @param y the points, in the order given; not to be changed
  */
@@ -33,13 +34,22 @@ public record StraightLine(
     double[] y)
     implements LineOutcome {
 
+  /** Within these sizes no square, product or quotient that a line needs can overflow. */
+  private static final double LARGEST = 1e75;
+
+  private static final double SMALLEST = 1e-75;
+
+  /** A spread of x this many times its last digit is still a spread. */
+  private static final double LAST_DIGITS = 16;
+
   /**
    * Fits a line. Sums are taken about the means, in the order of the points.
    *
-   * @param x abscissae
+   * @param x abscissae, in axis units
    * @param y signals, as many
-   * @return a line, or why there is none: fewer than two points, all x equal, or numbers so large
-   *     that a sum is not finite
+   * @return a line, or why there is none: fewer than two points, all x equal (or equal but for
+   *     rounding), a number that is none, or sizes outside 1e-75 to 1e75
+   * @throws IllegalArgumentException when the lengths differ
    */
   public static LineOutcome fit(double[] x, double[] y) {
     int n = x.length;
@@ -49,6 +59,34 @@ public record StraightLine(
     if (n < 2) {
       return new NoLine(n == 0 ? "no flask has a signal" : "only one flask has a signal");
     }
+    Optional<String> refusal = refusal(x, y);
+    return refusal.isPresent() ? new NoLine(refusal.get()) : leastSquares(x, y);
+  }
+
+  private static Optional<String> refusal(double[] x, double[] y) {
+    double largestX = size(x);
+    double largestY = size(y);
+    double spread = max(x) - min(x);
+    if (Double.isNaN(largestX) || Double.isNaN(largestY)) {
+      return Optional.of("an addition or a signal is not a number");
+    }
+    if (largestX > LARGEST || largestY > LARGEST) {
+      return Optional.of("the numbers are too large to compute with");
+    }
+    if (spread == 0) {
+      return Optional.of("all additions are equal");
+    }
+    if (spread < LAST_DIGITS * Math.ulp(largestX)) {
+      return Optional.of("the additions are equal but for rounding");
+    }
+    if (spread < SMALLEST || largestY > 0 && largestY < SMALLEST) {
+      return Optional.of("the numbers are too small to compute with");
+    }
+    return Optional.empty();
+  }
+
+  private static StraightLine leastSquares(double[] x, double[] y) {
+    int n = x.length;
     double xMean = mean(x);
     double yMean = mean(y);
     double sxx = 0;
@@ -61,13 +99,6 @@ public record StraightLine(
       sxy += u * v;
       syy += v * v;
     }
-    // Written so that NaN and infinity fail.
-    if (!(sxx >= 0 && sxx <= Double.MAX_VALUE && syy >= 0 && syy <= Double.MAX_VALUE)) {
-      return new NoLine("the numbers are too large to compute with");
-    }
-    if (!(sxx > 0)) {
-      return new NoLine("all additions are equal");
-    }
     double slope = sxy / sxx;
     double sse = 0;
     for (int i = 0; i < n; i++) {
@@ -75,9 +106,6 @@ public record StraightLine(
       sse += e * e;
     }
     double intercept = yMean - slope * xMean;
-    if (!(Double.isFinite(slope) && Double.isFinite(intercept))) {
-      return new NoLine("the numbers are too large to compute with");
-    }
     return new StraightLine(n, xMean, yMean, sxx, syy, slope, intercept, sse, x.clone(), y.clone());
   }
 
@@ -93,29 +121,35 @@ public record StraightLine(
         : OptionalDouble.empty();
   }
 
-  /** Standard error of the slope; empty with two points. */
+  /** Standard error of the slope, signal per axis unit; empty with two points. */
   public OptionalDouble slopeStandardError() {
     return scaled(Math.sqrt(1 / sxx));
   }
 
-  /** Standard error of the signal intercept; empty with two points. */
+  /** Standard error of the signal intercept, in signal units; empty with two points. */
   public OptionalDouble interceptStandardError() {
     return scaled(Math.sqrt(1.0 / n + xMean * xMean / sxx));
   }
 
-  /** Covariance of signal intercept and slope; empty with two points. */
+  /**
+   * Covariance of signal intercept and slope, −x̄·s²/S_xx, signal squared per axis unit; empty with
+   * two points. Leaving it out makes the standard error of the x-intercept too small: Bruce and
+   * Gill, J. Chem. Educ. 76 (1999) 805.
+   */
   public OptionalDouble covariance() {
     return n > 2
-        ? OptionalDouble.of(-xMean / sxx * residualSumOfSquares / (n - 2))
+        ? OptionalDouble.of(-xMean / sxx * (residualSumOfSquares / (n - 2)))
         : OptionalDouble.empty();
   }
 
-  /** Correlation coefficient; empty when all signals are equal. Shown, never used alone. */
+  /**
+   * Correlation coefficient, −1 to 1; empty when all signals are equal. Shown, never used alone.
+   */
   public OptionalDouble correlation() {
     if (!(syy > 0)) {
       return OptionalDouble.empty();
     }
-    double r = slope * Math.sqrt(sxx / syy);
+    double r = slope * (Math.sqrt(sxx) / Math.sqrt(syy));
     return OptionalDouble.of(Math.max(-1, Math.min(1, r)));
   }
 
@@ -124,7 +158,7 @@ public record StraightLine(
     return yMean + slope * (x - xMean);
   }
 
-  /** Signal minus line at a point, counted from 0. */
+  /** Signal minus line at a point, counted from 0; in signal units. */
   public double residual(int i) {
     return (y[i] - yMean) - slope * (x[i] - xMean);
   }
@@ -135,12 +169,23 @@ public record StraightLine(
     return 1.0 / n + u * u / sxx;
   }
 
+  /**
+   * What the last binary digits of the numbers can do to a residual, in signal units. A scatter
+   * below it is arithmetic and no evidence: flasks that lie exactly on a line have such a scatter.
+   */
+  double rounding() {
+    return 4 * (Math.ulp(size(y)) + Math.abs(slope) * Math.ulp(size(x)));
+  }
+
   private OptionalDouble scaled(double factor) {
     OptionalDouble sd = residualSd();
     return sd.isPresent() ? OptionalDouble.of(sd.getAsDouble() * factor) : sd;
   }
 
-  /** The mean, with one correction step so that a large offset costs no digits. */
+  /**
+   * The mean, with one correction step so that a large offset costs no digits, and never outside
+   * the values: the mean of equal numbers is that number, not its neighbour.
+   */
   static double mean(double[] values) {
     double sum = 0;
     for (double value : values) {
@@ -151,6 +196,26 @@ public record StraightLine(
     for (double value : values) {
       rest += value - mean;
     }
-    return mean + rest / values.length;
+    return Math.max(min(values), Math.min(max(values), mean + rest / values.length));
+  }
+
+  private static double size(double[] values) {
+    return Math.max(Math.abs(min(values)), Math.abs(max(values)));
+  }
+
+  private static double min(double[] values) {
+    double min = values[0];
+    for (double value : values) {
+      min = Math.min(min, value);
+    }
+    return min;
+  }
+
+  private static double max(double[] values) {
+    double max = values[0];
+    for (double value : values) {
+      max = Math.max(max, value);
+    }
+    return max;
   }
 }

@@ -7,18 +7,14 @@ public enum FlagKind {
   SLOPE_NOT_ESTABLISHED("slope-not-established"),
   BENT("bent"),
   ODD_FLASK("odd-flask"),
-  ODD_LEVEL("odd-level"),
   UNCERTAIN("uncertain"),
   LOW_CORRELATION("low-correlation"),
   NO_UNSPIKED_FLASK("no-unspiked-flask"),
   FEW_FLASKS("few-flasks"),
   ADDITIONS_TOO_SMALL("additions-too-small"),
   ADDITIONS_TOO_LARGE("additions-too-large"),
-  UNEVEN_ADDITIONS("uneven-additions"),
   OVER_RANGE("over-range"),
   LEFT_OUT("left-out"),
-  OUTSIDE_RANGE("outside-range"),
-  SCATTERED_READINGS("scattered-readings"),
   BELOW_DETECTION("below-detection"),
   NEAR_DETECTION("near-detection"),
   NEGATIVE_RESULT("negative-result"),
@@ -28,7 +24,6 @@ public enum FlagKind {
   SUPERSEDED_READING("superseded-reading"),
   SECOND_RUN("second-run"),
   EXPORTED_AGAIN("exported-again"),
-  SIMILAR_IDS("similar-ids"),
   WAITING("waiting");
 
   private final String shortName;

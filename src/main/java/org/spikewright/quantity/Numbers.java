@@ -1,6 +1,8 @@
 package org.spikewright.quantity;
 
 import java.math.BigDecimal;
+import java.math.MathContext;
+import java.math.RoundingMode;
 
 /** How numbers are printed where a program or a person reads them back. */
 public final class Numbers {
@@ -19,5 +21,37 @@ public final class Numbers {
       return Double.toString(value);
     }
     return new BigDecimal(Double.toString(value)).stripTrailingZeros().toPlainString();
+  }
+
+  /**
+   * A number for people, to so many significant digits: {@code 14.2}, {@code 0.0031}, {@code
+   * 1.2E-9}.
+   *
+   * @param significant 1 or more
+   */
+  public static String rounded(double value, int significant) {
+    if (value == 0) {
+      return "0";
+    }
+    return roundedLike(value, value, significant);
+  }
+
+  /**
+   * A number for people, to the decimal place of the given number of significant digits of another:
+   * with 0.0234 and 2, {@code 1.235}.
+   *
+   * @param guide not 0
+   */
+  public static String roundedLike(double value, double guide, int significant) {
+    BigDecimal digits =
+        new BigDecimal(guide).round(new MathContext(significant, RoundingMode.HALF_EVEN));
+    int scale = digits.scale() + significant - digits.precision();
+    BigDecimal rounded = new BigDecimal(value).setScale(scale, RoundingMode.HALF_EVEN);
+    return inReach(guide) ? rounded.toPlainString() : rounded.toString();
+  }
+
+  private static boolean inReach(double value) {
+    double size = Math.abs(value);
+    return size >= 1e-6 && size < 1e9;
   }
 }

@@ -1,6 +1,7 @@
 package org.spikewright.quantity;
 
 import java.util.LinkedHashMap;
+import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 
@@ -37,7 +38,7 @@ public record Unit(String symbol, Dimension dimension, double perBase) {
   }
 
   /** The spellings we print, in table order, for messages that list what is known. */
-  public static java.util.List<String> symbols() {
+  public static List<String> symbols() {
     return TABLE.values().stream().map(Unit::symbol).distinct().toList();
   }
 

@@ -18,13 +18,9 @@ public record SeriesNote(Kind kind, String words) {
     EXPORTED_AGAIN,
     /** Aliquots differ from flask to flask. */
     UNEQUAL_ALIQUOTS,
-    /** Two flasks hold the same addition, or steps are uneven. */
-    REPEATED_ADDITION,
     /** A reading above the instrument's range. */
     OVER_RANGE,
     /** A reading below the instrument's range, or missing. */
-    LEFT_OUT,
-    /** Sample identifiers that differ only in case or blanks. */
-    SIMILAR_IDS
+    LEFT_OUT
   }
 }

@@ -1,6 +1,11 @@
 package org.spikewright.series;
 
+import java.util.Optional;
+import org.spikewright.quantity.Measured;
+import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
+import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.Preparation;
 
 /**
  * From the axis to the result: {@code result = (x · dilution − methodBlank) · perSample ·
@@ -22,6 +27,42 @@ public record ToResult(
     double perSample,
     double unitFactor,
     Unit unit) {
+
+  /** The way from an axis to the result, by the facts that all flasks of a series share. */
+  static ToResult of(FlaskFacts facts, Axis axis) {
+    Preparation preparation = facts.preparation();
+    Unit asked = facts.method().resultUnit();
+    boolean digested = preparation.testPortion().isPresent();
+    double perSample = digested ? litres(preparation) / portion(preparation) : 1;
+    double dry = preparation.dryMassFraction().orElse(1);
+    Unit unit =
+        preparation.dryMassFraction().isPresent()
+            ? new Unit(asked.symbol() + " dry", asked.dimension(), asked.perBase())
+            : asked;
+    Optional<Measured> blank = facts.blanks().method();
+    return new ToResult(
+        preparation.dilution() * axis.dilution(),
+        blank.map(b -> b.in(axis.unit())).orElse(0.0),
+        blank.map(b -> tolerance(b) * b.quantity().unit().to(axis.unit())).orElse(0.0),
+        perSample / dry,
+        digested ? axis.unit().perBase() / asked.perBase() : axis.unit().to(asked),
+        unit);
+  }
+
+  private static double litres(Preparation preparation) {
+    return preparation.digestVolume().orElseThrow().in(Unit.of("L"));
+  }
+
+  /** The test portion in base units: grams or litres. */
+  private static double portion(Preparation preparation) {
+    Quantity portion = preparation.testPortion().orElseThrow();
+    return portion.value() * portion.unit().perBase();
+  }
+
+  /** A tolerance is the half-width of a rectangular distribution (JCGM 100:2008, 4.3.7). */
+  private static double tolerance(Measured blank) {
+    return blank.tolerance().orElse(0) / Math.sqrt(3);
+  }
 
   /** The result that belongs to a concentration on the axis. */
   public double value(double x) {

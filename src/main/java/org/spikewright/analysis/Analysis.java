@@ -1,0 +1,58 @@
+package org.spikewright.analysis;
+
+import java.time.Instant;
+import java.util.Iterator;
+import java.util.Optional;
+import org.spikewright.judgement.Judge;
+import org.spikewright.judgement.Outcome;
+import org.spikewright.series.Gathered;
+
+/**
+ * A lab day's series, judged. Nothing is held: each walk fits and judges anew, and gives the same
+ * outcomes, since both are pure functions of the series.
+ */
+public final class Analysis implements Iterable<Outcome> {
+  private final Iterable<Gathered> series;
+  private final Judge judge;
+
+  /**
+   * An analysis.
+   *
+   * @param series of one lab day, ordered by key; can be walked more than once
+   */
+  public Analysis(Iterable<Gathered> series, Judge judge) {
+    this.series = series;
+    this.judge = judge;
+  }
+
+  /** The outcomes, in the order of the series. */
+  @Override
+  public Iterator<Outcome> iterator() {
+    Iterator<Gathered> walk = series.iterator();
+    return new Iterator<>() {
+      @Override
+      public boolean hasNext() {
+        return walk.hasNext();
+      }
+
+      @Override
+      public Outcome next() {
+        return judge.judge(walk.next());
+      }
+    };
+  }
+
+  /**
+   * The first instant at which a series that is waited for is judged as it stands; empty if none.
+   */
+  public Optional<Instant> waitingUntil() {
+    Optional<Instant> first = Optional.empty();
+    for (Gathered gathered : series) {
+      Optional<Instant> until = judge.waitingUntil(gathered);
+      if (until.isPresent() && (first.isEmpty() || until.get().isBefore(first.get()))) {
+        first = until;
+      }
+    }
+    return first;
+  }
+}

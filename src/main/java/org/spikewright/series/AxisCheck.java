@@ -1,0 +1,207 @@
+package org.spikewright.series;
+
+import java.util.List;
+import java.util.Optional;
+import java.util.function.Function;
+import java.util.function.Predicate;
+import java.util.stream.Collectors;
+import java.util.stream.Stream;
+import org.spikewright.quantity.Dimension;
+import org.spikewright.quantity.Measured;
+import org.spikewright.quantity.Quantity;
+import org.spikewright.quantity.Unit;
+import org.spikewright.reading.Addition.OfStock;
+import org.spikewright.reading.Addition.Stated;
+import org.spikewright.reading.Addition.Terms;
+import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.Preparation;
+
+/** Whether the facts of a series' flasks fit together, so that {@link Axis} can place them. */
+final class AxisCheck {
+  /** What is wrong with a series' facts, and what would be right. */
+  record Misfit(String found, String expected) {}
+
+  private final List<FlaskDraft> flasks;
+
+  private AxisCheck(List<FlaskDraft> flasks) {
+    this.flasks = flasks;
+  }
+
+  /** The first thing that keeps the flasks from one axis; empty when nothing does. */
+  static Optional<Misfit> misfit(List<FlaskDraft> flasks) {
+    AxisCheck check = new AxisCheck(flasks);
+    return check
+        .differing("design", facts -> facts.design().word())
+        .or(() -> check.differing("preparation", facts -> facts.preparation().toString()))
+        .or(() -> check.differing("method blank", facts -> facts.blanks().method().toString()))
+        .or(() -> check.differing("kind of concentration", AxisCheck::kinds))
+        .or(check::ofDesign)
+        .or(check::mixedKinds)
+        .or(check::resultUnit);
+  }
+
+  /** The dimensions of everything that is added to or taken from a concentration on the axis. */
+  private static String kinds(FlaskFacts facts) {
+    return Stream.of(
+            Optional.of(Axis.unit(facts)),
+            facts.blanks().solvent().map(blank -> blank.quantity().unit()),
+            facts.blanks().method().map(blank -> blank.quantity().unit()))
+        .flatMap(Optional::stream)
+        .map(unit -> unit.dimension().words())
+        .distinct()
+        .collect(Collectors.joining(" with "));
+  }
+
+  private Optional<Misfit> mixedKinds() {
+    String kinds = kinds(flasks.get(0).facts());
+    return kinds.contains(" with ")
+        ? Optional.of(new Misfit(kinds, "stock and blanks of one kind"))
+        : Optional.empty();
+  }
+
+  private Optional<Misfit> ofDesign() {
+    return switch (flasks.get(0).facts().design()) {
+      case MADE_UP -> madeUp();
+      case ONE_VESSEL -> oneVessel();
+      case STATED -> stated();
+    };
+  }
+
+  private Optional<Misfit> madeUp() {
+    return needs("a volume of stock as its addition", f -> f.addition() instanceof OfStock)
+        .or(() -> needs("an aliquot volume above 0", f -> isPositive(f.aliquot())))
+        .or(this::finalVolumes)
+        .or(() -> needs("volumes that fit into the flask", AxisCheck::fits));
+  }
+
+  private Optional<Misfit> finalVolumes() {
+    long with = flasks.stream().filter(f -> f.facts().finalVolume().isPresent()).count();
+    return with == 0
+        ? Optional.empty()
+        : needs("a final volume above 0, as other flasks have", f -> isPositive(f.finalVolume()));
+  }
+
+  private static boolean fits(FlaskFacts facts) {
+    if (facts.finalVolume().isEmpty()) {
+      return true;
+    }
+    Unit litre = Unit.of("L");
+    double total = facts.finalVolume().get().in(litre);
+    double in = facts.aliquot().orElseThrow().in(litre) + facts.addition().amount().in(litre);
+    return in <= total * (1 + 1e-9);
+  }
+
+  private Optional<Misfit> oneVessel() {
+    return needs("a volume of stock as its addition", f -> f.addition() instanceof OfStock)
+        .or(() -> differing("aliquot", facts -> shown(facts.aliquot())))
+        .or(() -> differing("start volume", facts -> shown(facts.startVolume())))
+        .or(this::startVolume);
+  }
+
+  private Optional<Misfit> startVolume() {
+    List<FlaskFacts> facts = flasks.stream().map(FlaskDraft::facts).toList();
+    Optional<Quantity> start = Axis.startVolume(facts);
+    if (start.isEmpty() || !(start.get().value() > 0)) {
+      return Optional.of(
+          new Misfit(
+              start.map(volume -> "a start volume of " + volume).orElse("no start volume"),
+              "the volume in the vessel before the first addition, or the volume at each reading"));
+    }
+    Optional<Measured> aliquot = facts.get(0).aliquot();
+    if (aliquot.isPresent() && !isPositive(aliquot)) {
+      return Optional.of(new Misfit("an aliquot of " + aliquot.get(), "an aliquot above 0"));
+    }
+    Unit litre = Unit.of("L");
+    if (aliquot.isPresent() && aliquot.get().in(litre) > start.get().in(litre) * (1 + 1e-9)) {
+      return Optional.of(
+          new Misfit(
+              "an aliquot of " + aliquot.get() + " in a vessel that starts with " + start.get(),
+              "a start volume that holds the aliquot"));
+    }
+    return Optional.empty();
+  }
+
+  private Optional<Misfit> stated() {
+    return needs("a stated concentration as its addition", f -> f.addition() instanceof Stated)
+        .or(
+            () ->
+                differing("way of stating additions", f -> ((Stated) f.addition()).terms().word()))
+        .or(this::flaskTerms);
+  }
+
+  private Optional<Misfit> flaskTerms() {
+    if (((Stated) flasks.get(0).facts().addition()).terms() == Terms.SAMPLE) {
+      return Optional.empty();
+    }
+    return needs("an aliquot volume above 0", f -> isPositive(f.aliquot()))
+        .or(() -> needs("a final volume above 0", f -> isPositive(f.finalVolume())))
+        .or(() -> differing("aliquot", facts -> shown(facts.aliquot())))
+        .or(() -> differing("final volume", facts -> shown(facts.finalVolume())));
+  }
+
+  /** Whether concentration, digest and test portion lead to the unit that the method asks for. */
+  private Optional<Misfit> resultUnit() {
+    FlaskFacts facts = flasks.get(0).facts();
+    Preparation preparation = facts.preparation();
+    Unit unit = Axis.unit(facts);
+    Unit asked = facts.method().resultUnit();
+    if (preparation.testPortion().isPresent() != preparation.digestVolume().isPresent()) {
+      return Optional.of(
+          new Misfit(
+              preparation.testPortion().isPresent()
+                  ? "a test portion without a digest volume"
+                  : "a digest volume without a test portion",
+              "both, or neither"));
+    }
+    Dimension due =
+        preparation
+            .testPortion()
+            .map(p -> perPortion(unit.dimension(), p))
+            .orElse(unit.dimension());
+    return due == asked.dimension()
+        ? Optional.empty()
+        : Optional.of(
+            new Misfit(
+                "additions in " + unit + ", which lead to " + due.words(),
+                "additions that lead to the result unit " + asked));
+  }
+
+  private static Dimension perPortion(Dimension solution, Quantity portion) {
+    if (portion.unit().dimension() == Dimension.VOLUME) {
+      return solution;
+    }
+    return switch (solution) {
+      case MASS_PER_VOLUME -> Dimension.MASS_PER_MASS;
+      case AMOUNT_PER_VOLUME -> Dimension.AMOUNT_PER_MASS;
+      default -> solution;
+    };
+  }
+
+  private Optional<Misfit> needs(String what, Predicate<FlaskFacts> holds) {
+    String without =
+        flasks.stream()
+            .filter(flask -> !holds.test(flask.facts()))
+            .map(FlaskDraft::label)
+            .collect(Collectors.joining(", "));
+    return without.isEmpty()
+        ? Optional.empty()
+        : Optional.of(
+            new Misfit("flask " + without + " without " + what, what + " for each flask"));
+  }
+
+  private Optional<Misfit> differing(String what, Function<FlaskFacts, String> word) {
+    List<String> words = flasks.stream().map(f -> word.apply(f.facts())).distinct().toList();
+    return words.size() < 2
+        ? Optional.empty()
+        : Optional.of(
+            new Misfit("more than one " + what + ": " + String.join(", ", words), "one " + what));
+  }
+
+  private static boolean isPositive(Optional<Measured> volume) {
+    return volume.isPresent() && volume.get().quantity().value() > 0;
+  }
+
+  private static String shown(Optional<Measured> volume) {
+    return volume.map(Measured::toString).orElse("none");
+  }
+}

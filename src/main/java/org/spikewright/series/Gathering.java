@@ -1,0 +1,121 @@
+package org.spikewright.series;
+
+import java.time.Instant;
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import java.util.SortedMap;
+import java.util.TreeMap;
+import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.Recorded;
+import org.spikewright.reading.Subject;
+
+/**
+ * Gathers the readings of one subject into series: divided by batch or by pauses, then by
+ * preparation; readings of a flask together. A pure function of the readings, whatever the order in
+ * which they arrived.
+ */
+public final class Gathering {
+  private final GatheringRules rules;
+
+  /** Gathers by these rules. */
+  public Gathering(GatheringRules rules) {
+    this.rules = rules;
+  }
+
+  /**
+   * Gathers.
+   *
+   * @param subject whose readings these are
+   * @param readings all of them, in any order; each identity once
+   * @return series and what could not be one, ordered by key
+   */
+  public List<Gathered> gather(Subject subject, List<Recorded> readings) {
+    List<Gathered> gathered = new ArrayList<>();
+    Map<SeriesKey, Integer> ordinals = new HashMap<>();
+    for (Cluster cluster : new Clusters(rules).of(readings)) {
+      byPreparation(cluster)
+          .forEach(
+              (preparation, part) -> {
+                SeriesKey first =
+                    new SeriesKey(cluster.labDay(), subject, cluster.batch(), preparation, 1);
+                int ordinal = ordinals.merge(first, 1, Integer::sum);
+                SeriesKey key =
+                    new SeriesKey(cluster.labDay(), subject, cluster.batch(), preparation, ordinal);
+                gathered.add(series(key, cluster, part));
+              });
+    }
+    gathered.sort(Comparator.comparing(Gathered::key));
+    return gathered;
+  }
+
+  private static SortedMap<String, List<Recorded>> byPreparation(Cluster cluster) {
+    SortedMap<String, List<Recorded>> parts = new TreeMap<>();
+    for (Recorded recorded : cluster.readings()) {
+      String preparation = recorded.reading().facts().preparation().shown();
+      parts.computeIfAbsent(preparation, k -> new ArrayList<>()).add(recorded);
+    }
+    return parts;
+  }
+
+  private static Gathered series(SeriesKey key, Cluster cluster, List<Recorded> readings) {
+    List<FlaskDraft> drafts = new ArrayList<>();
+    SortedMap<String, List<Recorded>> byFlask = new TreeMap<>();
+    readings.forEach(
+        r -> byFlask.computeIfAbsent(r.reading().flask(), k -> new ArrayList<>()).add(r));
+    for (Map.Entry<String, List<Recorded>> entry : byFlask.entrySet()) {
+      Optional<FlaskFacts> facts = facts(entry.getValue());
+      if (facts.isEmpty()) {
+        return new Ungrouped(
+            key,
+            cluster.batchName(),
+            "flask " + entry.getKey() + " has readings with different additions or volumes",
+            "one addition, aliquot and volume for all readings of a flask",
+            readings);
+      }
+      drafts.add(draft(entry.getKey(), facts.get(), entry.getValue()));
+    }
+    Optional<AxisCheck.Misfit> misfit = AxisCheck.misfit(drafts);
+    if (misfit.isPresent()) {
+      return new Ungrouped(
+          key, cluster.batchName(), misfit.get().found(), misfit.get().expected(), readings);
+    }
+    return new SeriesBuilder(key, cluster, drafts).build();
+  }
+
+  /** The facts of a flask: those of its latest delivery; empty when that contradicts itself. */
+  private static Optional<FlaskFacts> facts(List<Recorded> readings) {
+    long latest = readings.stream().mapToLong(Recorded::arrival).max().orElseThrow();
+    List<FlaskFacts> facts =
+        readings.stream()
+            .filter(r -> r.arrival() == latest)
+            .map(r -> r.reading().facts())
+            .distinct()
+            .toList();
+    return facts.size() == 1 ? Optional.of(facts.get(0)) : Optional.empty();
+  }
+
+  /**
+   * Where replicates are mapped, the same replicate at a later time is a second run: it is never
+   * averaged with the first.
+   */
+  private static FlaskDraft draft(String label, FlaskFacts facts, List<Recorded> readings) {
+    List<Recorded> first = new ArrayList<>();
+    List<Recorded> second = new ArrayList<>();
+    Map<String, Instant> firstAt = new HashMap<>();
+    for (Recorded recorded : readings) {
+      Optional<Instant> time = recorded.reading().measuredAt();
+      if (time.isEmpty() || !recorded.reading().replicateMapped()) {
+        first.add(recorded);
+      } else if (firstAt.putIfAbsent(recorded.reading().replicate(), time.get()) == null) {
+        first.add(recorded);
+      } else {
+        second.add(recorded);
+      }
+    }
+    return new FlaskDraft(label, facts, List.copyOf(first), List.copyOf(second));
+  }
+}

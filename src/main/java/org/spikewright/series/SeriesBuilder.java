@@ -1,0 +1,159 @@
+package org.spikewright.series;
+
+import java.time.Instant;
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.List;
+import java.util.stream.Collectors;
+import java.util.stream.Stream;
+import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.Signal;
+import org.spikewright.reading.Signal.State;
+
+/** Builds a series from flasks whose facts fit together. */
+final class SeriesBuilder {
+  private final SeriesKey key;
+  private final Cluster cluster;
+  private final List<FlaskDraft> drafts;
+  private final FlaskFacts facts;
+
+  SeriesBuilder(SeriesKey key, Cluster cluster, List<FlaskDraft> drafts) {
+    this.key = key;
+    this.cluster = cluster;
+    this.facts = drafts.get(0).facts();
+    this.drafts =
+        facts.method().fitReadings()
+            ? drafts.stream().flatMap(SeriesBuilder::readingByReading).toList()
+            : drafts;
+  }
+
+  AdditionSeries build() {
+    Axis axis = Axis.of(drafts.stream().map(FlaskDraft::facts).toList());
+    List<Flask> flasks = new ArrayList<>();
+    for (int i = 0; i < drafts.size(); i++) {
+      flasks.add(flask(drafts.get(i), axis.x()[i], axis.factor()[i]));
+    }
+    flasks.sort(Comparator.comparingDouble(Flask::x).thenComparing(Flask::label));
+    return new AdditionSeries(
+        key,
+        cluster.batchName(),
+        facts.role(),
+        facts.design(),
+        facts.preparation(),
+        facts.method(),
+        axis.unit(),
+        ToResult.of(facts, axis),
+        List.copyOf(flasks),
+        notes(),
+        lastReadingAt(),
+        drafts.get(0).readings().get(0).reading().measuredAt().isPresent());
+  }
+
+  /** Each reading as a flask of its own, where the laboratory asks for that. */
+  private static Stream<FlaskDraft> readingByReading(FlaskDraft draft) {
+    return draft.readings().stream()
+        .map(
+            recorded ->
+                new FlaskDraft(
+                    draft.label() + ", reading " + (draft.readings().indexOf(recorded) + 1),
+                    draft.facts(),
+                    List.of(recorded),
+                    List.of()));
+  }
+
+  private static Flask flask(FlaskDraft draft, double x, double factor) {
+    double baseline = draft.facts().blanks().baseline().orElse(0);
+    double[] signals =
+        draft.readings().stream()
+            .map(recorded -> recorded.reading().signal())
+            .filter(Signal.Value.class::isInstance)
+            .mapToDouble(signal -> ((Signal.Value) signal).value() - baseline)
+            .toArray();
+    double mean = mean(signals);
+    return new Flask(
+        draft.label(),
+        draft.facts(),
+        x,
+        factor,
+        draft.readings(),
+        draft.secondRun(),
+        mean,
+        standardDeviation(signals, mean),
+        signals.length);
+  }
+
+  private static double mean(double[] values) {
+    double sum = 0;
+    for (double value : values) {
+      sum += value;
+    }
+    return sum / values.length;
+  }
+
+  private static double standardDeviation(double[] values, double mean) {
+    double squares = 0;
+    for (double value : values) {
+      squares += (value - mean) * (value - mean);
+    }
+    return values.length < 2 ? Double.NaN : Math.sqrt(squares / (values.length - 1));
+  }
+
+  private Instant lastReadingAt() {
+    return drafts.stream()
+        .flatMap(draft -> draft.readings().stream())
+        .map(recorded -> recorded.reading().measuredAt().orElse(recorded.firstArrivedAt()))
+        .max(Instant::compareTo)
+        .orElseThrow();
+  }
+
+  private List<SeriesNote> notes() {
+    List<SeriesNote> notes = new ArrayList<>();
+    note(notes, SeriesNote.Kind.OVER_RANGE, states(State.OVER_RANGE));
+    note(
+        notes,
+        SeriesNote.Kind.LEFT_OUT,
+        Stream.concat(states(State.BELOW_RANGE), states(State.MISSING)));
+    note(
+        notes,
+        SeriesNote.Kind.SUPERSEDED_READING,
+        drafts.stream()
+            .flatMap(draft -> draft.readings().stream())
+            .filter(r -> r.superseded() > 0)
+            .map(r -> r.reading().position().toString()));
+    note(
+        notes,
+        SeriesNote.Kind.SECOND_RUN,
+        drafts.stream().filter(d -> !d.secondRun().isEmpty()).map(FlaskDraft::label));
+    note(notes, SeriesNote.Kind.EXPORTED_AGAIN, cluster.alsoNamed().stream());
+    List<String> aliquots =
+        drafts.stream()
+            .flatMap(d -> d.facts().aliquot().stream())
+            .map(Object::toString)
+            .distinct()
+            .toList();
+    if (aliquots.size() > 1) {
+      note(notes, SeriesNote.Kind.UNEQUAL_ALIQUOTS, aliquots.stream());
+    }
+    return List.copyOf(notes);
+  }
+
+  private Stream<String> states(State state) {
+    return drafts.stream()
+        .flatMap(
+            draft ->
+                draft.readings().stream()
+                    .filter(r -> isIn(r.reading().signal(), state))
+                    .map(r -> "flask " + draft.label() + " (" + r.reading().position() + ")"));
+  }
+
+  private static boolean isIn(Signal signal, State state) {
+    return signal instanceof Signal.NoNumber word && word.state() == state;
+  }
+
+  private static void note(List<SeriesNote> notes, SeriesNote.Kind kind, Stream<String> places) {
+    String words = places.collect(Collectors.joining(", "));
+    if (!words.isEmpty()) {
+      notes.add(new SeriesNote(kind, words));
+    }
+  }
+}
