@@ -4,6 +4,7 @@ import java.time.Instant;
 import java.time.LocalDate;
 import java.time.ZoneId;
 import java.util.List;
+import org.spikewright.judgement.Criteria;
 import org.spikewright.judgement.Outcome;
 
 /**
@@ -21,7 +22,8 @@ import org.spikewright.judgement.Outcome;
  * @param outcomes by key
  * @param files by arrival
  * @param refused by arrival and place
- * @param settings in order
+ * @param settings in order; the limits follow from {@code criteria} and need not be among them
+ * @param criteria the limits that hold where a method sets none
  */
 public record Night(
     LocalDate labDay,
@@ -35,4 +37,5 @@ public record Night(
     Iterable<Outcome> outcomes,
     List<FileEntry> files,
     Iterable<RefusedRow> refused,
-    List<Setting> settings) {}
+    List<Setting> settings,
+    Criteria criteria) {}

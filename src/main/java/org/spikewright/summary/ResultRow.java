@@ -1,10 +1,21 @@
 package org.spikewright.summary;
 
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.OptionalInt;
+import java.util.function.Function;
+import org.spikewright.fit.StraightLine;
+import org.spikewright.judgement.Flag;
+import org.spikewright.judgement.Outcome;
+import org.spikewright.judgement.SeriesResult;
 import org.spikewright.judgement.Verdict;
+import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.Recorded;
+import org.spikewright.series.AdditionSeries;
+import org.spikewright.series.Gathered;
 import org.spikewright.series.SeriesKey;
+import org.spikewright.series.Ungrouped;
 
 /**
  * One result, as the results file, the Results sheet and the ledger hold it.
@@ -66,4 +77,83 @@ public record ResultRow(
     OptionalInt residualDf,
     OptionalDouble r,
     String design,
-    List<String> sourceFiles) {}
+    List<String> sourceFiles) {
+
+  /** The row of what the night says about a series. */
+  public static ResultRow of(Outcome outcome) {
+    Optional<SeriesResult> result = outcome.result();
+    Optional<StraightLine> line = result.map(SeriesResult::line);
+    OptionalDouble lower = number(result, SeriesResult::lower95);
+    OptionalDouble upper = number(result, SeriesResult::upper95);
+    OptionalDouble none = OptionalDouble.empty();
+    Origin origin = Origin.of(outcome.gathered());
+    return new ResultRow(
+        outcome.gathered().key(),
+        origin.batch,
+        origin.role,
+        number(result, found -> OptionalDouble.of(found.value())),
+        origin.unit,
+        outcome.reported(),
+        none,
+        none,
+        none,
+        lower,
+        upper,
+        number(result, SeriesResult::standardError),
+        lower,
+        upper,
+        lower.isPresent() || upper.isPresent() ? "own" : "",
+        number(result.flatMap(SeriesResult::detection), d -> OptionalDouble.of(d.detectionLimit())),
+        outcome.verdict(),
+        outcome.flags().stream().map(flag -> flag.kind().shortName()).toList(),
+        outcome.flags().stream().map(Flag::sentence).toList(),
+        result.map(found -> found.flasks().size()).orElse(0),
+        origin.readings.size(),
+        number(line, found -> OptionalDouble.of(found.slope())),
+        number(line, found -> OptionalDouble.of(found.signalIntercept())),
+        number(line, StraightLine::residualSd),
+        line.map(found -> OptionalInt.of(found.residualDf())).orElse(OptionalInt.empty()),
+        number(line, StraightLine::correlation),
+        origin.design,
+        origin.files());
+  }
+
+  /** What is known of readings whether they form a series or not. */
+  private record Origin(
+      String batch, String role, String unit, String design, List<Recorded> readings) {
+
+    static Origin of(Gathered gathered) {
+      if (gathered instanceof AdditionSeries series) {
+        return new Origin(
+            series.batchName(),
+            series.role().word(),
+            series.toResult().unit().symbol(),
+            series.design().word(),
+            series.flasks().stream().flatMap(flask -> flask.readings().stream()).toList());
+      }
+      Ungrouped ungrouped = (Ungrouped) gathered;
+      Optional<FlaskFacts> facts =
+          ungrouped.readings().stream().map(recorded -> recorded.reading().facts()).findFirst();
+      return new Origin(
+          ungrouped.batchName(),
+          facts.map(known -> known.role().word()).orElse(""),
+          "",
+          facts.map(known -> known.design().word()).orElse(""),
+          ungrouped.readings());
+    }
+
+    List<String> files() {
+      return readings.stream()
+          .map(recorded -> recorded.reading().position().source().file())
+          .distinct()
+          .sorted()
+          .toList();
+    }
+  }
+
+  /** A number of something that may be missing; never one that is not finite, never −0. */
+  private static <T> OptionalDouble number(Optional<T> source, Function<T, OptionalDouble> part) {
+    OptionalDouble value = source.map(part).orElse(OptionalDouble.empty());
+    return value.isPresent() ? FlaskLine.finite(value.getAsDouble() + 0.0) : value;
+  }
+}

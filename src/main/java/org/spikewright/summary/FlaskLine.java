@@ -1,0 +1,147 @@
+package org.spikewright.summary;
+
+import java.util.ArrayDeque;
+import java.util.ArrayList;
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.Queue;
+import java.util.stream.Collectors;
+import org.spikewright.fit.DeletedResidual;
+import org.spikewright.judgement.Flag;
+import org.spikewright.judgement.FlagKind;
+import org.spikewright.judgement.Outcome;
+import org.spikewright.judgement.SeriesResult;
+import org.spikewright.reading.Signal;
+import org.spikewright.series.AdditionSeries;
+import org.spikewright.series.Flask;
+
+/**
+ * One flask beside the line of its series.
+ *
+ * @param flask the flask
+ * @param used whether the line was fitted to it
+ * @param x on the axis, as fitted; empty when not used
+ * @param signal as fitted, after the volume factor; empty when not used
+ * @param fitted the line's signal there; empty when not used
+ * @param residual signal minus fitted; empty when not used
+ * @param deletedT its deleted residual t; empty where that does not exist
+ * @param remark why it was not used, or that it is the odd one; may be empty
+ */
+record FlaskLine(
+    Flask flask,
+    boolean used,
+    OptionalDouble x,
+    OptionalDouble signal,
+    OptionalDouble fitted,
+    OptionalDouble residual,
+    OptionalDouble deletedT,
+    String remark) {
+
+  /** The remark at the flask that an odd-flask flag is about. */
+  static final String ODD = "odd flask";
+
+  /** Every flask of a series, in the order of the series, whether used or not. */
+  static List<FlaskLine> of(Outcome outcome) {
+    if (!(outcome.gathered() instanceof AdditionSeries series)) {
+      return List.of();
+    }
+    Map<String, Queue<Integer>> points = new HashMap<>();
+    outcome.result().ifPresent(result -> index(result, points));
+    int odd = oddPoint(outcome);
+    List<FlaskLine> lines = new ArrayList<>();
+    for (Flask flask : series.flasks()) {
+      Queue<Integer> own = points.getOrDefault(flask.label(), new ArrayDeque<>());
+      if (own.isEmpty()) {
+        lines.add(unused(flask, outcome));
+      }
+      // Where the laboratory counts readings as flasks, one flask has several points.
+      while (!own.isEmpty()) {
+        int point = own.remove();
+        lines.add(used(outcome.result().orElseThrow(), point, point == odd));
+      }
+    }
+    return lines;
+  }
+
+  private static void index(SeriesResult result, Map<String, Queue<Integer>> points) {
+    for (int i = 0; i < result.flasks().size(); i++) {
+      points.computeIfAbsent(result.flasks().get(i).label(), label -> new ArrayDeque<>()).add(i);
+    }
+  }
+
+  private static FlaskLine used(SeriesResult result, int i, boolean odd) {
+    Optional<DeletedResidual> deleted =
+        i < result.residuals().size() ? result.residuals().get(i) : Optional.empty();
+    double x = result.line().x()[i];
+    return new FlaskLine(
+        result.flasks().get(i),
+        true,
+        OptionalDouble.of(x),
+        OptionalDouble.of(result.line().y()[i]),
+        OptionalDouble.of(result.line().at(x)),
+        OptionalDouble.of(result.line().residual(i)),
+        deleted.isPresent() ? finite(deleted.get().t()) : OptionalDouble.empty(),
+        odd ? ODD : "");
+  }
+
+  private static FlaskLine unused(Flask flask, Outcome outcome) {
+    OptionalDouble none = OptionalDouble.empty();
+    return new FlaskLine(flask, false, none, none, none, none, none, why(flask, outcome));
+  }
+
+  private static String why(Flask flask, Outcome outcome) {
+    if (flask.isUsable()) {
+      return outcome.result().isPresent() ? "left out of the line" : "no line could be fitted";
+    }
+    String states =
+        flask.readings().stream()
+            .map(recorded -> recorded.reading().signal())
+            .filter(Signal.NoNumber.class::isInstance)
+            .map(signal -> ((Signal.NoNumber) signal).state().word())
+            .distinct()
+            .collect(Collectors.joining(", "));
+    return states.isEmpty() ? "no reading" : "no reading is a number: " + states;
+  }
+
+  /** The point with the least probable deleted residual, where the series has an odd flask. */
+  private static int oddPoint(Outcome outcome) {
+    boolean flagged = outcome.flags().stream().map(Flag::kind).anyMatch(FlagKind.ODD_FLASK::equals);
+    if (!flagged || outcome.result().isEmpty()) {
+      return -1;
+    }
+    List<Optional<DeletedResidual>> residuals = outcome.result().get().residuals();
+    int odd = -1;
+    double least = Double.POSITIVE_INFINITY;
+    for (int i = 0; i < residuals.size(); i++) {
+      if (residuals.get(i).isPresent() && residuals.get(i).get().p() < least) {
+        least = residuals.get(i).get().p();
+        odd = i;
+      }
+    }
+    return odd;
+  }
+
+  static OptionalDouble finite(double value) {
+    return Double.isFinite(value) ? OptionalDouble.of(value) : OptionalDouble.empty();
+  }
+
+  /** The files the flask's readings came from, sorted. */
+  List<String> files() {
+    return flask.readings().stream()
+        .map(recorded -> recorded.reading().position().source().file())
+        .distinct()
+        .sorted()
+        .toList();
+  }
+
+  /** The cells the flask's readings came from, in the order of the readings. */
+  List<String> cells() {
+    return flask.readings().stream()
+        .map(recorded -> recorded.reading().position().within())
+        .distinct()
+        .toList();
+  }
+}

@@ -1,0 +1,68 @@
+package org.spikewright.summary;
+
+import org.spikewright.judgement.FlagKind;
+import org.spikewright.judgement.Verdict;
+
+/** What verdicts and flags mean, in words for the bench. */
+final class Words {
+  private Words() {}
+
+  /** What is to happen. */
+  static String meaning(Verdict verdict) {
+    return switch (verdict) {
+      case REPORT -> "can be reported";
+      case REVIEW -> "a person decides";
+      case REPEAT -> "not reportable; see To repeat";
+      case WAITING -> "flasks still due; not judged yet";
+    };
+  }
+
+  /** The look that repeats what the word says. */
+  static Look look(Verdict verdict) {
+    return switch (verdict) {
+      case REPORT -> Look.REPORT;
+      case REVIEW -> Look.REVIEW;
+      case REPEAT -> Look.REPEAT;
+      case WAITING -> Look.WAITING;
+    };
+  }
+
+  /** What a flag says about a series. */
+  static String meaning(FlagKind kind) {
+    return switch (kind) {
+      case NO_SERIES -> "the readings form no series";
+      case NO_ADDITIONS -> "nothing was added to any flask";
+      case SLOPE_NOT_ESTABLISHED -> "the signal does not clearly rise with the addition";
+      case BENT -> "the line bends, and the bend moves the result";
+      case ODD_FLASK -> "one flask lies off the line through the others";
+      case ODD_LEVEL -> "one addition level lies off the line through the others";
+      case UNCERTAIN -> "the uncertainty misses its target";
+      case LOW_CORRELATION -> "the correlation is low (it does not see bending)";
+      case NO_UNSPIKED_FLASK -> "no flask without addition";
+      case FEW_FLASKS -> "fewer flasks than the method expects";
+      case ADDITIONS_TOO_SMALL -> "the additions are small beside what is there";
+      case ADDITIONS_TOO_LARGE -> "the additions are large beside what is there";
+      case UNEVEN_ADDITIONS -> "uneven or repeated additions";
+      case OVER_RANGE -> "a reading above the instrument's range";
+      case LEFT_OUT -> "a reading below range, or missing, was left out";
+      case OUTSIDE_RANGE -> "the result lies outside the method's working range";
+      case SCATTERED_READINGS -> "the readings of a flask scatter widely";
+      case BELOW_DETECTION -> "not detected";
+      case NEAR_DETECTION -> "detected, but too little to be measured well";
+      case NEGATIVE_RESULT -> "the line meets zero signal on the wrong side";
+      case UNEQUAL_ALIQUOTS -> "the aliquots differ from flask to flask";
+      case READINGS_AS_FLASKS -> "readings were counted as flasks, as the laboratory has set";
+      case NO_FIT_UNCERTAINTY -> "too few flasks for an uncertainty of the fit";
+      case SUPERSEDED_READING -> "a later delivery replaced a reading";
+      case SECOND_RUN -> "a flask was measured a second time";
+      case EXPORTED_AGAIN -> "the same series came under another batch name";
+      case SIMILAR_IDS -> "sample names differ only in case or blanks";
+      case WAITING -> "flasks are still due";
+    };
+  }
+
+  /** Whether a flag is one of the statistical tests that share the false-alarm rate. */
+  static boolean isTested(FlagKind kind) {
+    return kind == FlagKind.BENT || kind == FlagKind.ODD_FLASK;
+  }
+}

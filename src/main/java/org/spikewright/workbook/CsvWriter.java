@@ -1,0 +1,65 @@
+package org.spikewright.workbook;
+
+import java.io.IOException;
+import java.io.OutputStream;
+import java.io.OutputStreamWriter;
+import java.io.Writer;
+import java.nio.charset.StandardCharsets;
+import java.nio.file.Path;
+import java.util.List;
+import java.util.function.LongConsumer;
+import org.apache.commons.csv.CSVFormat;
+import org.apache.commons.csv.CSVPrinter;
+import org.spikewright.summary.CsvPlan;
+
+/**
+ * Writes files for machines: UTF-8 without a mark, comma, line feed, decimal point, fields quoted
+ * where they need it (RFC 4180).
+ */
+public final class CsvWriter {
+  private static final CSVFormat FORMAT =
+      CSVFormat.RFC4180.builder().setRecordSeparator('\n').get();
+
+  private static final int PROGRESS_STEP = 512;
+
+  private CsvWriter() {}
+
+  /**
+   * Writes a file, whole or not at all.
+   *
+   * @return the SHA-256 of its bytes, in hexadecimal
+   */
+  public static String write(CsvPlan plan, Path target) throws WriteFault {
+    return write(plan, target, lines -> {});
+  }
+
+  /**
+   * The same, telling how many lines are written.
+   *
+   * @param progress called now and then with the lines written so far
+   */
+  public static String write(CsvPlan plan, Path target, LongConsumer progress) throws WriteFault {
+    return Aside.write(target, out -> print(plan, out, progress));
+  }
+
+  /** Prints to a stream, which is flushed and left open. */
+  public static void print(CsvPlan plan, OutputStream out) throws IOException {
+    print(plan, out, lines -> {});
+  }
+
+  private static void print(CsvPlan plan, OutputStream out, LongConsumer progress)
+      throws IOException {
+    Writer writer = new OutputStreamWriter(out, StandardCharsets.UTF_8);
+    CSVPrinter printer = new CSVPrinter(writer, FORMAT);
+    printer.printRecord(plan.header());
+    long lines = 0;
+    for (List<String> line : plan.lines()) {
+      printer.printRecord(line);
+      if (++lines % PROGRESS_STEP == 0) {
+        progress.accept(lines);
+      }
+    }
+    progress.accept(lines);
+    printer.flush();
+  }
+}
