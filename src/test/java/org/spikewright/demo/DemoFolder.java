@@ -12,7 +12,7 @@ import java.util.Map;
  * Writes the demo's exports and its truth, bit for bit the same every time.
  *
  * <p>From the project's top folder: {@code mvn -q test-compile exec:java -Dexec.classpathScope=test
- * -Dexec.mainClass=org.spikewright.demo.DemoFolder}.
+ * -DmainClass=org.spikewright.demo.DemoFolder}.
  */
 public final class DemoFolder {
   /** Where the exports are written by default. */
