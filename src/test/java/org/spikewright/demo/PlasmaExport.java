@@ -65,7 +65,7 @@ final class PlasmaExport {
       report(book.createSheet("Run report"), export);
       XSSFSheet sheet = book.createSheet(name);
       if (headerRow > 0) {
-        sheet.createRow(0).createCell(0).setCellValue("Aqua digests, " + export.name());
+        sheet.createRow(0).createCell(0).setCellValue("Acid digests, " + export.name());
       }
       readings(sheet, export, headerRow);
       ByteArrayOutputStream out = new ByteArrayOutputStream();
