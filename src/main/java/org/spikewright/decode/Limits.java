@@ -46,6 +46,9 @@ final class Limits {
   /** Elements within elements; workbooks use about 10. */
   static final int XML_DEPTH = 100;
 
+  /** Different names of elements, attributes and prefixes; workbooks use some dozens. */
+  static final int XML_NAMES = 10_000;
+
   /** Bytes of a workbook of the older kind, whose strings are held in memory; 65 536 x 9: 10^7. */
   static final long XLS_BYTES = 100L << 20;
 

@@ -3,6 +3,8 @@ package org.spikewright.decode;
 import java.io.ByteArrayInputStream;
 import java.io.IOException;
 import java.io.InputStream;
+import java.util.HashSet;
+import java.util.Set;
 import javax.xml.stream.XMLInputFactory;
 import javax.xml.stream.XMLStreamConstants;
 import javax.xml.stream.XMLStreamException;
@@ -15,6 +17,10 @@ import javax.xml.stream.XMLStreamReader;
 final class PullXml implements AutoCloseable {
   private final Metered bytes;
   private final XMLStreamReader xml;
+
+  /** Every name met: the parser keeps all of them, so that their number is bounded. */
+  private final Set<String> names = new HashSet<>();
+
   private int depth;
 
   PullXml(InputStream in) throws XMLStreamException {
@@ -40,12 +46,31 @@ final class PullXml implements AutoCloseable {
       if (depth > Limits.XML_DEPTH) {
         throw hostile("elements nested more than " + Limits.XML_DEPTH + " deep");
       }
+      noteNames();
     } else if (event == XMLStreamConstants.END_ELEMENT) {
       depth--;
+    } else if (event == XMLStreamConstants.PROCESSING_INSTRUCTION) {
+      note("?" + xml.getPITarget());
     } else if (event == XMLStreamConstants.DTD || event == XMLStreamConstants.ENTITY_REFERENCE) {
       throw hostile("a document type or an entity");
     }
     return event;
+  }
+
+  private void noteNames() {
+    note(xml.getLocalName());
+    for (int i = xml.getAttributeCount() - 1; i >= 0; i--) {
+      note(xml.getAttributeLocalName(i));
+    }
+    for (int i = xml.getNamespaceCount() - 1; i >= 0; i--) {
+      note("xmlns:" + xml.getNamespacePrefix(i));
+    }
+  }
+
+  private void note(String name) {
+    if (names.add(name) && names.size() > Limits.XML_NAMES) {
+      throw hostile("more than " + Limits.XML_NAMES + " different names of elements");
+    }
   }
 
   /** Moves on to the start of the next element; false at the end. */
