@@ -41,6 +41,9 @@ public final class Waker implements AutoCloseable {
 
   private volatile boolean closed;
 
+  /** The thread a task runs on now. */
+  private volatile Thread running;
+
   /**
    * Starts with nothing to do.
    *
@@ -79,16 +82,16 @@ public final class Waker implements AutoCloseable {
    * @param task what to do; may take longer than the interval
    */
   public void every(Duration interval, String what, Runnable task) {
-    Turn mine = new Turn(what, interval, task);
+    Task named = new Task(what, interval, task);
     JobDataMap data = new JobDataMap();
-    data.put(TurnJob.DATA, mine);
-    JobDetail job = JobBuilder.newJob(TurnJob.class).withIdentity(what).setJobData(data).build();
+    data.put(WakeUp.TURN, (Runnable) () -> turn(named));
+    JobDetail job = JobBuilder.newJob(WakeUp.class).withIdentity(what).setJobData(data).build();
     try {
       scheduler.scheduleJob(job, trigger(what, interval));
     } catch (SchedulerException fault) {
       throw new IllegalStateException("cannot schedule '" + what + "'", fault);
     }
-    watch(mine);
+    watch(named);
   }
 
   private static SimpleTrigger trigger(String what, Duration interval) {
@@ -107,29 +110,39 @@ public final class Waker implements AutoCloseable {
    * Starts the thread that notices a clock set back. The scheduler would sleep until the clock has
    * caught up, which may be years; sleeping is not affected by the clock.
    */
-  private void watch(Turn mine) {
-    Thread watch = new Thread(() -> keepWatch(mine), "watch over " + mine.what());
+  private void watch(Task task) {
+    Thread watch = new Thread(() -> keepWatch(task), "watch over " + task.what());
     watch.setDaemon(true);
     watch.start();
   }
 
-  private void keepWatch(Turn mine) {
+  private void keepWatch(Task task) {
     try {
       while (!closed) {
-        long seen = mine.count();
+        long seen = task.turns();
         // Twice the interval, and a second for a busy machine.
-        Thread.sleep(mine.interval().toMillis() * 2 + 1000);
-        if (!closed && mine.count() == seen && turn.availablePermits() > 0) {
-          LOG.warn("'{}' was not woken in time; was the clock set back? Waking it now.", mine.what());
-          scheduler.rescheduleJob(
-              TriggerKey.triggerKey(mine.what()), trigger(mine.what(), mine.interval()));
+        Thread.sleep(task.interval().toMillis() * 2 + 1000);
+        if (!closed && task.turns() == seen && turn.availablePermits() > 0) {
+          LOG.warn(
+              "'{}' was not woken in time; was the clock set back? Waking it now.", task.what());
+          wakeNow(task);
         }
       }
     } catch (InterruptedException | SchedulerException ended) {
       if (!closed) {
-        LOG.warn("nobody watches over '{}' any more", mine.what(), ended);
+        LOG.warn("nobody watches over '{}' any more", task.what(), ended);
       }
     }
+  }
+
+  private void wakeNow(Task task) throws SchedulerException {
+    scheduler.rescheduleJob(
+        TriggerKey.triggerKey(task.what()), trigger(task.what(), task.interval()));
+  }
+
+  /** The scheduler itself, for tests that put its clock wrong. */
+  Scheduler scheduler() {
+    return scheduler;
   }
 
   /**
@@ -143,6 +156,9 @@ public final class Waker implements AutoCloseable {
     try {
       if (first) {
         scheduler.shutdown(false);
+      }
+      if (Thread.currentThread() == running) {
+        return false;
       }
       if (turn.tryAcquire(atMost.toMillis(), TimeUnit.MILLISECONDS)) {
         turn.release();
@@ -164,39 +180,19 @@ public final class Waker implements AutoCloseable {
     }
   }
 
-  /** One task's turns. */
-  final class Turn {
-    private final Task task;
-    private final AtomicLong count = new AtomicLong();
-
-    Turn(String what, Duration interval, Runnable body) {
-      this.task = new Task(what, interval, body);
+  /** Gives a task its turn; called on the scheduler's one thread. */
+  void turn(Task task) {
+    if (!turn.tryAcquire()) {
+      return;
     }
-
-    String what() {
-      return task.what();
-    }
-
-    Duration interval() {
-      return task.interval();
-    }
-
-    long count() {
-      return count.get();
-    }
-
-    void take() {
-      count.incrementAndGet();
-      if (!turn.tryAcquire()) {
-        return;
+    running = Thread.currentThread();
+    try {
+      if (!closed) {
+        task.run();
       }
-      try {
-        if (!closed) {
-          task.run();
-        }
-      } finally {
-        turn.release();
-      }
+    } finally {
+      running = null;
+      turn.release();
     }
   }
 }
