@@ -44,8 +44,7 @@ final class ConfOption {
   int withStation(Settings settings, Clock clock, ToIntFunction<Station> body) {
     Station.Attempt attempt = Station.open(settings, clock);
     if (attempt instanceof Station.Attempt.Refused refused) {
-      return Faults.report(
-          refused.exitCode(), refused.problems(), command.commandLine().getErr());
+      return Faults.report(refused.exitCode(), refused.problems(), command.commandLine().getErr());
     }
     try (Station station = ((Station.Attempt.Opened) attempt).station()) {
       station
@@ -55,9 +54,7 @@ final class ConfOption {
                   command
                       .commandLine()
                       .getErr()
-                      .println(
-                          "mapping not used until it is corrected: "
-                              + fault));
+                      .println("mapping not used until it is corrected: " + fault));
       command.commandLine().getErr().flush();
       return body.applyAsInt(station);
     }

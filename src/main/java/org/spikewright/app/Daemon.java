@@ -39,10 +39,7 @@ final class Daemon {
     Inbox inbox = new Inbox(settings.watch(), new SettleRule(settings.settle()));
     this.round =
         new Round(
-            inbox,
-            new Reception(station, stop, Progress.none()),
-            new Filing(station, inbox),
-            stop);
+            inbox, new Reception(station, stop, Progress.none()), new Filing(station, inbox), stop);
     this.summary = new NightlySummary(station, Progress.none(), stop);
     this.steady = new Steady(station.clock());
   }
@@ -51,8 +48,7 @@ final class Daemon {
   void run() throws InterruptedException {
     Runtime.getRuntime().addShutdownHook(new Thread(this::end, "stop"));
     Waker waker = new Waker(PATIENCE);
-    LOG.info(
-        "watching folder={} every={} s", station.settings().watch(), seconds());
+    LOG.info("watching folder={} every={} s", station.settings().watch(), seconds());
     waker.every(station.settings().lookEvery(), "look into the watched folder", this::look);
     waker.every(SUMMARY_CHECK, "make summaries that are due", this::summarise);
     while (!stop.isRequested()) {
@@ -74,8 +70,7 @@ final class Daemon {
 
   private void summarise() {
     Settings settings = station.settings();
-    Instant due =
-        latest(station.clock().instant(), settings.nightly(), settings.calendar().zone());
+    Instant due = latest(station.clock().instant(), settings.nightly(), settings.calendar().zone());
     try {
       summary.makeOwed(due, false);
       standing.over("summary");

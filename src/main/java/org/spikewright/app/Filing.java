@@ -88,8 +88,7 @@ final class Filing {
   private String anotherName(Arrived arrived) throws IOException {
     return arrived.outcome() == Arrived.Result.REFUSED
         ? archive.rejectedName(arrived.name(), station.ledger()::archiveNameTaken)
-        : archive.doneName(
-            arrived.labDay(), arrived.name(), station.ledger()::archiveNameTaken);
+        : archive.doneName(arrived.labDay(), arrived.name(), station.ledger()::archiveNameTaken);
   }
 
   private void finish(Arrived arrived, Filed filed, String target) throws IOException {
@@ -124,16 +123,16 @@ final class Filing {
     }
     if (arrived.outcome() == Arrived.Result.KNOWN) {
       archive.note(
-              target,
-              Beside.NOTE,
-              arrived.name() + " holds " + arrived.reason() + ". Nothing was counted again.\n");
+          target,
+          Beside.NOTE,
+          arrived.name() + " holds " + arrived.reason() + ". Nothing was counted again.\n");
     } else if (RowsText.isDue(arrived)) {
       archive.note(target, Beside.ROWS, RowsText.lines(arrived, station.ledger()));
     }
     archive.journal(
-            arrived.labDay(),
-            new Journalled(
-                arrived.number(), arrived.sha256(), arrived.name(), arrived.mappingSha256()));
+        arrived.labDay(),
+        new Journalled(
+            arrived.number(), arrived.sha256(), arrived.name(), arrived.mappingSha256()));
   }
 
   private String reasonText(Arrived arrived) {

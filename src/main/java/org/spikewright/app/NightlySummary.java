@@ -101,12 +101,10 @@ final class NightlySummary {
             settings.text(),
             Version.NUMBER);
     try (RevisionWriter writer = ledger.startRevision(start)) {
-      Analysis analysis =
-          analysis(settings, day, start.arrivalLimit(), writer.moment());
+      Analysis analysis = analysis(settings, day, start.arrivalLimit(), writer.moment());
       long count = 0;
       for (Outcome outcome : analysis) {
-        writer.result(
-            ResultRow.of(outcome), InputsHash.of(outcome.gathered(), settings.sha256()));
+        writer.result(ResultRow.of(outcome), InputsHash.of(outcome.gathered(), settings.sha256()));
         progress.at("judging series", ++count);
       }
       return writer.commit(analysis.waitingUntil());

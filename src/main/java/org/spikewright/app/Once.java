@@ -21,8 +21,7 @@ final class Once {
    * @param summaries issued
    * @param unsettled whether a file kept growing and was left
    */
-  record Report(
-      List<Arrived> received, List<NightlySummary.Issued> summaries, boolean unsettled) {}
+  record Report(List<Arrived> received, List<NightlySummary.Issued> summaries, boolean unsettled) {}
 
   private final Station station;
   private final Duration settle;
@@ -38,11 +37,7 @@ final class Once {
     Progress progress = Progress.onTerminal();
     Inbox inbox = new Inbox(station.settings().watch(), new SettleRule(settle));
     Round round =
-        new Round(
-            inbox,
-            new Reception(station, stop, progress),
-            new Filing(station, inbox),
-            stop);
+        new Round(inbox, new Reception(station, stop, progress), new Filing(station, inbox), stop);
     Steady steady = new Steady(station.clock());
     Instant patience = steady.now().plus(settle).plus(PATIENCE);
     List<Arrived> received = new ArrayList<>();

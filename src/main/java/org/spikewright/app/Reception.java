@@ -120,9 +120,7 @@ final class Reception {
         return recorded(record(delivery, done.tally(), sink, file, arriving));
       }
       refusal =
-          fault
-              .map(Refusal::of)
-              .or(() -> Optional.of(Refusal.of((MappedFile.Unmappable) mapped)));
+          fault.map(Refusal::of).or(() -> Optional.of(Refusal.of((MappedFile.Unmappable) mapped)));
     }
     return refuse(file, arriving, refusal.orElseThrow());
   }
@@ -183,8 +181,7 @@ final class Reception {
         || !FileDigest.of(file.path()).equals(sha256);
   }
 
-  private Arriving arriving(
-      Sighting file, String sha256, Instant now, Optional<Mapping> mapping) {
+  private Arriving arriving(Sighting file, String sha256, Instant now, Optional<Mapping> mapping) {
     return new Arriving(
         file.name(),
         file.size(),

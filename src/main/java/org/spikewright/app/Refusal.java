@@ -2,8 +2,8 @@ package org.spikewright.app;
 
 import java.util.List;
 import java.util.stream.Collectors;
-import org.spikewright.mapping.Mapping;
 import org.spikewright.mapping.MappedFile.Unmappable;
+import org.spikewright.mapping.Mapping;
 import org.spikewright.mapping.Rejection;
 import org.spikewright.mapping.Tally;
 import org.spikewright.table.DecodeFault;

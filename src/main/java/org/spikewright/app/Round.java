@@ -75,7 +75,9 @@ final class Round {
     } catch (LedgerFault | IOException | UncheckedIOException trouble) {
       standing.trouble(
           key,
-          "file=" + file.name() + " could not be taken in and will be tried again: "
+          "file="
+              + file.name()
+              + " could not be taken in and will be tried again: "
               + trouble.getMessage());
     }
   }

@@ -17,16 +17,13 @@ final class SettingsLines {
   static List<Setting> of(Settings settings, List<Mapping> mappings, RevisionRecord revision) {
     List<Setting> lines = new ArrayList<>();
     lines.add(new Setting("Program", "Spikewright", revision.programVersion(), "this program"));
-    lines.add(
-        new Setting("Configuration", "Content hash", revision.settingsSha256(), "SHA-256"));
+    lines.add(new Setting("Configuration", "Content hash", revision.settingsSha256(), "SHA-256"));
     lines.add(new Setting("Configuration", "Laboratory", settings.laboratory(), FILE));
-    lines.add(
-        new Setting("Configuration", "Zone", settings.calendar().zone().getId(), FILE));
+    lines.add(new Setting("Configuration", "Zone", settings.calendar().zone().getId(), FILE));
     lines.add(
         new Setting(
             "Configuration", "Lab day begins", settings.calendar().cutOff().toString(), FILE));
-    lines.add(
-        new Setting("Configuration", "Nightly summary", settings.nightly().toString(), FILE));
+    lines.add(new Setting("Configuration", "Nightly summary", settings.nightly().toString(), FILE));
     lines.add(
         new Setting(
             "Configuration", "Longest pause in a series", words(settings.longestPause()), FILE));

@@ -7,7 +7,6 @@ import java.time.Clock;
 import java.util.ArrayList;
 import java.util.List;
 import org.spikewright.config.ConfigFault;
-import org.spikewright.config.Loaded;
 import org.spikewright.config.MappingFolder;
 import org.spikewright.config.Settings;
 import org.spikewright.intake.Archive;
@@ -69,8 +68,7 @@ record Station(
               settings.ledger(), settings.calendar(), settings.longestPause(), archive.hasFiles());
       if (opening instanceof Opening.Opened opened) {
         XlsxWriter.sweep(temporaryFolder(settings));
-        return new Attempt.Opened(
-            new Station(settings, mappings, archive, opened.ledger(), clock));
+        return new Attempt.Opened(new Station(settings, mappings, archive, opened.ledger(), clock));
       }
       return opening instanceof Opening.OwnedByAnother other
           ? new Attempt.Refused(
@@ -88,8 +86,7 @@ record Station(
   }
 
   private static Attempt refused(Opening.Refused refused) {
-    return new Attempt.Refused(
-        ExitCode.FAULT, List.of(refused.found() + "; " + refused.advice()));
+    return new Attempt.Refused(ExitCode.FAULT, List.of(refused.found() + "; " + refused.advice()));
   }
 
   private static void makeFolder(Path folder, List<String> problems) {

@@ -15,7 +15,8 @@ import org.spikewright.mapping.Tally;
 final class Arrivals {
   private static final String COLUMNS =
       "SELECT number, name, sha256, arrived_at, lab_day, outcome, row_count, readings, rejections,"
-          + " skipped, repeated, reason, archive_name, filed_as FROM arrival ";
+          + " skipped, repeated, reason, archive_name, filed_as,"
+          + " (SELECT t.sha256 FROM text_version t WHERE t.id = mapping) FROM arrival ";
 
   private final Sql sql;
 
@@ -116,6 +117,7 @@ final class Arrivals {
         row.getLong(1),
         Sql.text(row, 2),
         row.getString(3),
+        Optional.ofNullable(row.getString(15)).orElse(""),
         Instant.ofEpochMilli(row.getLong(4)),
         LocalDate.ofEpochDay(row.getLong(5)),
         Arrived.Result.of(row.getString(6)),

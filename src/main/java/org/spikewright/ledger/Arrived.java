@@ -11,6 +11,7 @@ import org.spikewright.mapping.Tally;
  * @param number deliveries are numbered in the order in which they were recorded
  * @param name relative to the watched folder
  * @param sha256 of its bytes, in hexadecimal
+ * @param mappingSha256 of the text of the mapping that read it; empty when none applied
  * @param arrivedAt when it was read
  * @param labDay the lab day of its arrival
  * @param outcome what became of it
@@ -24,6 +25,7 @@ public record Arrived(
     long number,
     String name,
     String sha256,
+    String mappingSha256,
     Instant arrivedAt,
     LocalDate labDay,
     Result outcome,

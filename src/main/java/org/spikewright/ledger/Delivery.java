@@ -91,10 +91,11 @@ public final class Delivery implements MappedSink, AutoCloseable {
    * Records the delivery as read.
    *
    * @param tally what became of its rows
+   * @param note what is to be noted about it; empty when nothing is
    * @param archiveName where the file is to lie
    */
-  public Arrived commit(Tally tally, String archiveName) {
-    return end(Arrived.Result.READ, tally, "", archiveName);
+  public Arrived commit(Tally tally, String note, String archiveName) {
+    return end(Arrived.Result.READ, tally, note, archiveName);
   }
 
   /**

@@ -77,6 +77,7 @@ public sealed class LedgerView implements AutoCloseable permits Ledger {
    * Lab days that are to be looked at, in order: never looked at, or something came since, or they
    * closed since, or a series has waited long enough.
    *
+   * @param now what came, closed or had waited long enough by then counts
    * @param includeInProgress whether days count that have not closed at {@code now}
    */
   public final List<LocalDate> owed(Instant now, boolean includeInProgress) {

@@ -38,8 +38,10 @@ final class RevisionQueries {
     Map<Long, Look> looks = looks();
     Map<Long, Long> touched = new HashMap<>();
     sql.list(
-            "SELECT day, MAX(arrival) FROM touched GROUP BY day",
-            row -> new long[] {row.getLong(1), row.getLong(2)})
+            "SELECT t.day, MAX(t.arrival) FROM touched t JOIN arrival a ON a.number = t.arrival"
+                + " WHERE a.arrived_at <= ? GROUP BY t.day",
+            row -> new long[] {row.getLong(1), row.getLong(2)},
+            now.toEpochMilli())
         .forEach(row -> touched.put(row[0], row[1]));
     List<LocalDate> owed = new ArrayList<>();
     touched.keySet().stream()
