@@ -1,6 +1,7 @@
 package org.spikewright.summary;
 
 import java.util.List;
+import java.util.Optional;
 
 /** Each delivery of the lab day. */
 final class FilesSheet {
@@ -8,28 +9,28 @@ final class FilesSheet {
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          new ColumnPlan("No.", 6),
-          new ColumnPlan("File", 34),
-          new ColumnPlan("Arrived", 19),
-          new ColumnPlan("Outcome", 10),
-          new ColumnPlan("Rows", 8),
-          new ColumnPlan("Readings", 9),
-          new ColumnPlan("Rows not used", 9),
-          new ColumnPlan("Rows skipped", 9),
-          new ColumnPlan("Known already", 9),
-          new ColumnPlan("Mapping", 16),
-          new ColumnPlan("Reason or remark", 60),
-          new ColumnPlan("Lies now in", 36),
-          new ColumnPlan("Bytes", 11),
-          new ColumnPlan("SHA-256 of the file", 66),
-          new ColumnPlan("SHA-256 of the mapping", 66));
+          ColumnPlan.number("No.", 6),
+          ColumnPlan.text("File", 34),
+          ColumnPlan.text("Arrived", 19),
+          ColumnPlan.text("Outcome", 10),
+          ColumnPlan.number("Rows", 8),
+          ColumnPlan.number("Readings", 9),
+          ColumnPlan.number("Rows not used", 9),
+          ColumnPlan.number("Rows skipped", 9),
+          ColumnPlan.number("Known already", 9),
+          ColumnPlan.text("Mapping", 16),
+          ColumnPlan.text("Reason or remark", 60),
+          ColumnPlan.text("Lies now in", 36),
+          ColumnPlan.number("Bytes", 11),
+          ColumnPlan.text("SHA-256 of the file", 66),
+          ColumnPlan.text("SHA-256 of the mapping", 66));
 
   private FilesSheet() {}
 
   static SheetPlan of(Night night) {
     // The hashes are for a search on screen; on paper they would make everything else small.
     SheetPlan.Layout layout =
-        new SheetPlan.Layout(true, java.util.Optional.of("FilesTable"), true, 13, false, false);
+        new SheetPlan.Layout(SheetPlan.Kind.ROWS, Optional.of("FilesTable"), 13);
     return SheetPlan.table(
         NAME, COLUMNS, Lazily.map(night.files(), file -> cells(file, night)), layout);
   }

@@ -144,7 +144,7 @@ record LiveCells(List<Quantity> quantities, ToResult scale, LiveFormulas formula
     check.add(CellPlan.text("check", Look.FAINT));
     char column = 'B';
     for (Quantity quantity : quantities) {
-      header.add(CellPlan.text(quantity.title(), Look.FAINT));
+      header.add(CellPlan.text(quantity.title(), Look.FAINT_RIGHT));
       stored.add(CellPlan.number(quantity.stored(), quantity.format()));
       live.add(quantity.isChecked() ? liveCell(quantity) : CellPlan.EMPTY);
       check.add(quantity.isChecked() ? checkCell(quantity, column) : CellPlan.EMPTY);
@@ -162,7 +162,7 @@ record LiveCells(List<Quantity> quantities, ToResult scale, LiveFormulas formula
   private CellPlan checkCell(Quantity quantity, char column) {
     return new CellPlan.Formula(
         formulas.check(column, quantity.size().formula()),
-        CellPlan.text(quantity.agrees() ? AGREES : DIFFERS, Look.FAINT));
+        CellPlan.text(quantity.agrees() ? AGREES : DIFFERS, Look.FAINT_RIGHT));
   }
 
   private void factors(List<CellPlan> header, List<CellPlan> stored) {
@@ -171,7 +171,7 @@ record LiveCells(List<Quantity> quantities, ToResult scale, LiveFormulas formula
       scale.dilution(), scale.methodBlank(), scale.perSample(), scale.unitFactor()
     };
     for (int i = 0; i < titles.length; i++) {
-      header.add(CellPlan.text(titles[i], Look.FAINT));
+      header.add(CellPlan.text(titles[i], Look.FAINT_RIGHT));
       stored.add(CellPlan.number(values[i], Formats.GENERAL));
     }
   }

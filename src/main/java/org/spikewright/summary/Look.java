@@ -9,9 +9,13 @@ public enum Look {
   HEADING,
   /** A column's header. */
   HEADER,
+  /** The header of a column of numbers. */
+  HEADER_RIGHT,
   STRONG,
   /** An explanation that may be skipped. */
   FAINT,
+  /** The same over or under numbers. */
+  FAINT_RIGHT,
   /** Long text, broken within the column. */
   WRAPPED,
   /** A cell that the reader may change. */

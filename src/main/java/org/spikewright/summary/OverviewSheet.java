@@ -26,13 +26,13 @@ final class OverviewSheet {
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          new ColumnPlan("", 24),
-          new ColumnPlan("", 11),
-          new ColumnPlan("", 11),
-          new ColumnPlan("", 22),
-          new ColumnPlan("", 16),
-          new ColumnPlan("", 10),
-          new ColumnPlan("", 92));
+          ColumnPlan.text("", 24),
+          ColumnPlan.text("", 11),
+          ColumnPlan.text("", 11),
+          ColumnPlan.text("", 22),
+          ColumnPlan.text("", 16),
+          ColumnPlan.text("", 10),
+          ColumnPlan.text("", 92));
 
   private final Night night;
   private final Counts counts;
@@ -150,7 +150,7 @@ final class OverviewSheet {
     if (counts.flags().isEmpty()) {
       row(CellPlan.text("no flags"));
     } else {
-      header("Flag", "Series", "What it says");
+      counted("Flag", "Series");
     }
     counts
         .flags()
@@ -166,7 +166,7 @@ final class OverviewSheet {
   /** Counts by verdict under a heading; returns the row of the first line, from 1. */
   private int breakdown(String title, Map<String, Map<Verdict, Integer>> lines) {
     heading(title);
-    header("", "report", "review", "repeat", "waiting", "all");
+    counted("", "report", "review", "repeat", "waiting", "all");
     int firstRow = rows.size() + 1;
     lines.forEach(
         (name, verdicts) -> {
@@ -261,6 +261,16 @@ final class OverviewSheet {
     List<CellPlan> cells = new ArrayList<>();
     for (String title : titles) {
       cells.add(new CellPlan.Text(title, Look.HEADER));
+    }
+    rows.add(cells);
+  }
+
+  /** A header whose first column holds words and the others numbers. */
+  private void counted(String first, String... others) {
+    List<CellPlan> cells = new ArrayList<>();
+    cells.add(new CellPlan.Text(first, Look.HEADER));
+    for (String title : others) {
+      cells.add(new CellPlan.Text(title, Look.HEADER_RIGHT));
     }
     rows.add(cells);
   }

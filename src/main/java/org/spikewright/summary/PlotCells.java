@@ -33,7 +33,7 @@ final class PlotCells {
 
   List<List<CellPlan>> rows() {
     List<List<CellPlan>> rows = new ArrayList<>();
-    for (int row = 1; row <= Math.max(FIRST + flasks, 43); row++) {
+    for (int row = 1; row <= Math.max(FIRST + flasks, 47); row++) {
       List<CellPlan> cells = new ArrayList<>(left(row));
       pad(cells, 4);
       cells.addAll(numbers(row));
@@ -93,11 +93,19 @@ final class PlotCells {
       case 9 -> List.of(label("upper 95 %"), number('H', entry.upper95()));
       case 10 -> List.of(label("largest addition"), number('I', entry.topX()));
       case 12 -> List.of(label("line: x"), label("signal"));
-      case 13 -> List.of(formula("-F7", at(lineX(), 0)), formula("0*F7", at(lineY(), 0)));
+      case 13 ->
+          List.of(
+              formula("IF(ISNUMBER(F7),-F7,F10)", at(lineX(), 0)), formula("0*F7", at(lineY(), 0)));
       case 14 -> List.of(formula("F10", at(lineX(), 1)), formula("F6+F5*F10", at(lineY(), 1)));
       case 16 -> List.of(label("interval: x"), label("signal"));
-      case 17 -> List.of(formula("-F9", at(intervalX(), 0)), formula("0*F9", at(intervalY(), 0)));
-      case 18 -> List.of(formula("-F8", at(intervalX(), 1)), formula("0*F8", at(intervalY(), 1)));
+      case 17 ->
+          List.of(
+              formula("IF(ISNUMBER(F9),-F9,E13)", at(intervalX(), 0)),
+              formula("0*F9", at(intervalY(), 0)));
+      case 18 ->
+          List.of(
+              formula("IF(ISNUMBER(F8),-F8,E13)", at(intervalX(), 1)),
+              formula("0*F8", at(intervalY(), 1)));
       default -> List.of();
     };
   }
@@ -197,9 +205,16 @@ final class PlotCells {
     };
   }
 
+  /** Where there is no such number, x stays on the chart: programs put a missing x at 1, 2, … */
   ChartPlan.Cells lineX() {
-    OptionalDouble zero = PlotSheet.negative(chosen.entry().concentration());
-    return pair('E', 13, zero, chosen.entry().topX());
+    return pair('E', 13, FlaskLine.finite(zero()), chosen.entry().topX());
+  }
+
+  private double zero() {
+    SeriesIndex.Entry entry = chosen.entry();
+    return entry.concentration().isPresent()
+        ? -entry.concentration().getAsDouble()
+        : entry.topX().orElse(Double.NaN);
   }
 
   ChartPlan.Cells lineY() {
@@ -212,7 +227,9 @@ final class PlotCells {
 
   ChartPlan.Cells intervalX() {
     SeriesIndex.Entry entry = chosen.entry();
-    return pair('E', 17, PlotSheet.negative(entry.upper95()), PlotSheet.negative(entry.lower95()));
+    double first = entry.upper95().isPresent() ? -entry.upper95().getAsDouble() : zero();
+    double second = entry.lower95().isPresent() ? -entry.lower95().getAsDouble() : zero();
+    return pair('E', 17, FlaskLine.finite(first), FlaskLine.finite(second));
   }
 
   ChartPlan.Cells intervalY() {

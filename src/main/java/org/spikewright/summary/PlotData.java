@@ -17,24 +17,24 @@ final class PlotData {
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          new ColumnPlan("Choice", 40),
-          new ColumnPlan("Row of its first flask on Series", 12),
-          new ColumnPlan("Flasks", 9),
-          new ColumnPlan("Slope", 12),
-          new ColumnPlan("Signal intercept", 12),
-          new ColumnPlan("On the axis", 12),
-          new ColumnPlan("Lower 95 % on the axis", 12),
-          new ColumnPlan("Upper 95 % on the axis", 12),
-          new ColumnPlan("Largest addition", 12),
-          new ColumnPlan("To report", 20),
-          new ColumnPlan("Unit of the axis", 12),
-          new ColumnPlan("Why", 60));
+          ColumnPlan.text("Choice", 40),
+          ColumnPlan.number("Row of its first flask on Series", 12),
+          ColumnPlan.number("Flasks", 9),
+          ColumnPlan.number("Slope", 12),
+          ColumnPlan.number("Signal intercept", 12),
+          ColumnPlan.number("On the axis", 12),
+          ColumnPlan.number("Lower 95 % on the axis", 12),
+          ColumnPlan.number("Upper 95 % on the axis", 12),
+          ColumnPlan.number("Largest addition", 12),
+          ColumnPlan.text("To report", 20),
+          ColumnPlan.text("Unit of the axis", 12),
+          ColumnPlan.text("Why", 60));
 
   private PlotData() {}
 
   static SheetPlan of(Night night, SeriesIndex index) {
     SheetPlan.Layout layout =
-        new SheetPlan.Layout(true, Optional.of("PlotDataTable"), true, 0, true, false);
+        new SheetPlan.Layout(SheetPlan.Kind.HIDDEN_ROWS, Optional.of("PlotDataTable"), 0);
     return SheetPlan.table(NAME, COLUMNS, rows(night, index), layout);
   }
 

@@ -3,7 +3,6 @@ package org.spikewright.summary;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
-import java.util.OptionalDouble;
 import org.spikewright.series.SeriesKey;
 
 /**
@@ -16,33 +15,33 @@ final class PlotSheet {
   private static final int MOST_FLASKS = 200;
 
   /** Columns that are printed: the choice and the charts. */
-  private static final int PRINTED = 4;
+  private static final int PRINTED = 2;
 
   /** Row of the cell to choose in, from 1. */
   private static final int CHOICE_ROW = 3;
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          new ColumnPlan("", 14),
-          new ColumnPlan("", 60),
-          new ColumnPlan("", 40),
-          new ColumnPlan("", 4),
-          new ColumnPlan("", 18),
-          new ColumnPlan("", 12),
-          new ColumnPlan("", 4),
-          new ColumnPlan("", 8),
-          new ColumnPlan("", 12),
-          new ColumnPlan("", 12),
-          new ColumnPlan("", 12),
-          new ColumnPlan("", 12),
-          new ColumnPlan("", 12),
-          new ColumnPlan("", 12));
+          ColumnPlan.text("", 14),
+          ColumnPlan.text("", 98),
+          ColumnPlan.text("", 4),
+          ColumnPlan.text("", 4),
+          ColumnPlan.text("", 18),
+          ColumnPlan.text("", 12),
+          ColumnPlan.text("", 4),
+          ColumnPlan.text("", 8),
+          ColumnPlan.text("", 12),
+          ColumnPlan.text("", 12),
+          ColumnPlan.text("", 12),
+          ColumnPlan.text("", 12),
+          ColumnPlan.text("", 12),
+          ColumnPlan.text("", 12));
 
   private PlotSheet() {}
 
   static SheetPlan of(Night night, Counts counts, SeriesIndex index) {
     SheetPlan.Layout layout =
-        new SheetPlan.Layout(false, Optional.empty(), true, PRINTED, false, false);
+        new SheetPlan.Layout(SheetPlan.Kind.ONE_PAGE, Optional.empty(), PRINTED);
     Optional<Chosen> chosen =
         counts.plotted().flatMap(key -> chosen(night, key, index)).filter(c -> !c.isEmpty());
     if (chosen.isEmpty()) {
@@ -93,6 +92,7 @@ final class PlotSheet {
         trace(
             "95 % interval of the result",
             ChartPlan.Stroke.INTERVAL, cells.intervalX(), cells.intervalY()));
+    signals.add(trace("odd flask", ChartPlan.Stroke.RINGS, x, cells.flasks('L')));
     signals.add(
         new ChartPlan.Trace(
             "flasks (bars: replicates' sd)",
@@ -100,21 +100,20 @@ final class PlotSheet {
             x,
             cells.flasks('J'),
             List.of(cells.flasks('N'))));
-    signals.add(trace("odd flask", ChartPlan.Stroke.RINGS, x, cells.flasks('L')));
     List<ChartPlan.Trace> residuals = new ArrayList<>();
-    residuals.add(trace("residual", ChartPlan.Stroke.POINTS, x, cells.flasks('K')));
     residuals.add(trace("odd flask", ChartPlan.Stroke.RINGS, x, cells.flasks('M')));
+    residuals.add(trace("residual", ChartPlan.Stroke.POINTS, x, cells.flasks('K')));
     String xTitle = "addition, referred to the aliquot (zero signal: minus the concentration)";
     return List.of(
         new ChartPlan.Scatter(
             "Signal against addition",
-            new ChartPlan.Box(0, 7, 3, 29),
+            new ChartPlan.Box(0, 7, 2, 31),
             xTitle,
             "signal used",
             signals),
         new ChartPlan.Scatter(
             "Residuals",
-            new ChartPlan.Box(0, 30, 3, 42),
+            new ChartPlan.Box(0, 32, 2, 46),
             "addition, referred to the aliquot",
             "signal minus line",
             residuals));
@@ -123,9 +122,5 @@ final class PlotSheet {
   private static ChartPlan.Trace trace(
       String name, ChartPlan.Stroke stroke, ChartPlan.Cells x, ChartPlan.Cells y) {
     return new ChartPlan.Trace(name, stroke, x, y, List.of());
-  }
-
-  static OptionalDouble negative(OptionalDouble value) {
-    return value.isPresent() ? OptionalDouble.of(-value.getAsDouble()) : value;
   }
 }

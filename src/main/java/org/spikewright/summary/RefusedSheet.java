@@ -9,15 +9,15 @@ final class RefusedSheet {
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          new ColumnPlan("File no.", 8),
-          new ColumnPlan("File", 34),
-          new ColumnPlan("Sheet", 14),
-          new ColumnPlan("Row", 9),
-          new ColumnPlan("Column", 9),
-          new ColumnPlan("Header", 18),
-          new ColumnPlan("What stood there", 30),
-          new ColumnPlan("Why not used", 24),
-          new ColumnPlan("What is expected", 50));
+          ColumnPlan.number("File no.", 8),
+          ColumnPlan.text("File", 34),
+          ColumnPlan.text("Sheet", 14),
+          ColumnPlan.number("Row", 9),
+          ColumnPlan.text("Column", 9),
+          ColumnPlan.text("Header", 18),
+          ColumnPlan.text("What stood there", 30),
+          ColumnPlan.text("Why not used", 24),
+          ColumnPlan.text("What is expected", 50));
 
   private RefusedSheet() {}
 

@@ -10,15 +10,15 @@ final class RepeatSheet {
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          new ColumnPlan("Sample", 20),
-          new ColumnPlan("Analyte", 12),
-          new ColumnPlan("Line", 10),
-          new ColumnPlan("Why", 62),
-          new ColumnPlan("What to do", 62),
-          new ColumnPlan("Instrument", 16),
-          new ColumnPlan("Batch", 18),
-          new ColumnPlan("Preparation", 22),
-          new ColumnPlan("Series sheet", 10));
+          ColumnPlan.text("Sample", 20),
+          ColumnPlan.text("Analyte", 12),
+          ColumnPlan.text("Line", 10),
+          ColumnPlan.text("Why", 62),
+          ColumnPlan.text("What to do", 62),
+          ColumnPlan.text("Instrument", 16),
+          ColumnPlan.text("Batch", 18),
+          ColumnPlan.text("Preparation", 22),
+          ColumnPlan.text("Series sheet", 10));
 
   private RepeatSheet() {}
 

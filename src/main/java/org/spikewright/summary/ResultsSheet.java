@@ -10,31 +10,31 @@ final class ResultsSheet {
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          new ColumnPlan("Sample", 18),
-          new ColumnPlan("Analyte", 10),
-          new ColumnPlan("Line", 10),
-          new ColumnPlan("Verdict", 10),
-          new ColumnPlan("Result", 12),
-          new ColumnPlan("Unit", 9),
-          new ColumnPlan("To report", 20),
-          new ColumnPlan("Lower 95 %", 11),
-          new ColumnPlan("Upper 95 %", 11),
-          new ColumnPlan("Standard error of the fit", 12),
-          new ColumnPlan("Flags in words", 62),
-          new ColumnPlan("Flasks", 8),
-          new ColumnPlan("Readings", 9),
-          new ColumnPlan("Role", 10),
-          new ColumnPlan("Instrument", 14),
-          new ColumnPlan("Batch", 16),
-          new ColumnPlan("Preparation", 22),
-          new ColumnPlan("Lab day", 11),
-          new ColumnPlan("Series sheet", 10));
+          ColumnPlan.text("Sample", 18),
+          ColumnPlan.text("Analyte", 10),
+          ColumnPlan.text("Line", 10),
+          ColumnPlan.text("Verdict", 10),
+          ColumnPlan.number("Result", 12),
+          ColumnPlan.text("Unit", 9),
+          ColumnPlan.text("To report", 20),
+          ColumnPlan.number("Lower 95 %", 11),
+          ColumnPlan.number("Upper 95 %", 11),
+          ColumnPlan.number("Standard error of the fit", 12),
+          ColumnPlan.text("Flags in words", 62),
+          ColumnPlan.number("Flasks", 8),
+          ColumnPlan.number("Readings", 9),
+          ColumnPlan.text("Role", 10),
+          ColumnPlan.text("Instrument", 14),
+          ColumnPlan.text("Batch", 16),
+          ColumnPlan.text("Preparation", 22),
+          ColumnPlan.text("Lab day", 11),
+          ColumnPlan.text("Series sheet", 10));
 
   private ResultsSheet() {}
 
   static SheetPlan of(Night night, SeriesIndex index) {
     SheetPlan.Layout layout =
-        new SheetPlan.Layout(true, Optional.of("ResultsTable"), true, 0, false, true);
+        new SheetPlan.Layout(SheetPlan.Kind.SERIES_ROWS, Optional.of("ResultsTable"), 0);
     return SheetPlan.table(
         NAME, COLUMNS, Lazily.map(night.results(), row -> cells(row, index)), layout);
   }

@@ -2,7 +2,9 @@ package org.spikewright.summary;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Locale;
 import java.util.Optional;
+import java.util.function.ToDoubleFunction;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.Verdict;
@@ -44,11 +46,11 @@ record SeriesBlock(
 
   private static List<String> remarks(Outcome outcome) {
     List<String> remarks = new ArrayList<>();
-    if (outcome.gathered() instanceof Ungrouped ungrouped) {
+    if (outcome.gathered() instanceof Ungrouped ungrouped && outcome.flags().isEmpty()) {
       remarks.add("no series: " + ungrouped.found() + "; a series needs " + ungrouped.expected());
     }
     for (Flag flag : outcome.flags()) {
-      String weight = flag.weight().name().toLowerCase(java.util.Locale.ROOT);
+      String weight = flag.weight().name().toLowerCase(Locale.ROOT);
       remarks.add(weight + ", " + flag.kind().shortName() + ": " + flag.sentence());
     }
     return remarks;
@@ -77,8 +79,9 @@ record SeriesBlock(
       rows.add(List.of(CellPlan.EMPTY, CellPlan.text(remark, Look.FAINT)));
     }
     String unit = outcome.gathered() instanceof AdditionSeries s ? s.axisUnit().symbol() : "";
+    Shown shown = Shown.of(flasks);
     for (FlaskLine line : flasks) {
-      rows.add(flask(line, unit));
+      rows.add(flask(line, unit, shown));
     }
     live.ifPresent(cells -> rows.addAll(cells.rows()));
     rows.add(List.of());
@@ -105,24 +108,42 @@ record SeriesBlock(
         CellPlan.text(whose.toString(), Look.STRONG));
   }
 
-  private static List<CellPlan> flask(FlaskLine line, String axisUnit) {
+  /** Number formats that a series' flasks share, so that their decimals stand in line. */
+  private record Shown(String x, String signal, String residual) {
+    static Shown of(List<FlaskLine> flasks) {
+      return new Shown(
+          Formats.significant(largest(flasks, line -> line.x().orElse(0)), 4),
+          Formats.significant(largest(flasks, line -> line.flask().meanSignal()), 5),
+          Formats.significant(largest(flasks, line -> line.residual().orElse(0)), 3));
+    }
+
+    private static double largest(List<FlaskLine> flasks, ToDoubleFunction<FlaskLine> part) {
+      return flasks.stream()
+          .mapToDouble(part)
+          .filter(Double::isFinite)
+          .map(Math::abs)
+          .max()
+          .orElse(0);
+    }
+  }
+
+  private static List<CellPlan> flask(FlaskLine line, String axisUnit, Shown shown) {
     Flask flask = line.flask();
     Quantity amount = flask.facts().addition().amount();
-    String signals = Formats.significant(flask.meanSignal(), 5);
     // No abscissa without a signal: the worksheet functions skip a row with empty cells.
     return List.of(
         CellPlan.text(flask.label()),
         CellPlan.number(amount.value(), Formats.GENERAL),
         CellPlan.text(amount.unit().symbol()),
-        CellPlan.number(line.x(), Formats.significant(line.x(), 5)),
+        CellPlan.number(line.x(), shown.x()),
         CellPlan.text(axisUnit),
-        CellPlan.number(flask.meanSignal(), signals),
+        CellPlan.number(flask.meanSignal(), shown.signal()),
         CellPlan.number(flask.replicateSd(), Formats.significant(flask.replicateSd(), 3)),
         CellPlan.count(flask.numbers()),
         CellPlan.number(flask.volumeFactor(), "0.0000"),
-        CellPlan.number(line.signal(), Formats.significant(line.signal(), 5)),
-        CellPlan.number(line.fitted(), Formats.significant(line.fitted(), 5)),
-        CellPlan.number(line.residual(), Formats.significant(line.residual(), 3)),
+        CellPlan.number(line.signal(), shown.signal()),
+        CellPlan.number(line.fitted(), shown.signal()),
+        CellPlan.number(line.residual(), shown.residual()),
         CellPlan.number(line.deletedT(), "0.00"),
         CellPlan.text(line.used() ? "yes" : "no"),
         CellPlan.text(line.remark(), line.used() ? Look.STRONG : Look.PLAIN),

@@ -14,23 +14,23 @@ final class SeriesSheet {
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          new ColumnPlan("Flask", 12),
-          new ColumnPlan("Addition", 11),
-          new ColumnPlan("Unit", 15),
-          new ColumnPlan("x, referred to the aliquot", 12),
-          new ColumnPlan("Unit of x", 11),
-          new ColumnPlan("Mean signal", 12),
-          new ColumnPlan("Replicates' sd", 14),
-          new ColumnPlan("Readings", 11),
-          new ColumnPlan("Volume factor", 11),
-          new ColumnPlan("Signal used", 12),
-          new ColumnPlan("Fitted", 11),
-          new ColumnPlan("Residual", 11),
-          new ColumnPlan("Deleted residual t", 10),
-          new ColumnPlan("Used", 12),
-          new ColumnPlan("Remark", 22),
-          new ColumnPlan("Source file", 26),
-          new ColumnPlan("Source cells", 44));
+          ColumnPlan.text("Flask", 12),
+          ColumnPlan.number("Addition", 11),
+          ColumnPlan.text("Unit", 15),
+          ColumnPlan.number("x, referred to the aliquot", 12),
+          ColumnPlan.text("Unit of x", 11),
+          ColumnPlan.number("Mean signal", 12),
+          ColumnPlan.number("Replicates' sd", 14),
+          ColumnPlan.number("Readings", 11),
+          ColumnPlan.number("Volume factor", 11),
+          ColumnPlan.number("Signal used", 12),
+          ColumnPlan.number("Fitted", 11),
+          ColumnPlan.number("Residual", 11),
+          ColumnPlan.number("Deleted residual t", 11),
+          ColumnPlan.text("Used", 13),
+          ColumnPlan.text("Remark", 32),
+          ColumnPlan.text("Source file", 26),
+          ColumnPlan.text("Source cells", 44));
 
   private SeriesSheet() {}
 
@@ -40,7 +40,7 @@ final class SeriesSheet {
             List.of(CellPlan.text("Series, flask by flask", Look.TITLE)),
             List.of(CellPlan.text(explanation(night, index), Look.FAINT)),
             SheetPlan.header(COLUMNS));
-    SheetPlan.Layout layout = new SheetPlan.Layout(true, Optional.empty(), true, 0, false, false);
+    SheetPlan.Layout layout = new SheetPlan.Layout(SheetPlan.Kind.ROWS, Optional.empty(), 0);
     return new SheetPlan(
         NAME, COLUMNS, head, Lazily.flatMap(night.outcomes(), o -> rows(o, index)), layout);
   }

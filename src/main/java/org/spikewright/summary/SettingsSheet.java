@@ -12,10 +12,10 @@ final class SettingsSheet {
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          new ColumnPlan("Group", 20),
-          new ColumnPlan("Setting", 34),
-          new ColumnPlan("Value", 56),
-          new ColumnPlan("Where it comes from", 70));
+          ColumnPlan.text("Group", 20),
+          ColumnPlan.text("Setting", 34),
+          ColumnPlan.text("Value", 56),
+          ColumnPlan.text("Where it comes from", 70));
 
   private static final List<Setting> METHOD =
       List.of(

@@ -28,29 +28,34 @@ public record SheetPlan(
   /**
    * How a sheet lies on screen and paper.
    *
-   * @param freeze whether the head stays while the rows scroll
+   * @param kind what it is
    * @param table the defined name under which other programs find header and rows; where it is
    *     present the last head row is the header and carries a filter
-   * @param landscape whether it is printed across
    * @param printColumns how many columns are printed; 0 for all
-   * @param hidden whether it is there for formulas only
-   * @param seriesPerRow whether each row is one series, by which progress is told
    */
-  public record Layout(
-      boolean freeze,
-      Optional<String> table,
-      boolean landscape,
-      int printColumns,
-      boolean hidden,
-      boolean seriesPerRow) {
+  public record Layout(Kind kind, Optional<String> table, int printColumns) {
 
     /** A page of several parts. */
-    static final Layout PAGE = new Layout(false, Optional.empty(), true, 0, false, false);
+    static final Layout PAGE = new Layout(Kind.PAGE, Optional.empty(), 0);
 
     /** A table under a header that stays. */
     static Layout table(String name) {
-      return new Layout(true, Optional.of(name), true, 0, false, false);
+      return new Layout(Kind.ROWS, Optional.of(name), 0);
     }
+  }
+
+  /** What a sheet is. */
+  public enum Kind {
+    /** A page of several parts. */
+    PAGE,
+    /** The same, printed on one sheet of paper, upright. */
+    ONE_PAGE,
+    /** Rows that scroll under a head that stays. */
+    ROWS,
+    /** The same with one row a series, by which progress is told. */
+    SERIES_ROWS,
+    /** Rows that are there for formulas only. */
+    HIDDEN_ROWS
   }
 
   /**
@@ -79,7 +84,12 @@ public record SheetPlan(
 
   /** The columns' titles as a row. */
   static List<CellPlan> header(List<ColumnPlan> columns) {
-    return columns.stream().map(column -> CellPlan.text(column.title(), Look.HEADER)).toList();
+    return columns.stream().map(SheetPlan::header).toList();
+  }
+
+  private static CellPlan header(ColumnPlan column) {
+    boolean number = column.kind() == ColumnPlan.Kind.NUMBER;
+    return CellPlan.text(column.title(), number ? Look.HEADER_RIGHT : Look.HEADER);
   }
 
   /** The same sheet with charts and cells to choose in. */

@@ -35,18 +35,14 @@ final class Words {
       case SLOPE_NOT_ESTABLISHED -> "the signal does not clearly rise with the addition";
       case BENT -> "the line bends, and the bend moves the result";
       case ODD_FLASK -> "one flask lies off the line through the others";
-      case ODD_LEVEL -> "one addition level lies off the line through the others";
       case UNCERTAIN -> "the uncertainty misses its target";
       case LOW_CORRELATION -> "the correlation is low (it does not see bending)";
       case NO_UNSPIKED_FLASK -> "no flask without addition";
       case FEW_FLASKS -> "fewer flasks than the method expects";
       case ADDITIONS_TOO_SMALL -> "the additions are small beside what is there";
       case ADDITIONS_TOO_LARGE -> "the additions are large beside what is there";
-      case UNEVEN_ADDITIONS -> "uneven or repeated additions";
       case OVER_RANGE -> "a reading above the instrument's range";
       case LEFT_OUT -> "a reading below range, or missing, was left out";
-      case OUTSIDE_RANGE -> "the result lies outside the method's working range";
-      case SCATTERED_READINGS -> "the readings of a flask scatter widely";
       case BELOW_DETECTION -> "not detected";
       case NEAR_DETECTION -> "detected, but too little to be measured well";
       case NEGATIVE_RESULT -> "the line meets zero signal on the wrong side";
@@ -56,7 +52,6 @@ final class Words {
       case SUPERSEDED_READING -> "a later delivery replaced a reading";
       case SECOND_RUN -> "a flask was measured a second time";
       case EXPORTED_AGAIN -> "the same series came under another batch name";
-      case SIMILAR_IDS -> "sample names differ only in case or blanks";
       case WAITING -> "flasks are still due";
     };
   }

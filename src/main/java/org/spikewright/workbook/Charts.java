@@ -15,9 +15,6 @@ import org.apache.poi.xddf.usermodel.chart.BarDirection;
 import org.apache.poi.xddf.usermodel.chart.BarGrouping;
 import org.apache.poi.xddf.usermodel.chart.ChartTypes;
 import org.apache.poi.xddf.usermodel.chart.DisplayBlanks;
-import org.apache.poi.xddf.usermodel.chart.ErrorBarType;
-import org.apache.poi.xddf.usermodel.chart.ErrorDirection;
-import org.apache.poi.xddf.usermodel.chart.ErrorValueType;
 import org.apache.poi.xddf.usermodel.chart.LegendPosition;
 import org.apache.poi.xddf.usermodel.chart.MarkerStyle;
 import org.apache.poi.xddf.usermodel.chart.ScatterStyle;
@@ -27,15 +24,23 @@ import org.apache.poi.xddf.usermodel.chart.XDDFChartAxis;
 import org.apache.poi.xddf.usermodel.chart.XDDFChartData;
 import org.apache.poi.xddf.usermodel.chart.XDDFChartLegend;
 import org.apache.poi.xddf.usermodel.chart.XDDFDataSourcesFactory;
-import org.apache.poi.xddf.usermodel.chart.XDDFErrorBars;
 import org.apache.poi.xddf.usermodel.chart.XDDFNumericalDataSource;
 import org.apache.poi.xddf.usermodel.chart.XDDFScatterChartData;
 import org.apache.poi.xddf.usermodel.chart.XDDFValueAxis;
+import org.apache.poi.xddf.usermodel.text.XDDFTextRun;
 import org.apache.poi.xssf.usermodel.XSSFChart;
 import org.apache.poi.xssf.usermodel.XSSFClientAnchor;
 import org.apache.poi.xssf.usermodel.XSSFDrawing;
 import org.apache.poi.xssf.usermodel.XSSFSheet;
+import org.openxmlformats.schemas.drawingml.x2006.chart.CTErrBars;
+import org.openxmlformats.schemas.drawingml.x2006.chart.CTNumData;
+import org.openxmlformats.schemas.drawingml.x2006.chart.CTNumRef;
+import org.openxmlformats.schemas.drawingml.x2006.chart.CTNumVal;
+import org.openxmlformats.schemas.drawingml.x2006.chart.STErrBarType;
+import org.openxmlformats.schemas.drawingml.x2006.chart.STErrDir;
+import org.openxmlformats.schemas.drawingml.x2006.chart.STErrValType;
 import org.spikewright.summary.ChartPlan;
+import org.spikewright.summary.Look;
 
 /**
  * Draws planned charts. Every line, bar and axis gets an explicit fill and no curve is smoothed:
@@ -56,6 +61,9 @@ final class Charts {
     XSSFChart chart = drawing.createChart(anchor);
     chart.setTitleText(plan.title());
     chart.setTitleOverlay(false);
+    XDDFTextRun title = chart.getFormattedTitle().getParagraph(0).getTextRuns().get(0);
+    title.setFontSize(11.0);
+    title.setBold(true);
     chart.displayBlanksAs(DisplayBlanks.GAP);
     XDDFChartLegend legend = chart.getOrAddLegend();
     legend.setPosition(LegendPosition.BOTTOM);
@@ -127,7 +135,7 @@ final class Charts {
       case RINGS -> marks(series, MarkerStyle.DIAMOND, 15, null);
       case LINE -> drawn(series, line(Palette.LINE, 1.5), MarkerStyle.NONE);
       case INTERVAL -> {
-        drawn(series, line(Palette.part(org.spikewright.summary.Look.REVIEW), 4), MarkerStyle.DASH);
+        drawn(series, line(Palette.part(Look.REVIEW), 4), MarkerStyle.DASH);
         series.setMarkerSize((short) 9);
       }
       default -> throw new IllegalStateException("no such stroke: " + stroke);
@@ -158,16 +166,31 @@ final class Charts {
   }
 
   private static void bars(XDDFScatterChartData.Series series, ChartPlan.Cells spread) {
-    XDDFErrorBars bars = series.addNewErrorBars();
-    bars.setErrorDirection(ErrorDirection.Y);
-    bars.setErrorBarType(ErrorBarType.BOTH);
-    bars.setErrorValueType(ErrorValueType.CUSTOM);
-    bars.setNoEndCap(false);
-    bars.setPlus(numbers(spread));
-    bars.setMinus(numbers(spread));
+    CTErrBars raw = series.getCTScatterSer().addNewErrBars();
+    raw.addNewErrDir().setVal(STErrDir.Y);
+    raw.addNewErrBarType().setVal(STErrBarType.BOTH);
+    raw.addNewErrValType().setVal(STErrValType.CUST);
+    raw.addNewNoEndCap().setVal(false);
+    reference(raw.addNewPlus().addNewNumRef(), spread);
+    reference(raw.addNewMinus().addNewNumRef(), spread);
     XDDFShapeProperties shape = new XDDFShapeProperties();
     shape.setLineProperties(line(Palette.POINT, 1));
-    bars.setShapeProperties(shape);
+    raw.setSpPr(shape.getXmlObject());
+  }
+
+  /** The bars' lengths; the setters of the library's own class expect what is not there yet. */
+  private static void reference(CTNumRef target, ChartPlan.Cells cells) {
+    target.setF(cells.range());
+    CTNumData cache = target.addNewNumCache();
+    cache.setFormatCode("General");
+    cache.addNewPtCount().setVal(cells.cached().size());
+    for (int i = 0; i < cells.cached().size(); i++) {
+      if (Double.isFinite(cells.cached().get(i))) {
+        CTNumVal point = cache.addNewPt();
+        point.setIdx(i);
+        point.setV(cells.cached().get(i).toString());
+      }
+    }
   }
 
   private static XDDFNumericalDataSource<Double> numbers(ChartPlan.Cells cells) {

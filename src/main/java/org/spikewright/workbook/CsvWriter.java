@@ -1,5 +1,6 @@
 package org.spikewright.workbook;
 
+import java.io.BufferedWriter;
 import java.io.IOException;
 import java.io.OutputStream;
 import java.io.OutputStreamWriter;
@@ -9,7 +10,6 @@ import java.nio.file.Path;
 import java.util.List;
 import java.util.function.LongConsumer;
 import org.apache.commons.csv.CSVFormat;
-import org.apache.commons.csv.CSVPrinter;
 import org.spikewright.summary.CsvPlan;
 
 /**
@@ -49,17 +49,16 @@ public final class CsvWriter {
 
   private static void print(CsvPlan plan, OutputStream out, LongConsumer progress)
       throws IOException {
-    Writer writer = new OutputStreamWriter(out, StandardCharsets.UTF_8);
-    CSVPrinter printer = new CSVPrinter(writer, FORMAT);
-    printer.printRecord(plan.header());
+    Writer writer = new BufferedWriter(new OutputStreamWriter(out, StandardCharsets.UTF_8));
+    FORMAT.printRecord(writer, plan.header().toArray());
     long lines = 0;
     for (List<String> line : plan.lines()) {
-      printer.printRecord(line);
+      FORMAT.printRecord(writer, line.toArray());
       if (++lines % PROGRESS_STEP == 0) {
         progress.accept(lines);
       }
     }
     progress.accept(lines);
-    printer.flush();
+    writer.flush();
   }
 }

@@ -22,7 +22,7 @@ final class Palette {
   /** The fill of a cell, or white. */
   static String fill(Look look) {
     return switch (look) {
-      case HEADER -> HEADER_FILL;
+      case HEADER, HEADER_RIGHT -> HEADER_FILL;
       case CHOICE -> CHOICE_FILL;
       case REPORT -> "E1F1EC";
       case REVIEW -> "F7D998";
@@ -46,7 +46,7 @@ final class Palette {
   static String ink(Look look) {
     return switch (look) {
       case REPEAT -> "FFFFFF";
-      case FAINT -> FAINT_INK;
+      case FAINT, FAINT_RIGHT -> FAINT_INK;
       default -> INK;
     };
   }

@@ -24,12 +24,15 @@ final class PoiFolder implements AutoCloseable {
     this.folder = folder;
   }
 
-  /** A new folder under a given one, used by this thread until it is closed. */
+  /** A new folder under a given one. */
   static PoiFolder under(Path temporaryFolder) throws IOException {
     Files.createDirectories(temporaryFolder);
-    Path folder = Files.createTempDirectory(temporaryFolder, PREFIX);
+    return new PoiFolder(Files.createTempDirectory(temporaryFolder, PREFIX));
+  }
+
+  /** From now on POI's temporary files of this thread lie here, until this is closed. */
+  void adopt() {
     TempFile.setThreadLocalTempFileCreationStrategy(new In(folder));
-    return new PoiFolder(folder);
   }
 
   /** Deletes what a killed program left. */

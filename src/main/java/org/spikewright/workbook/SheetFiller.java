@@ -11,18 +11,21 @@ import org.apache.poi.xssf.usermodel.XSSFHyperlink;
 import org.apache.poi.xssf.usermodel.XSSFSheet;
 import org.spikewright.summary.CellPlan;
 import org.spikewright.summary.Look;
+import org.spikewright.summary.SheetPlan;
 
 /** Puts planned rows into one sheet, top down. */
 final class SheetFiller {
   private final SXSSFSheet sheet;
   private final XSSFSheet underlying;
   private final Styles styles;
+  private final RowHeights heights;
   private int next;
 
-  SheetFiller(SXSSFSheet sheet, XSSFSheet underlying, Styles styles) {
+  SheetFiller(SheetPlan plan, SXSSFSheet sheet, XSSFSheet underlying, Styles styles) {
     this.sheet = sheet;
     this.underlying = underlying;
     this.styles = styles;
+    this.heights = new RowHeights(plan.columns());
   }
 
   /** How many rows there are. */
@@ -42,6 +45,10 @@ final class SheetFiller {
       if (!(plan instanceof CellPlan.Empty)) {
         put(plan, row.createCell(i));
       }
+    }
+    float points = heights.of(cells);
+    if (points > RowHeights.ONE_LINE) {
+      row.setHeightInPoints(points);
     }
   }
 

@@ -4,6 +4,7 @@ import org.apache.poi.ss.usermodel.DataValidation;
 import org.apache.poi.ss.usermodel.DataValidationHelper;
 import org.apache.poi.ss.usermodel.IgnoredErrorType;
 import org.apache.poi.ss.usermodel.Name;
+import org.apache.poi.ss.usermodel.PageMargin;
 import org.apache.poi.ss.usermodel.PrintSetup;
 import org.apache.poi.ss.usermodel.Sheet;
 import org.apache.poi.ss.util.CellRangeAddress;
@@ -39,7 +40,7 @@ final class SheetPage {
     for (int i = 0; i < plan.columns().size(); i++) {
       sheet.setColumnWidth(i, plan.columns().get(i).width() * CHARACTER);
     }
-    if (plan.layout().freeze() && !plan.head().isEmpty()) {
+    if (isScrolled() && !plan.head().isEmpty()) {
       sheet.createFreezePane(0, plan.head().size());
     }
     sheet.setDisplayGridlines(plan.layout().table().isPresent());
@@ -53,7 +54,13 @@ final class SheetPage {
     underlying.addIgnoredErrors(
         new CellRangeAddress(0, Math.max(rows - 1, 0), 0, plan.columns().size() - 1),
         IgnoredErrorType.NUMBER_STORED_AS_TEXT);
-    book.setSheetHidden(book.getSheetIndex(sheet), plan.layout().hidden());
+    book.setSheetHidden(
+        book.getSheetIndex(sheet), plan.layout().kind() == SheetPlan.Kind.HIDDEN_ROWS);
+  }
+
+  private boolean isScrolled() {
+    SheetPlan.Kind kind = plan.layout().kind();
+    return kind != SheetPlan.Kind.PAGE && kind != SheetPlan.Kind.ONE_PAGE;
   }
 
   private void table(int rows, int part) {
@@ -64,7 +71,7 @@ final class SheetPage {
     int lastColumn = plan.columns().size() - 1;
     CellRangeAddress range =
         new CellRangeAddress(header, Math.max(rows - 1, header), 0, lastColumn);
-    if (!plan.layout().hidden()) {
+    if (plan.layout().kind() != SheetPlan.Kind.HIDDEN_ROWS) {
       sheet.setAutoFilter(range);
     }
     Name name = book.createName();
@@ -75,14 +82,15 @@ final class SheetPage {
   private void print() {
     PrintSetup setup = sheet.getPrintSetup();
     setup.setPaperSize(PrintSetup.A4_PAPERSIZE);
-    setup.setLandscape(plan.layout().landscape());
+    boolean onePage = plan.layout().kind() == SheetPlan.Kind.ONE_PAGE;
+    setup.setLandscape(!onePage);
     setup.setFitWidth((short) 1);
-    setup.setFitHeight((short) 0);
+    setup.setFitHeight((short) (onePage ? 1 : 0));
     sheet.setFitToPage(true);
-    sheet.setMargin(org.apache.poi.ss.usermodel.PageMargin.LEFT, 0.4);
-    sheet.setMargin(org.apache.poi.ss.usermodel.PageMargin.RIGHT, 0.4);
-    sheet.setMargin(org.apache.poi.ss.usermodel.PageMargin.TOP, 0.5);
-    sheet.setMargin(org.apache.poi.ss.usermodel.PageMargin.BOTTOM, 0.6);
+    sheet.setMargin(PageMargin.LEFT, 0.4);
+    sheet.setMargin(PageMargin.RIGHT, 0.4);
+    sheet.setMargin(PageMargin.TOP, 0.5);
+    sheet.setMargin(PageMargin.BOTTOM, 0.6);
     sheet.getFooter().setLeft("&F  ·  &A");
     sheet.getFooter().setRight("page &P of &N");
     if (!plan.head().isEmpty()) {

@@ -53,8 +53,10 @@ final class Styles {
   private XSSFCellStyle text(Look look, boolean quoted) {
     XSSFCellStyle style = make(look, quoted ? AS_TEXT : "General");
     style.setQuotePrefixed(quoted);
-    if (look != Look.HEADER) {
-      style.setAlignment(HorizontalAlignment.LEFT);
+    boolean right = look == Look.HEADER_RIGHT || look == Look.FAINT_RIGHT;
+    style.setAlignment(right ? HorizontalAlignment.RIGHT : HorizontalAlignment.LEFT);
+    if (look != Look.TITLE && look != Look.HEADING) {
+      style.setIndention((short) (right ? 0 : 1));
     }
     return style;
   }
@@ -64,13 +66,14 @@ final class Styles {
     style.setFont(fonts.get(look));
     style.setDataFormat(book.createDataFormat().getFormat(format));
     style.setVerticalAlignment(VerticalAlignment.TOP);
-    style.setWrapText(look == Look.WRAPPED || look == Look.HEADER);
+    boolean header = look == Look.HEADER || look == Look.HEADER_RIGHT;
+    style.setWrapText(look == Look.WRAPPED || header);
     String fill = Palette.fill(look);
     if (!fill.equals("FFFFFF")) {
       style.setFillForegroundColor(Palette.color(fill));
       style.setFillPattern(FillPatternType.SOLID_FOREGROUND);
     }
-    if (look == Look.HEADER) {
+    if (header) {
       style.setBorderBottom(BorderStyle.MEDIUM);
       style.setBottomBorderColor(Palette.color(Palette.LINE));
     }
@@ -106,7 +109,7 @@ final class Styles {
 
   private static boolean isBold(Look look) {
     return switch (look) {
-      case TITLE, HEADING, HEADER, STRONG, REVIEW, REPEAT, CHOICE -> true;
+      case TITLE, HEADING, HEADER, HEADER_RIGHT, STRONG, REVIEW, REPEAT, CHOICE -> true;
       default -> false;
     };
   }

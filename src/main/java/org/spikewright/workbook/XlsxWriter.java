@@ -51,6 +51,7 @@ public final class XlsxWriter {
         target,
         out -> {
           try (PoiFolder folder = PoiFolder.under(temporaryFolder)) {
+            folder.adopt();
             write(plan, out, progress);
           }
         });
@@ -72,7 +73,11 @@ public final class XlsxWriter {
       properties(plan, book.getXSSFWorkbook());
       Styles styles = new Styles(book.getXSSFWorkbook());
       for (SheetPlan sheet : plan.sheets()) {
-        write(sheet, book, styles, sheet.layout().seriesPerRow() ? progress : series -> {});
+        write(
+            sheet,
+            book,
+            styles,
+            sheet.layout().kind() == SheetPlan.Kind.SERIES_ROWS ? progress : series -> {});
       }
       book.setActiveSheet(0);
       book.write(out);
@@ -97,7 +102,7 @@ public final class XlsxWriter {
       String name = part == 1 ? plan.name() : plan.name() + " " + part;
       SXSSFSheet sheet = book.createSheet(name);
       XSSFSheet underlying = book.getXSSFWorkbook().getSheet(name);
-      SheetFiller filler = new SheetFiller(sheet, underlying, styles);
+      SheetFiller filler = new SheetFiller(plan, sheet, underlying, styles);
       plan.head().forEach(filler::add);
       while (rows.hasNext() && filler.rows() < mostRows) {
         filler.add(rows.next());
