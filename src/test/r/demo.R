@@ -2,7 +2,9 @@
 # nothing of the program. Run from the project's top folder:
 #   Rscript src/test/r/demo.R series > src/test/resources/reference/demo-r.csv
 #   Rscript src/test/r/demo.R flasks > src/test/resources/reference/demo-r-flasks.csv
-# Base R only. What the exports do not say (stocks, volumes) stands in methods() below.
+# Base R only. What the exports do not say (stocks, volumes) stands under "what the methods say".
+
+if (!l10n_info()[["UTF-8"]]) stop("headers hold a µ: run in a UTF-8 locale, such as LC_ALL=C.UTF-8")
 
 inbox <- "watch-folder-example/inbox"
 
