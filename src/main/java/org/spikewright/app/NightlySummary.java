@@ -172,8 +172,8 @@ final class NightlySummary {
         analysis(settings, day, upTo, revision.moment()),
         ledger.files(day, upTo),
         ledger.refused(day, upTo),
-        settings.criteria(),
-        SettingsLines.of(settings, station.mappings().good(), revision));
+        SettingsLines.of(settings, station.mappings().good(), revision),
+        settings.criteria());
   }
 
   /** The settings that held when the revision was made, which may not be today's. */
