@@ -59,7 +59,7 @@ final class RowsText {
         + ": "
         + row.reason()
         + "; found "
-        + quoted(row.found())
+        + orNothing(row.found())
         + (row.header().isEmpty() ? "" : " under " + row.header())
         + "; expected "
         + row.expected();
@@ -81,13 +81,13 @@ final class RowsText {
   static String why(Rejection rejection) {
     return rejection.reason().words()
         + "; found "
-        + quoted(rejection.found())
+        + orNothing(rejection.found())
         + (rejection.column().isEmpty() ? "" : " under " + rejection.column())
         + "; expected "
         + rejection.expected();
   }
 
-  private static String quoted(String found) {
-    return found.isEmpty() ? "nothing" : "'" + found + "'";
+  private static String orNothing(String found) {
+    return found.isEmpty() ? "nothing" : found;
   }
 }

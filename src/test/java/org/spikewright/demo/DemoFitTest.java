@@ -33,7 +33,7 @@ class DemoFitTest {
     agrees(line.residualSd().orElseThrow(), r, "residual_sd");
     agrees(line.correlation().orElseThrow(), r, "r");
 
-    NativeEstimate estimate = NativeEstimate.of(line);
+    NativeEstimate estimate = NativeEstimate.of(line).orElseThrow();
     agrees(estimate.value(), r, "native");
     agrees(estimate.standardError().orElseThrow(), r, "native_se");
     agrees(estimate.lower95().orElseThrow(), r, "native_lower95");

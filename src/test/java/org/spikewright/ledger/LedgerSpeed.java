@@ -104,7 +104,7 @@ class LedgerSpeed {
           }
         }
       }
-      delivery.commit(Samples.tally(line - 1), "done/" + name);
+      delivery.commit(Samples.tally(line - 1), "", "done/" + name);
     }
     return (System.nanoTime() - start) / 1e9;
   }

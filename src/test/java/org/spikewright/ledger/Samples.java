@@ -144,7 +144,7 @@ final class Samples {
         delivery.reading(reading);
         count++;
       }
-      return delivery.commit(tally(count), "done/" + file.labDay() + "/" + file.name());
+      return delivery.commit(tally(count), "", "done/" + file.labDay() + "/" + file.name());
     }
   }
 }
