@@ -126,12 +126,11 @@ class LedgerSpeed {
   private double floor(String name, int rows) throws SQLException, IOException {
     Path file = folder.resolve(name + ".db");
     try (Connection connection = DriverManager.getConnection("jdbc:sqlite:" + file)) {
-      connection.createStatement().execute("PRAGMA journal_mode = WAL");
-      connection
-          .createStatement()
-          .execute(
-              "CREATE TABLE r (a INTEGER, b INTEGER, c INTEGER, d INTEGER, v REAL, f INTEGER,"
-                  + " PRIMARY KEY (a, b, c, d)) WITHOUT ROWID");
+      run(connection, "PRAGMA journal_mode = WAL");
+      run(
+          connection,
+          "CREATE TABLE r (a INTEGER, b INTEGER, c INTEGER, d INTEGER, v REAL, f INTEGER,"
+              + " PRIMARY KEY (a, b, c, d)) WITHOUT ROWID");
       long start = System.nanoTime();
       connection.setAutoCommit(false);
       try (PreparedStatement insert =
@@ -153,8 +152,14 @@ class LedgerSpeed {
       connection.commit();
       double seconds = (System.nanoTime() - start) / 1e9;
       connection.setAutoCommit(true);
-      connection.createStatement().execute("PRAGMA wal_checkpoint(TRUNCATE)");
+      run(connection, "PRAGMA wal_checkpoint(TRUNCATE)");
       return seconds;
+    }
+  }
+
+  private static void run(Connection connection, String sql) throws SQLException {
+    try (var statement = connection.createStatement()) {
+      statement.execute(sql);
     }
   }
 }
