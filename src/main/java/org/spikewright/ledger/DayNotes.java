@@ -37,6 +37,7 @@ final class DayNotes {
   private final Batched touched;
   private final Map<Noted, Boolean> noted = new Recent<>(REMEMBERED);
   private final Map<Untimed, Long> untimedDays = new Recent<>(REMEMBERED);
+  private Noted lastNote;
   private final Set<Long> daysBrought = new HashSet<>();
   private final Pairs timedToFollow = new Pairs();
   private final Pairs delimitedToFollow = new Pairs();
@@ -65,9 +66,11 @@ final class DayNotes {
   void fresh(NewRow row) {
     long day = row.timed() ? days.of(row.at()) : untimedDay(row);
     Noted note = new Noted(row.timed(), row.subject(), day, row.delimitedBy());
-    if (noted.putIfAbsent(note, true) != null) {
+    if (note.equals(lastNote) || noted.putIfAbsent(note, true) != null) {
+      lastNote = note;
       return;
     }
+    lastNote = note;
     subjectDays.add(day, row.subject(), arrival);
     bring(day);
     boolean known = row.subject() <= lastKnownSubject;
