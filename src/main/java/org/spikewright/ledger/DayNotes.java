@@ -19,6 +19,11 @@ final class DayNotes {
   private static final int AGREEING_FLASKS = 3;
 
   private static final int REMEMBERED = 65_536;
+  private static final String OF_DAY_BROUGHT =
+      " FROM reading r JOIN origin o ON o.id = r.origin WHERE r.subject = ? AND r.read_at >= ?"
+          + " AND r.read_at < ? AND r.batch = 0 AND o.arrival = ?";
+  private static final String FIRST_BROUGHT = "SELECT MIN(r.read_at)" + OF_DAY_BROUGHT;
+  private static final String LAST_BROUGHT = "SELECT MAX(r.read_at)" + OF_DAY_BROUGHT;
 
   private final Sql sql;
   private final DayIndex days;
@@ -32,6 +37,7 @@ final class DayNotes {
   private final Batched touched;
   private final Map<Noted, Boolean> noted = new Recent<>(REMEMBERED);
   private final Map<Untimed, Long> untimedDays = new Recent<>(REMEMBERED);
+  private Noted lastNote;
   private final Set<Long> daysBrought = new HashSet<>();
   private final Pairs timedToFollow = new Pairs();
   private final Pairs delimitedToFollow = new Pairs();
@@ -60,9 +66,11 @@ final class DayNotes {
   void fresh(NewRow row) {
     long day = row.timed() ? days.of(row.at()) : untimedDay(row);
     Noted note = new Noted(row.timed(), row.subject(), day, row.delimitedBy());
-    if (noted.putIfAbsent(note, true) != null) {
+    if (note.equals(lastNote) || noted.putIfAbsent(note, true) != null) {
+      lastNote = note;
       return;
     }
+    lastNote = note;
     subjectDays.add(day, row.subject(), arrival);
     bring(day);
     boolean known = row.subject() <= lastKnownSubject;
@@ -134,24 +142,50 @@ final class DayNotes {
   }
 
   /**
-   * Earlier days from which a series without a long pause reaches this one, and the next day when a
-   * series there may now have begun on this one.
+   * A series without a long pause that holds a new reading of this day may have begun on an earlier
+   * day, or have taken over what began the next. Only series that cross a cut-off are followed,
+   * reading by reading: a control that is measured every night must not touch its whole history.
    */
   private void followTimed(long subject, long day) {
-    OptionalLong next = first(subject, days.start(day + 1));
-    OptionalLong last = last(subject, days.start(day + 1));
-    if (linked(last, next)) {
-      touch(days.of(next.getAsLong()));
+    long start = days.start(day);
+    long end = days.start(day + 1);
+    if (linked(last(subject, start), first(subject, start))) {
+      followBack(subject, brought(FIRST_BROUGHT, subject, start, end), day);
     }
-    long at = day;
-    while (true) {
-      OptionalLong before = last(subject, days.start(at));
-      if (!linked(before, first(subject, days.start(at)))) {
+    if (linked(last(subject, end), first(subject, end))) {
+      followOn(subject, brought(LAST_BROUGHT, subject, start, end), end);
+    }
+  }
+
+  private void followBack(long subject, long from, long day) {
+    long touchedLast = day;
+    OptionalLong at = OptionalLong.of(from);
+    OptionalLong before = last(subject, from);
+    while (linked(before, at)) {
+      long dayBefore = days.of(before.getAsLong());
+      if (dayBefore != touchedLast) {
+        touch(dayBefore);
+        touchedLast = dayBefore;
+      }
+      at = before;
+      before = last(subject, at.getAsLong());
+    }
+  }
+
+  private void followOn(long subject, long from, long end) {
+    OptionalLong at = OptionalLong.of(from);
+    while (at.getAsLong() < end) {
+      OptionalLong next = first(subject, at.getAsLong() + 1);
+      if (!linked(at, next)) {
         return;
       }
-      at = days.of(before.getAsLong());
-      touch(at);
+      at = next;
     }
+    touch(days.of(at.getAsLong()));
+  }
+
+  private long brought(String which, long subject, long from, long to) {
+    return sql.number(which, subject, from, to, arrival).orElseThrow();
   }
 
   private boolean linked(OptionalLong earlier, OptionalLong later) {

@@ -41,7 +41,7 @@ public final class Ledger extends LedgerView {
    */
   public static Opening open(
       Path file, LabCalendar calendar, Duration longestPause, boolean archiveHasFiles) {
-    return new LedgerOpener(file).open(calendar, longestPause, archiveHasFiles);
+    return LedgerOpener.open(file, calendar, longestPause, archiveHasFiles);
   }
 
   /**
@@ -50,7 +50,7 @@ public final class Ledger extends LedgerView {
    * @param longestPause as for {@link #open}
    */
   public static Opening.ToRead openReadOnly(Path file, Duration longestPause) {
-    return new LedgerOpener(file).openToRead(longestPause);
+    return LedgerOpener.openToRead(file, longestPause);
   }
 
   /** Begins to take a delivery; {@link IllegalStateException} while another is being taken. */

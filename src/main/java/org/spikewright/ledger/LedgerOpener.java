@@ -18,16 +18,35 @@ final class LedgerOpener {
   private final Path file;
   private final SqliteFile sqlite;
 
-  LedgerOpener(Path file) {
-    this.file = file.toAbsolutePath().normalize();
-    this.sqlite = new SqliteFile(this.file);
+  private LedgerOpener(Path file) {
+    this.file = file;
+    this.sqlite = new SqliteFile(file);
   }
 
-  Opening open(LabCalendar calendar, Duration longestPause, boolean archiveHasFiles) {
+  static Opening open(
+      Path file, LabCalendar calendar, Duration longestPause, boolean archiveHasFiles) {
+    try {
+      return new LedgerOpener(real(file)).open(calendar, longestPause, archiveHasFiles);
+    } catch (IOException fault) {
+      return unusable(file, fault);
+    }
+  }
+
+  static Opening.ToRead openToRead(Path file, Duration longestPause) {
+    return new LedgerOpener(file.toAbsolutePath()).openToRead(longestPause);
+  }
+
+  /** One ledger has one path, through whatever links it was named: the owner's lock needs that. */
+  private static Path real(Path file) throws IOException {
+    Path folder = file.toAbsolutePath().getParent();
+    Files.createDirectories(folder);
+    return Files.exists(file) ? file.toRealPath() : folder.toRealPath().resolve(file.getFileName());
+  }
+
+  private Opening open(LabCalendar calendar, Duration longestPause, boolean archiveHasFiles) {
     Optional<Owner> owner = Optional.empty();
     Opening opening = null;
     try {
-      Files.createDirectories(file.getParent());
       Owner.Claim claim = Owner.claim(file);
       owner = claim.owner();
       if (owner.isEmpty()) {
@@ -37,7 +56,7 @@ final class LedgerOpener {
       opening = refusal.isPresent() ? refusal.get() : opened(owner.get(), calendar, longestPause);
       return opening;
     } catch (IOException | SQLException | LedgerFault fault) {
-      return unusable(fault);
+      return unusable(file, fault);
     } finally {
       if (!(opening instanceof Opening.Opened)) {
         owner.ifPresent(LedgerOpener::release);
@@ -45,7 +64,7 @@ final class LedgerOpener {
     }
   }
 
-  Opening.ToRead openToRead(Duration longestPause) {
+  private Opening.ToRead openToRead(Duration longestPause) {
     try {
       if (sqlite.isBlank()) {
         return new Opening.Refused("there is no ledger " + file, "Check the configured path");
@@ -65,7 +84,7 @@ final class LedgerOpener {
       }
       return new Opening.Viewed(new LedgerView(sql, calendar.get(), longestPause));
     } catch (IOException | SQLException | LedgerFault fault) {
-      return unusable(fault);
+      return unusable(file, fault);
     }
   }
 
@@ -129,7 +148,7 @@ final class LedgerOpener {
     return calendar.cutOff() + " " + calendar.zone().getId();
   }
 
-  private Opening.Refused unusable(Exception fault) {
+  private static Opening.Refused unusable(Path file, Exception fault) {
     return new Opening.Refused(
         "the ledger " + file + " cannot be opened: " + fault,
         "Check the disk, and the rights on the folder and the file");

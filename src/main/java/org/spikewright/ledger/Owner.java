@@ -81,18 +81,17 @@ final class Owner implements AutoCloseable {
     FileChannel channel =
         FileChannel.open(
             file, StandardOpenOption.CREATE, StandardOpenOption.READ, StandardOpenOption.WRITE);
-    FileLock lock = null;
     try {
-      lock = channel.tryLock(LOCKED_BYTE, 1, false);
-    } catch (OverlappingFileLockException ours) {
-      // The same file under another name, through a link: owned all the same.
-      return Optional.empty();
-    } finally {
-      if (lock == null) {
-        channel.close();
+      FileLock lock = channel.tryLock(LOCKED_BYTE, 1, false);
+      if (lock != null) {
+        return Optional.of(new Owner(ledger, channel, lock));
       }
+    } catch (OverlappingFileLockException ours) {
+      // Ours under another name. Closing this channel would free the lock that is held.
+      return Optional.empty();
     }
-    return lock == null ? Optional.empty() : Optional.of(new Owner(ledger, channel, lock));
+    channel.close();
+    return Optional.empty();
   }
 
   private void sign(String self) throws IOException {

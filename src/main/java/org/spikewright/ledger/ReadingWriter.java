@@ -26,6 +26,7 @@ final class ReadingWriter {
   private final Map<Origin, Long> origins = new Recent<>(ORIGINS);
   private final BitSet subjects = new BitSet();
   private final BitSet spiked = new BitSet();
+  private Seen last;
   private long taken;
   private long repeated;
 
@@ -37,6 +38,17 @@ final class ReadingWriter {
       boolean delimits,
       boolean flaskMapped,
       boolean replicateMapped) {}
+
+  /** A reading, and what stands for its batch and its origin. */
+  private record Seen(Reading reading, long batch, long origin) {
+    boolean isOf(Reading other) {
+      return reading.batch().equals(other.batch())
+          && reading.position().source().equals(other.position().source())
+          && reading.position().column() == other.position().column()
+          && reading.flaskMapped() == other.flaskMapped()
+          && reading.replicateMapped() == other.replicateMapped();
+    }
+  }
 
   /** The newest version of a reading that is there already. */
   private record Newest(
@@ -53,7 +65,7 @@ final class ReadingWriter {
   void add(Reading reading) {
     long subject = ids.subject(reading.subject());
     Ids.FactsId facts = ids.facts(reading.facts());
-    long batch = ids.name(reading.batch().name());
+    Seen seen = seen(reading);
     boolean timed = reading.measuredAt().isPresent();
     taken++;
     subjects.set(Math.toIntExact(subject));
@@ -64,15 +76,15 @@ final class ReadingWriter {
         new NewRow(
             subject,
             timed ? reading.measuredAt().get().toEpochMilli() : 0,
-            timed ? Ids.NONE : batch,
+            timed ? Ids.NONE : seen.batch(),
             facts.preparation(),
             ids.name(reading.flask()),
             ids.name(reading.replicate()),
             reading.signal(),
             facts.facts(),
-            origin(reading, batch),
+            seen.origin(),
             reading.position().row(),
-            timed && reading.batch().delimits() ? batch : Ids.NONE));
+            timed && reading.batch().delimits() ? seen.batch() : Ids.NONE));
     if (waiting.size() == BATCH) {
       flush();
     }
@@ -167,6 +179,15 @@ final class ReadingWriter {
         && newest.state() == NewRow.state(row.signal())
         && newest.facts() == row.facts()
         && delimitedBy == row.delimitedBy();
+  }
+
+  /** Mostly that of the reading before. */
+  private Seen seen(Reading reading) {
+    if (last == null || !last.isOf(reading)) {
+      long batch = ids.name(reading.batch().name());
+      last = new Seen(reading, batch, origin(reading, batch));
+    }
+    return last;
   }
 
   private long origin(Reading reading, long batch) {

@@ -2,6 +2,7 @@ package org.spikewright.ledger;
 
 import java.io.IOException;
 import java.io.InputStream;
+import java.nio.ByteBuffer;
 import java.nio.channels.FileChannel;
 import java.nio.charset.StandardCharsets;
 import java.nio.file.Files;
@@ -40,7 +41,7 @@ final class SqliteFile {
 
   /** Why a blank file must not be taken for a first start. */
   Optional<Opening.Refused> refusalOfBlank(boolean archiveHasFiles) throws IOException {
-    Path journal = path.resolveSibling(path.getFileName() + "-wal");
+    Path journal = journal();
     boolean journalLeft = Files.exists(journal) && Files.size(journal) > 0;
     String state = Files.exists(path) ? "is empty" : "is missing";
     if (archiveHasFiles) {
@@ -72,6 +73,9 @@ final class SqliteFile {
   Optional<Opening.Refused> refusalOfExisting(boolean archiveHasFiles) throws IOException {
     if (!hasHeader()) {
       return refusalOfKind();
+    }
+    if (!hasNumberOfPages()) {
+      return refused("the ledger " + path + " is cut off: its size is not what it says", RESTORE);
     }
     try (Sql sql = new Sql(connect(true), path.toString())) {
       Optional<Opening.Refused> foreign = refusalOfDamage(sql).or(() -> refusalOfKind(sql));
@@ -152,6 +156,30 @@ final class SqliteFile {
           "Start the newer version, or restore a backup from before it");
     }
     return Optional.empty();
+  }
+
+  /**
+   * Whether the file has the size its header states. SQLite takes a last page that is cut off as if
+   * zeros followed. With a journal the file may lag behind; then the journal makes it whole.
+   */
+  private boolean hasNumberOfPages() throws IOException {
+    Path journal = journal();
+    if (Files.exists(journal) && Files.size(journal) > 0) {
+      return true;
+    }
+    try (InputStream in = Files.newInputStream(path)) {
+      ByteBuffer header = ByteBuffer.wrap(in.readNBytes(100));
+      if (header.limit() < 100) {
+        return false;
+      }
+      int stated = Short.toUnsignedInt(header.getShort(16));
+      long pageSize = stated == 1 ? 65_536 : stated;
+      return Files.size(path) == pageSize * Integer.toUnsignedLong(header.getInt(28));
+    }
+  }
+
+  private Path journal() {
+    return path.resolveSibling(path.getFileName() + "-wal");
   }
 
   private boolean hasHeader() throws IOException {
