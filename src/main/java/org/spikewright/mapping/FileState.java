@@ -21,13 +21,15 @@ final class FileState {
   private final Steps steps = new Steps();
   private final Optional<MappedFile.Unmappable> fault;
   private final Batch batch;
+  private final boolean timed;
 
   FileState(Mapping mapping, String path) {
     this.mapping = mapping;
     this.path = path;
+    this.timed = mapping.places().isRead(Fact.MEASURED_AT);
     this.fault = readFileName();
     String name = fromFileName.getOrDefault(Fact.BATCH, "");
-    this.batch = new Batch(name.isBlank() ? batchName() : name, !isTimed());
+    this.batch = new Batch(name.isBlank() ? batchName() : name, !timed);
   }
 
   private Optional<MappedFile.Unmappable> readFileName() {
@@ -78,7 +80,7 @@ final class FileState {
 
   /** Whether rows bear a time of measurement. */
   boolean isTimed() {
-    return mapping.places().isRead(Fact.MEASURED_AT);
+    return timed;
   }
 
   /** The reader of times in a form; one for the whole file, since row order counts. */

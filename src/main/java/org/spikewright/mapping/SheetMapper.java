@@ -2,11 +2,14 @@ package org.spikewright.mapping;
 
 import java.time.Instant;
 import java.util.ArrayList;
+import java.util.EnumSet;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.Set;
+import java.util.stream.Stream;
 import org.spikewright.mapping.FactsReader.Facts;
 import org.spikewright.mapping.Rejection.Reason;
 import org.spikewright.quantity.Quantity;
@@ -46,6 +49,8 @@ final class SheetMapper {
   private final NameReader names;
   private final FactsReader facts;
   private final RowFilter filter;
+  private final Set<Fact> namedFacts;
+  private final boolean batchInRow;
   private final Map<FlaskFacts, Map<Quantity, FlaskFacts>> summed = new HashMap<>();
   private Subjects subjects = new Subjects("");
 
@@ -57,6 +62,9 @@ final class SheetMapper {
     this.names = new NameReader(mapping.places(), lookup);
     this.facts = new FactsReader(mapping, lookup, names);
     this.filter = new RowFilter(mapping.rows(), header);
+    this.namedFacts = EnumSet.noneOf(Fact.class);
+    Stream.of(Fact.values()).filter(mapping.places()::isNamed).forEach(namedFacts::add);
+    this.batchInRow = mapping.places().isInRow(Fact.BATCH);
   }
 
   /** Maps one row that is not blank. */
@@ -190,11 +198,11 @@ final class SheetMapper {
 
   /** A name that is looked for only where the mapping names it. */
   private Optional<String> named(Fact fact, List<Trouble> troubles) {
-    return mapping.places().isNamed(fact) ? names.read(fact, troubles) : Optional.empty();
+    return namedFacts.contains(fact) ? names.read(fact, troubles) : Optional.empty();
   }
 
   private Optional<Batch> batch(List<Trouble> troubles) {
-    if (!mapping.places().isInRow(Fact.BATCH)) {
+    if (!batchInRow) {
       return Optional.of(file.batch());
     }
     return names.read(Fact.BATCH, troubles).map(name -> new Batch(name, true));
