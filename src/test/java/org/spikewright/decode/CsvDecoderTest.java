@@ -5,11 +5,18 @@ import static java.nio.charset.StandardCharsets.UTF_16BE;
 import static java.nio.charset.StandardCharsets.UTF_16LE;
 import static java.nio.charset.StandardCharsets.UTF_8;
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.assertThatThrownBy;
 
+import java.io.IOException;
+import java.io.InputStream;
+import java.io.UncheckedIOException;
 import java.nio.charset.Charset;
+import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.Arrays;
 import java.util.List;
 import java.util.Locale;
+import java.util.Optional;
 import java.util.stream.Stream;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
@@ -140,7 +147,7 @@ class CsvDecoderTest {
       text.append("µ").append(line).append('\n');
     }
     byte[] good = text.toString().getBytes(UTF_8);
-    byte[] content = java.util.Arrays.copyOf(good, good.length + 3);
+    byte[] content = Arrays.copyOf(good, good.length + 3);
     content[good.length] = 'x';
     content[good.length + 1] = (byte) 0xB5;
     content[good.length + 2] = '\n';
@@ -257,10 +264,27 @@ class CsvDecoderTest {
   }
 
   @Test
+  void a_disk_that_fails_while_a_file_is_read_is_no_fault_of_the_file() throws IOException {
+    Path path = Files.writeString(folder.resolve("file"), "a,b\n");
+    InputStream failing =
+        new InputStream() {
+          @Override
+          public int read() throws IOException {
+            throw new IOException("Input/output error");
+          }
+        };
+    try (StrictReader reader =
+        new StrictReader(TextFile.of(path, Optional.empty()), failing, Limits.RECORD_CHARS)) {
+      assertThatThrownBy(reader::read)
+          .isInstanceOf(UncheckedIOException.class)
+          .hasMessageContaining("Input/output error");
+    }
+  }
+
+  @Test
   void another_quote_can_be_declared() {
     TableShape shape =
-        new TableShape(
-            java.util.Optional.of(','), '\'', java.util.Optional.empty(), List.of(), List.of());
+        new TableShape(Optional.of(','), '\'', Optional.empty(), List.of(), List.of());
     assertThat(Decoded.of(folder, "'a,b',\"c\n".getBytes(UTF_8), shape).shown())
         .containsExactly("1: a,b|\"c");
   }
