@@ -1,10 +1,65 @@
 package org.spikewright.app;
 
-/** Entry point. */
-public final class Main {
-  private Main() {}
+import java.io.PrintWriter;
+import picocli.CommandLine;
+import picocli.CommandLine.Command;
+import picocli.CommandLine.Model.CommandSpec;
+import picocli.CommandLine.Spec;
 
+/** The command line. */
+@Command(
+    name = "spikewright",
+    mixinStandardHelpOptions = true,
+    versionProvider = Main.VersionText.class,
+    description =
+        "Reads instrument exports from a watched folder, evaluates standard-addition series and"
+            + " writes a summary workbook every night.",
+    subcommands = {
+      WatchCommand.class,
+      OnceCommand.class,
+      TryCommand.class,
+      ResultsCommand.class,
+      DemoCommand.class
+    },
+    footer = {
+      "",
+      "Exit codes: 0 done, also when input was refused (the summary says so); 1 refused input",
+      "(try, once --strict); 2 configuration; 3 fault; 4 another process owns the ledger."
+    })
+public final class Main implements Runnable {
+  @Spec private CommandSpec spec;
+
+  /** For the command line alone. */
+  public Main() {}
+
+  /** Runs a command and ends the process with its exit code. */
   public static void main(String[] args) {
-    System.out.println("spikewright");
+    int code = run(args);
+    if (code != ExitCode.DONE) {
+      System.exit(code);
+    }
+  }
+
+  /** Runs a command and returns its exit code. */
+  static int run(String... args) {
+    return new CommandLine(new Main())
+        .setExecutionExceptionHandler(
+            (trouble, commandLine, parsed) -> Faults.report(trouble, commandLine.getErr()))
+        .execute(args);
+  }
+
+  /** Without a command: what there is. */
+  @Override
+  public void run() {
+    PrintWriter out = spec.commandLine().getOut();
+    spec.commandLine().usage(out);
+  }
+
+  /** {@code --version}. */
+  static final class VersionText implements CommandLine.IVersionProvider {
+    @Override
+    public String[] getVersion() {
+      return new String[] {"spikewright " + Version.NUMBER};
+    }
   }
 }

@@ -41,11 +41,12 @@ public record Detection(double standardErrorAtZero, double criticalValue, double
    * The limits that belong to a standard error at zero, in its unit.
    *
    * @param standardErrorAtZero 0 or more
-   * @param df its degrees of freedom, 0.5 or more, infinite when the standard error is known
+   * @param df its degrees of freedom, above 0 (the factors have ten digits from 0.5 on), infinite
+   *     when the standard error is known
    * @throws IllegalArgumentException when either is out of range
    */
   public static Detection of(double standardErrorAtZero, double df) {
-    if (!(standardErrorAtZero >= 0 && df >= 0.5)) {
+    if (!(standardErrorAtZero >= 0 && df > 0)) {
       throw new IllegalArgumentException(
           "standard error " + standardErrorAtZero + " with " + df + " df");
     }
@@ -92,7 +93,7 @@ public record Detection(double standardErrorAtZero, double criticalValue, double
    * 31; for the rule Trefethen and Weideman, SIAM Rev. 56 (2014) 385.
    */
   private static final class NoncentralT {
-    private static final int MOST_STEPS = 100_000;
+    private static final int MOST_STEPS = 20_000;
     private final double[] centre;
     private final double[] weight;
 

@@ -9,8 +9,8 @@ import org.apache.commons.math3.special.Beta;
  * may come without bound to its degrees of freedom.
  *
  * <p>Source: Abramowitz and Stegun, Handbook of Mathematical Functions (1964), 26.7.1 and 26.5.27
- * (by the incomplete beta function), 26.7.5 (quantile) and 26.7.8 (distribution) for many degrees
- * of freedom.
+ * (by the incomplete beta function) and 26.7.5 (quantile for many degrees of freedom); Hill,
+ * Commun. ACM 13 (1970) 617 (distribution for many degrees of freedom).
  */
 final class StudentT {
   private static final NormalDistribution NORMAL = new NormalDistribution(null, 0, 1);
@@ -22,11 +22,13 @@ final class StudentT {
 
   /** Probability of a value of {@code t} or less; precise also next to one half. */
   static double cumulative(double t, double df) {
-    if (df > MANY) {
-      return NORMAL.cumulativeProbability(t * (1 - 1 / (4 * df)) / Math.sqrt(1 + t * t / (2 * df)));
-    }
     double square = t * t;
-    if (square < df) {
+    if (df > MANY) {
+      double distance = Math.sqrt((df - 0.5) * Math.log1p(square / df));
+      double z = df < Double.POSITIVE_INFINITY ? Math.copySign(distance, t) : t;
+      return NORMAL.cumulativeProbability(z);
+    }
+    if (square < Math.min(1, df)) {
       double middle = Beta.regularizedBeta(square / (df + square), 0.5, df / 2) / 2;
       return t < 0 ? 0.5 - middle : 0.5 + middle;
     }

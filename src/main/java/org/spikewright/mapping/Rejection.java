@@ -24,7 +24,9 @@ public record Rejection(
     ROLE_UNKNOWN("role not recognised"),
     LABEL_UNREADABLE("label not understood"),
     UNUSABLE_CELL("unusable cell"),
-    ROW_TOO_SHORT("row too short");
+    CONTRADICTION("contradicts another row"),
+    ROW_TOO_SHORT("row too short"),
+    ROW_TOO_LONG("row too long");
 
     private final String words;
 

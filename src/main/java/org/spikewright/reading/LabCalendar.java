@@ -2,8 +2,10 @@ package org.spikewright.reading;
 
 import java.time.Instant;
 import java.time.LocalDate;
+import java.time.LocalDateTime;
 import java.time.LocalTime;
 import java.time.ZoneId;
+import java.time.zone.ZoneOffsetTransition;
 
 /**
  * Lab days run from cut-off to cut-off and bear the date on which they begin.
@@ -21,7 +23,9 @@ public record LabCalendar(ZoneId zone, LocalTime cutOff) {
 
   /** When a lab day begins; a cut-off that a clock change skips begins at the end of the gap. */
   public Instant startOf(LocalDate day) {
-    return day.atTime(cutOff).atZone(zone).toInstant();
+    LocalDateTime local = day.atTime(cutOff);
+    ZoneOffsetTransition change = zone.getRules().getTransition(local);
+    return change != null && change.isGap() ? change.getInstant() : local.atZone(zone).toInstant();
   }
 
   /** When a lab day ends: the instant the next one begins. */

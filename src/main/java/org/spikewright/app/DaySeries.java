@@ -1,0 +1,63 @@
+package org.spikewright.app;
+
+import java.time.LocalDate;
+import java.util.ArrayDeque;
+import java.util.Deque;
+import java.util.Iterator;
+import java.util.List;
+import java.util.NoSuchElementException;
+import org.spikewright.ledger.LedgerView;
+import org.spikewright.reading.Subject;
+import org.spikewright.series.Gathered;
+import org.spikewright.series.Gathering;
+
+/**
+ * The series of one lab day, gathered from the ledger subject by subject, so that no more than one
+ * subject's readings are in memory. Walked again it gives the same, whatever arrived meanwhile.
+ */
+final class DaySeries implements Iterable<Gathered> {
+  private final LedgerView ledger;
+  private final Gathering gathering;
+  private final LocalDate day;
+  private final long upTo;
+  private final List<Subject> subjects;
+
+  /**
+   * The series of a day.
+   *
+   * @param upTo number of the last delivery that counts
+   */
+  DaySeries(LedgerView ledger, Gathering gathering, LocalDate day, long upTo) {
+    this.ledger = ledger;
+    this.gathering = gathering;
+    this.day = day;
+    this.upTo = upTo;
+    this.subjects = ledger.subjects(day, upTo);
+  }
+
+  @Override
+  public Iterator<Gathered> iterator() {
+    Iterator<Subject> next = subjects.iterator();
+    Deque<Gathered> ready = new ArrayDeque<>();
+    return new Iterator<>() {
+      @Override
+      public boolean hasNext() {
+        while (ready.isEmpty() && next.hasNext()) {
+          Subject subject = next.next();
+          gathering.gather(subject, ledger.readings(subject, day, upTo)).stream()
+              .filter(gathered -> gathered.key().labDay().equals(day))
+              .forEach(ready::add);
+        }
+        return !ready.isEmpty();
+      }
+
+      @Override
+      public Gathered next() {
+        if (!hasNext()) {
+          throw new NoSuchElementException();
+        }
+        return ready.remove();
+      }
+    };
+  }
+}

@@ -1,0 +1,63 @@
+package org.spikewright.app;
+
+import java.nio.ByteBuffer;
+import java.nio.charset.StandardCharsets;
+import java.security.MessageDigest;
+import java.security.NoSuchAlgorithmException;
+import java.util.HexFormat;
+import java.util.List;
+import java.util.stream.Stream;
+import org.spikewright.reading.Recorded;
+import org.spikewright.series.AdditionSeries;
+import org.spikewright.series.Gathered;
+import org.spikewright.series.Ungrouped;
+import org.spikewright.table.Position;
+
+/**
+ * Names everything a result was computed from. A recorded reading never changes, so that its
+ * delivery and cell name it.
+ */
+final class InputsHash {
+  private InputsHash() {}
+
+  /**
+   * SHA-256 in hexadecimal.
+   *
+   * @param settingsSha256 of the settings that held
+   */
+  static String of(Gathered gathered, String settingsSha256) {
+    MessageDigest digest = sha256();
+    digest.update(settingsSha256.getBytes(StandardCharsets.UTF_8));
+    readings(gathered).forEach(recorded -> add(digest, recorded));
+    return HexFormat.of().formatHex(digest.digest());
+  }
+
+  private static Stream<Recorded> readings(Gathered gathered) {
+    if (gathered instanceof Ungrouped ungrouped) {
+      return ungrouped.readings().stream();
+    }
+    return ((AdditionSeries) gathered)
+        .flasks().stream()
+            .flatMap(flask -> Stream.of(flask.readings(), flask.secondRun()))
+            .flatMap(List::stream);
+  }
+
+  private static void add(MessageDigest digest, Recorded recorded) {
+    Position position = recorded.reading().position();
+    ByteBuffer numbers = ByteBuffer.allocate(2 * Long.BYTES + Integer.BYTES);
+    numbers.putLong(recorded.arrival()).putLong(position.row()).putInt(position.column());
+    digest.update(numbers.array());
+    position
+        .source()
+        .sheet()
+        .ifPresent(sheet -> digest.update(sheet.getBytes(StandardCharsets.UTF_8)));
+  }
+
+  private static MessageDigest sha256() {
+    try {
+      return MessageDigest.getInstance("SHA-256");
+    } catch (NoSuchAlgorithmException everyPlatformHasIt) {
+      throw new IllegalStateException(everyPlatformHasIt);
+    }
+  }
+}

@@ -1,0 +1,230 @@
+package org.spikewright.app;
+
+import java.io.IOException;
+import java.time.Instant;
+import java.time.LocalDate;
+import java.util.ArrayList;
+import java.util.List;
+import java.util.Optional;
+import java.util.function.Predicate;
+import java.util.stream.Collectors;
+import org.slf4j.Logger;
+import org.slf4j.LoggerFactory;
+import org.spikewright.decode.FileDecoder;
+import org.spikewright.intake.FileDigest;
+import org.spikewright.intake.Fingerprint;
+import org.spikewright.intake.Sighting;
+import org.spikewright.ledger.Arrived;
+import org.spikewright.ledger.Arriving;
+import org.spikewright.ledger.Delivery;
+import org.spikewright.mapping.MappedFile;
+import org.spikewright.mapping.MappedSink;
+import org.spikewright.mapping.Mapping;
+import org.spikewright.mapping.Rejection;
+import org.spikewright.mapping.RowMapper;
+import org.spikewright.mapping.Tally;
+import org.spikewright.reading.Reading;
+import org.spikewright.reading.Subject;
+import org.spikewright.table.DecodeFault;
+
+/** Takes one settled file in: known already, refused, or read in one transaction. */
+final class Reception {
+  private static final Logger LOG = LoggerFactory.getLogger(Reception.class);
+
+  /** How many samples without additions a text names. */
+  private static final int NAMED = 20;
+
+  /** What became of a file. */
+  sealed interface Received {
+    /** It is in the ledger, read or refused, and is to be filed away. */
+    record Recorded(Arrived arrived) implements Received {}
+
+    /** It stays where it is and is looked at again. */
+    record Waits(String why) implements Received {}
+
+    /** It is in the ledger already and stays where it is. */
+    record Kept() implements Received {}
+
+    /** It was let go because the program stops, or because it changed; nothing happened. */
+    record LetGo() implements Received {}
+  }
+
+  private final Station station;
+  private final Stop stop;
+  private final Progress progress;
+
+  Reception(Station station, Stop stop, Progress progress) {
+    this.station = station;
+    this.stop = stop;
+    this.progress = progress;
+  }
+
+  Received receive(Sighting file) throws IOException {
+    Instant now = station.clock().instant();
+    LocalDate day = station.settings().calendar().dayOf(now);
+    String sha256 = FileDigest.of(file.path());
+    if (isAwaitingFiling(file, sha256)) {
+      return new Received.Kept();
+    }
+    Optional<Long> known = station.ledger().known(sha256);
+    if (known.isPresent() && station.settings().leave()) {
+      return new Received.Kept();
+    }
+    if (known.isPresent()) {
+      Arriving again = arriving(file, sha256, now, Optional.empty());
+      return recorded(station.ledger().again(again, known.get(), doneName(day, file)));
+    }
+    LOG.info("arrived file={} bytes={}", file.name(), file.size());
+    List<Mapping> claimants =
+        station.mappings().good().stream().filter(m -> m.claims(file.name())).toList();
+    if (claimants.isEmpty() && !station.faultyMappings().isEmpty()) {
+      return new Received.Waits(
+          "no mapping claims it, and a mapping that may do so is faulty: "
+              + station.faultyMappings().get(0));
+    }
+    if (claimants.size() != 1) {
+      Refusal refusal =
+          claimants.isEmpty()
+              ? Refusal.unclaimed(station.mappings().good())
+              : Refusal.claimedByMany(claimants);
+      return refuse(file, arriving(file, sha256, now, Optional.empty()), refusal);
+    }
+    return read(file, arriving(file, sha256, now, Optional.of(claimants.get(0))), claimants.get(0));
+  }
+
+  /** Whether it was recorded before and only could not be moved yet. */
+  private boolean isAwaitingFiling(Sighting file, String sha256) {
+    return station.ledger().unfiled().stream()
+        .anyMatch(a -> a.name().equals(file.name()) && a.sha256().equals(sha256));
+  }
+
+  private Received read(Sighting file, Arriving arriving, Mapping mapping) throws IOException {
+    Optional<Refusal> refusal;
+    try (Delivery delivery = station.ledger().receive(arriving)) {
+      FirstRejections sink = new FirstRejections(delivery);
+      RowMapper mapper = mapping.open(file.name(), sink);
+      Optional<DecodeFault> fault =
+          FileDecoder.read(
+              file.path(),
+              file.name(),
+              mapping.shape(),
+              row -> {
+                progress.at("reading " + file.name() + ", row", row.number());
+                return mapper.accept(row) && !stop.isRequested();
+              });
+      if (stop.isRequested() || changed(file, arriving.sha256())) {
+        return new Received.LetGo();
+      }
+      MappedFile mapped = mapper.finish();
+      if (fault.isEmpty() && mapped instanceof MappedFile.Mapped done) {
+        return recorded(record(delivery, done.tally(), sink, file, arriving));
+      }
+      refusal =
+          fault.map(Refusal::of).or(() -> Optional.of(Refusal.of((MappedFile.Unmappable) mapped)));
+    }
+    return refuse(file, arriving, refusal.orElseThrow());
+  }
+
+  private Arrived record(
+      Delivery delivery, Tally tally, FirstRejections sink, Sighting file, Arriving arriving)
+      throws IOException {
+    if (tally.readings() == 0) {
+      Refusal refusal = Refusal.withoutReadings(tally, sink.first);
+      return delivery.refuse(tally, refusal.words(), rejectedName(file));
+    }
+    String note = withoutAdditions(delivery.withoutAdditions());
+    return delivery.commit(tally, note, doneName(arriving.labDay(), file));
+  }
+
+  private static String withoutAdditions(List<Subject> subjects) {
+    if (subjects.isEmpty()) {
+      return "";
+    }
+    String names =
+        subjects.stream()
+            .limit(NAMED)
+            .map(subject -> subject.sample() + " " + subject.analyte())
+            .collect(Collectors.joining(", "));
+    return "No flask with an addition so far: "
+        + names
+        + (subjects.size() > NAMED ? " and " + (subjects.size() - NAMED) + " more" : "")
+        + ". Deliver the flasks with additions; until then there is no result.";
+  }
+
+  private Received refuse(Sighting file, Arriving arriving, Refusal refusal) throws IOException {
+    return recorded(station.ledger().refuse(arriving, refusal.words(), rejectedName(file)));
+  }
+
+  private static Received recorded(Arrived arrived) {
+    switch (arrived.outcome()) {
+      case READ ->
+          LOG.info(
+              "read file={} readings={} refused_rows={} skipped={} known={}",
+              arrived.name(),
+              arrived.tally().readings(),
+              arrived.tally().rejections(),
+              arrived.tally().skipped(),
+              arrived.repeated());
+      case REFUSED -> LOG.info("refused file={} reason=\"{}\"", arrived.name(), oneLine(arrived));
+      case KNOWN -> LOG.info("known file={} note=\"{}\"", arrived.name(), arrived.reason());
+    }
+    return new Received.Recorded(arrived);
+  }
+
+  private static String oneLine(Arrived arrived) {
+    return arrived.reason().replace('\n', ' ');
+  }
+
+  /** Whether what was decoded may not be what was digested. */
+  private static boolean changed(Sighting file, String sha256) throws IOException {
+    return !Fingerprint.of(file.path()).equals(Optional.of(file.fingerprint()))
+        || !FileDigest.of(file.path()).equals(sha256);
+  }
+
+  private Arriving arriving(Sighting file, String sha256, Instant now, Optional<Mapping> mapping) {
+    return new Arriving(
+        file.name(),
+        file.size(),
+        sha256,
+        now,
+        station.settings().calendar().dayOf(now),
+        mapping.map(Mapping::name).orElse(""),
+        mapping.map(Mapping::sha256).orElse(""),
+        mapping.map(Mapping::text).orElse(""));
+  }
+
+  private String doneName(LocalDate day, Sighting file) throws IOException {
+    return station.archive().doneName(day, file.name(), promised());
+  }
+
+  private String rejectedName(Sighting file) throws IOException {
+    return station.archive().rejectedName(file.name(), promised());
+  }
+
+  private Predicate<String> promised() {
+    return station.ledger()::archiveNameTaken;
+  }
+
+  /** Passes everything on and keeps the first refused row for the words of a refusal. */
+  private static final class FirstRejections implements MappedSink {
+    private final MappedSink next;
+    private final List<Rejection> first = new ArrayList<>();
+
+    FirstRejections(MappedSink next) {
+      this.next = next;
+    }
+
+    @Override
+    public void reading(Reading reading) {
+      next.reading(reading);
+    }
+
+    @Override
+    public void rejection(Rejection rejection) {
+      if (first.isEmpty()) {
+        first.add(rejection);
+      }
+      next.rejection(rejection);
+    }
+  }
+}

@@ -1,0 +1,28 @@
+package org.spikewright.app;
+
+import java.util.HashMap;
+import java.util.Map;
+import org.slf4j.Logger;
+
+/** Troubles that last: each is said once when it begins or changes, and once when it is over. */
+final class Standing {
+  private final Logger log;
+  private final Map<String, String> troubles = new HashMap<>();
+
+  Standing(Logger log) {
+    this.log = log;
+  }
+
+  void trouble(String key, String text) {
+    if (!text.equals(troubles.put(key, text))) {
+      log.warn("{}", text);
+    }
+  }
+
+  void over(String key) {
+    String text = troubles.remove(key);
+    if (text != null) {
+      log.warn("over: {}", text);
+    }
+  }
+}

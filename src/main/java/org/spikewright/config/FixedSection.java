@@ -1,0 +1,112 @@
+package org.spikewright.config;
+
+import java.util.EnumMap;
+import java.util.HashMap;
+import java.util.Map;
+import java.util.Optional;
+import java.util.function.BiFunction;
+import org.spikewright.mapping.AmountReader;
+import org.spikewright.mapping.DilutionReader;
+import org.spikewright.mapping.Fact;
+import org.spikewright.mapping.Fact.Kind;
+import org.spikewright.mapping.Notation;
+import org.spikewright.mapping.PerAnalyte;
+import org.spikewright.mapping.Understood;
+import org.spikewright.quantity.Measured;
+import org.spikewright.quantity.NumberGrammar;
+import org.spikewright.quantity.Quantity;
+import org.spikewright.quantity.Unit;
+import org.tomlj.TomlTable;
+
+/** Reads the facts in {@code [fixed]}, and whatever else is given once or for each analyte. */
+final class FixedSection {
+  private final Section section;
+  private final Notation notation;
+  private final Named named;
+
+  FixedSection(Section section, Notation notation, Named named) {
+    this.section = section;
+    // In a mapping numbers have a decimal point, whatever the export uses.
+    this.notation = notation.with(NumberGrammar.POINT);
+    this.named = named;
+  }
+
+  Map<Fact, String> names() {
+    Map<Fact, String> names = new EnumMap<>(Fact.class);
+    for (Fact fact : MappingKeys.fixable()) {
+      if (fact.kind() == Kind.NAME && section.has(fact.word())) {
+        named.add(fact, section.at(fact.word()));
+        section
+            .text(fact.word(), fact.expectation())
+            .ifPresent(text -> names.put(fact, text.strip()));
+      }
+    }
+    return names;
+  }
+
+  Map<Fact, PerAnalyte<Measured>> amounts() {
+    Map<Fact, PerAnalyte<Measured>> amounts = new EnumMap<>(Fact.class);
+    for (Fact fact : MappingKeys.fixable()) {
+      if (fact.kind() != Kind.NAME && section.has(fact.word())) {
+        named.add(fact, section.at(fact.word()));
+        amounts.put(
+            fact, perAnalyte(section, fact.word(), (where, key) -> amount(where, key, fact)));
+      }
+    }
+    return amounts;
+  }
+
+  /** Something given once, or in a table with a key for each analyte. */
+  static <T> PerAnalyte<T> perAnalyte(
+      Section section, String key, BiFunction<Section, String, Optional<T>> reader) {
+    if (!(section.value(key).orElse(null) instanceof TomlTable)) {
+      return new PerAnalyte<>(reader.apply(section, key), Map.of());
+    }
+    Section analytes = section.openSection(key).orElseThrow();
+    if (analytes.keys().isEmpty()) {
+      section.fault(key, "an empty table for " + section.named(key), "a key for each analyte");
+    }
+    Map<String, T> each = new HashMap<>();
+    for (String analyte : analytes.keys()) {
+      reader.apply(analytes, analyte).ifPresent(value -> each.put(analyte.strip(), value));
+    }
+    return new PerAnalyte<>(Optional.empty(), each);
+  }
+
+  private Optional<Measured> amount(Section where, String key, Fact fact) {
+    Optional<Understood<Measured>> read = read(where, key, fact);
+    if (read.isEmpty()) {
+      return Optional.empty();
+    }
+    if (read.get() instanceof Understood.Nothing<Measured> nothing) {
+      where.fault(key, "'" + nothing.found() + "' for " + where.named(key), nothing.expected());
+      return Optional.empty();
+    }
+    Measured value = ((Understood.Value<Measured>) read.get()).value();
+    Optional<String> analyte = where == section ? Optional.empty() : Optional.of(key);
+    named.unit(fact, new Named.Known(value.quantity().unit(), where.at(key), analyte));
+    return Optional.of(value);
+  }
+
+  private Optional<Understood<Measured>> read(Section where, String key, Fact fact) {
+    String expected =
+        "a text with " + (fact.kind() == Kind.DILUTION ? "a dilution" : fact.expectation());
+    boolean pure = fact.fits(Unit.ONE.dimension());
+    Optional<String> text =
+        pure && where.value(key).orElse(null) instanceof Number number
+            ? Optional.of(plain(number))
+            : where.text(key, expected);
+    Optional<Unit> unit = pure ? Optional.of(Unit.ONE) : Optional.empty();
+    return text.map(
+        words ->
+            fact.kind() == Kind.DILUTION
+                ? new DilutionReader(notation).read(words)
+                : new AmountReader(notation).read(fact, words, unit));
+  }
+
+  private static String plain(Number number) {
+    return Double.isFinite(number.doubleValue())
+        ? new Quantity(number.doubleValue(), Unit.ONE).toString()
+        : number.toString();
+  }
+}

@@ -1,0 +1,105 @@
+package org.spikewright.config;
+
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.List;
+import java.util.Map;
+import org.spikewright.mapping.Fact;
+import org.spikewright.mapping.Fact.Kind;
+import org.spikewright.reading.Role;
+
+/** The keys that a mapping may have, section by section. */
+final class MappingKeys {
+  private MappingKeys() {}
+
+  /** Facts that hold for one row only and cannot be fixed; the instrument has a key of its own. */
+  private static final List<Fact> NEVER_FIXED =
+      List.of(Fact.SIGNAL, Fact.MEASURED_AT, Fact.FLASK, Fact.INSTRUMENT, Fact.RESULT_UNIT);
+
+  static final List<String> METHOD_IN_FIXED =
+      List.of("design", "additions", "addition_terms", "flasks", "role");
+
+  /** By section; the file itself is the section with the empty name. */
+  static final Map<String, List<String>> KEYS =
+      Map.ofEntries(
+          Map.entry(
+              "",
+              List.of(
+                  "name",
+                  "instrument",
+                  "files",
+                  "table",
+                  "columns",
+                  "fixed",
+                  "label",
+                  "file",
+                  "words",
+                  "skip",
+                  "roles",
+                  "units",
+                  "result",
+                  "method")),
+          Map.entry(
+              "table",
+              List.of(
+                  "separator",
+                  "decimal",
+                  "thousands",
+                  "quote",
+                  "encoding",
+                  "header",
+                  "sheet",
+                  "extra_cells")),
+          Map.entry("columns", words(Arrays.asList(Fact.values()))),
+          Map.entry("fixed", fixed()),
+          Map.entry("label", and(List.of("column", "pattern"), words(inText()))),
+          Map.entry("file", and(List.of("pattern"), words(inText()))),
+          Map.entry("words", List.of("over_range", "below_range", "missing")),
+          Map.entry("roles", roles()),
+          Map.entry("units", List.of("ppm", "ppb", "ppt", "ratio")),
+          Map.entry("result", List.of("unit")),
+          Map.entry(
+              "method",
+              List.of("trusted_signal", "reporting_limit", "target_uncertainty", "unit")));
+
+  /** The facts that {@code [fixed]} may hold. */
+  static List<Fact> fixable() {
+    return Arrays.stream(Fact.values()).filter(fact -> !NEVER_FIXED.contains(fact)).toList();
+  }
+
+  /** The facts that a label or a file name may hold. */
+  static List<Fact> inText() {
+    return Arrays.stream(Fact.values()).filter(fact -> fact != Fact.SIGNAL).toList();
+  }
+
+  /** The keys of a column or a group, by what the fact is. */
+  static List<String> placeKeys(Fact fact, String place) {
+    if (fact.kind() == Kind.AMOUNT) {
+      return List.of(place, "unit");
+    }
+    return fact.kind() == Kind.TIME ? List.of(place, "format", "zone") : List.of(place);
+  }
+
+  /** The key of a role under {@code [roles]}. */
+  static String key(Role role) {
+    return role.word().replace(' ', '_');
+  }
+
+  private static List<String> roles() {
+    return and(List.of("column"), Arrays.stream(Role.values()).map(MappingKeys::key).toList());
+  }
+
+  private static List<String> fixed() {
+    return and(METHOD_IN_FIXED, words(fixable()));
+  }
+
+  private static List<String> words(List<Fact> facts) {
+    return facts.stream().map(Fact::word).toList();
+  }
+
+  private static List<String> and(List<String> some, List<String> more) {
+    List<String> all = new ArrayList<>(some);
+    all.addAll(more);
+    return List.copyOf(all);
+  }
+}

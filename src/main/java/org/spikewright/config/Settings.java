@@ -1,0 +1,58 @@
+package org.spikewright.config;
+
+import java.nio.file.Path;
+import java.time.Duration;
+import java.time.LocalTime;
+import org.spikewright.judgement.Criteria;
+import org.spikewright.reading.LabCalendar;
+
+/**
+ * The configuration of one laboratory.
+ *
+ * @param watch the watched folder; absolute, like every path here
+ * @param mappings the folder of mappings
+ * @param summaries the folder that summaries are written to; outside {@code watch}
+ * @param ledger the ledger's file; outside {@code watch}
+ * @param leave whether files are left where they are, for shares that are only read
+ * @param laboratory the laboratory's name, as it heads the workbook; may be empty
+ * @param calendar the lab day
+ * @param nightly local time at which summaries are made
+ * @param lookEvery time between two looks into the watched folder
+ * @param settle how long a file must hold still before it is read
+ * @param longestPause longest pause between readings of one series
+ * @param waitForFlasks how long a series short of its flasks is waited for
+ * @param criteria the limits of judgement
+ * @param sha256 of the file's bytes, in hexadecimal
+ * @param text the file's text
+ */
+public record Settings(
+    Path watch,
+    Path mappings,
+    Path summaries,
+    Path ledger,
+    boolean leave,
+    String laboratory,
+    LabCalendar calendar,
+    LocalTime nightly,
+    Duration lookEvery,
+    Duration settle,
+    Duration longestPause,
+    Duration waitForFlasks,
+    Criteria criteria,
+    String sha256,
+    String text) {
+
+  /** Reads a configuration file. */
+  public static Loaded<Settings> load(Path file) {
+    return SettingsFile.load(file);
+  }
+
+  /**
+   * Reads a configuration's text.
+   *
+   * @param file where it stands or would stand; paths are relative to its folder
+   */
+  public static Loaded<Settings> read(Path file, String text) {
+    return SettingsFile.read(file, text);
+  }
+}

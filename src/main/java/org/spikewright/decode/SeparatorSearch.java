@@ -1,0 +1,121 @@
+package org.spikewright.decode;
+
+import java.io.IOException;
+import java.util.ArrayList;
+import java.util.HashSet;
+import java.util.List;
+import java.util.Optional;
+import java.util.Set;
+import java.util.stream.Collectors;
+import org.apache.commons.csv.CSVRecord;
+
+/** Works out a text file's separator: the one under which one row holds all header words. */
+final class SeparatorSearch {
+  private static final List<Character> CANDIDATES = List.of(';', '\t', ',', '|');
+
+  private final List<String> words;
+
+  private SeparatorSearch(List<String> words) {
+    this.words = words.stream().map(String::strip).distinct().toList();
+  }
+
+  /**
+   * The separator.
+   *
+   * @throws Unreadable when none or more than one fits
+   */
+  static char in(TextFile file, char quote, List<String> headerWords) throws IOException {
+    SeparatorSearch search = new SeparatorSearch(headerWords);
+    if (search.words.isEmpty()) {
+      throw new Unreadable(
+          "the file",
+          "no separator declared, and no header by which to work it out",
+          "a declared separator",
+          "declare the separator in the mapping");
+    }
+    List<Trial> trials = new ArrayList<>();
+    for (char candidate : CANDIDATES) {
+      if (candidate != quote) {
+        trials.add(search.tried(file, candidate, quote));
+      }
+    }
+    List<Trial> fitting = trials.stream().filter(Trial::fits).toList();
+    if (fitting.size() == 1) {
+      return fitting.get(0).separator();
+    }
+    throw fitting.isEmpty() ? noneFits(trials) : severalFit(fitting);
+  }
+
+  private Trial tried(TextFile file, char separator, char quote) throws IOException {
+    Trial best = new Trial(separator, 0, words, Optional.empty());
+    try (CsvRecords records = new CsvRecords(file, separator, quote)) {
+      for (int row = 0; row < Limits.HEADER_ROWS && !best.fits() && records.hasNext(); row++) {
+        List<String> missing = missingFrom(records.next());
+        if (missing.size() < best.missing().size()) {
+          best = new Trial(separator, records.line(), missing, Optional.empty());
+        }
+      }
+      return best;
+    } catch (Unreadable e) {
+      return new Trial(separator, best.line(), best.missing(), Optional.of(e));
+    }
+  }
+
+  private List<String> missingFrom(CSVRecord csv) {
+    Set<String> fields = new HashSet<>();
+    for (String field : csv) {
+      fields.add(field.strip());
+    }
+    return words.stream().filter(word -> !fields.contains(word)).toList();
+  }
+
+  private static Unreadable noneFits(List<Trial> trials) {
+    if (trials.stream().allMatch(trial -> trial.stopped().isPresent())) {
+      return trials.get(0).stopped().get();
+    }
+    return new Unreadable(
+        "the file",
+        "no row that holds all mapped headers, with none of the separators "
+            + trials.stream().map(Trial::account).collect(Collectors.joining("; ")),
+        "one row among the first " + Limits.HEADER_ROWS + " that holds every mapped header",
+        "compare the headers in the mapping with the file, or declare the separator");
+  }
+
+  private static Unreadable severalFit(List<Trial> fitting) {
+    return new Unreadable(
+        "the file",
+        "a header under more than one separator: "
+            + fitting.stream()
+                .map(trial -> named(trial.separator()) + " (line " + trial.line() + ")")
+                .collect(Collectors.joining(", ")),
+        "one separator that fits",
+        "declare the separator in the mapping");
+  }
+
+  private static String named(char separator) {
+    return separator == '\t' ? "TAB" : String.valueOf(separator);
+  }
+
+  /**
+   * What came of one candidate.
+   *
+   * @param line of the row that holds most of the words; 0 for none
+   * @param missing the words that this row does not hold
+   * @param stopped the fault that ended the search
+   */
+  private record Trial(
+      char separator, long line, List<String> missing, Optional<Unreadable> stopped) {
+
+    boolean fits() {
+      return missing.isEmpty();
+    }
+
+    String account() {
+      if (line == 0) {
+        return named(separator) + " (no header found)";
+      }
+      String words = missing.stream().map(Shown::quoted).collect(Collectors.joining(", "));
+      return named(separator) + " (line " + line + " lacks " + words + ")";
+    }
+  }
+}

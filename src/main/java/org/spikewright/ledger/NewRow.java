@@ -1,0 +1,89 @@
+package org.spikewright.ledger;
+
+import java.sql.PreparedStatement;
+import java.sql.SQLException;
+import java.sql.Types;
+import java.util.Comparator;
+import org.spikewright.reading.Signal;
+
+/**
+ * A reading as numbers, on its way into the ledger.
+ *
+ * @param subject whose signal
+ * @param at milliseconds; 0 when untimed
+ * @param batch 0 when timed
+ * @param delimitedBy the timed batch that delimits its series; 0 when none does
+ */
+record NewRow(
+    long subject,
+    long at,
+    long batch,
+    long preparation,
+    long flask,
+    long replicate,
+    Signal signal,
+    long facts,
+    long origin,
+    long line,
+    long delimitedBy) {
+
+  /** The order of the primary key: rows that lie together are written together. */
+  static final Comparator<NewRow> KEY_ORDER =
+      Comparator.comparingLong(NewRow::subject)
+          .thenComparingLong(NewRow::at)
+          .thenComparingLong(NewRow::batch)
+          .thenComparingLong(NewRow::preparation)
+          .thenComparingLong(NewRow::flask)
+          .thenComparingLong(NewRow::replicate);
+
+  static final String INSERT =
+      "INSERT INTO reading (subject, read_at, batch, preparation, flask, replicate, nth,"
+          + " signal, state, text, facts, origin, line_no)"
+          + " VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?) ON CONFLICT DO NOTHING";
+
+  boolean timed() {
+    return batch == Ids.NONE;
+  }
+
+  void bind(PreparedStatement insert, int nth) throws SQLException {
+    insert.setLong(1, subject);
+    insert.setLong(2, at);
+    insert.setLong(3, batch);
+    insert.setLong(4, preparation);
+    insert.setLong(5, flask);
+    insert.setLong(6, replicate);
+    insert.setInt(7, nth);
+    if (signal instanceof Signal.Value number) {
+      insert.setDouble(8, number.value());
+    } else {
+      insert.setNull(8, Types.DOUBLE);
+    }
+    insert.setInt(9, state(signal));
+    insert.setString(10, StoredText.encode(signal.text()));
+    insert.setLong(11, facts);
+    insert.setLong(12, origin);
+    insert.setLong(13, line);
+  }
+
+  /** 0 for a number. */
+  static int state(Signal signal) {
+    if (signal instanceof Signal.NoNumber word) {
+      return switch (word.state()) {
+        case OVER_RANGE -> 1;
+        case BELOW_RANGE -> 2;
+        case MISSING -> 3;
+      };
+    }
+    return 0;
+  }
+
+  static Signal signal(int state, double value, String text) {
+    return switch (state) {
+      case 0 -> new Signal.Value(value, text);
+      case 1 -> new Signal.NoNumber(Signal.State.OVER_RANGE, text);
+      case 2 -> new Signal.NoNumber(Signal.State.BELOW_RANGE, text);
+      case 3 -> new Signal.NoNumber(Signal.State.MISSING, text);
+      default -> throw new IllegalStateException("no signal state " + state);
+    };
+  }
+}

@@ -1,0 +1,62 @@
+package org.spikewright.mapping;
+
+import java.text.Normalizer;
+import java.util.ArrayList;
+import java.util.Collection;
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import org.spikewright.table.Row;
+
+/**
+ * A header: which column bears which name.
+ *
+ * @param row where it stands
+ * @param columns index from 0 by folded name; the first one where a name stands twice
+ * @param names the names as they stand, without blanks
+ * @param repeated folded names that stand more than once
+ * @param width columns up to the last name
+ */
+record Header(
+    Row row, Map<String, Integer> columns, List<String> names, List<String> repeated, int width) {
+
+  /** Reads a row as a header. */
+  static Header of(Row row) {
+    Map<String, Integer> columns = new HashMap<>();
+    List<String> names = new ArrayList<>();
+    List<String> repeated = new ArrayList<>();
+    int width = 0;
+    for (int i = 0; i < row.cells().size(); i++) {
+      String name = fold(row.cell(i).shown());
+      if (!name.isEmpty()) {
+        names.add(name);
+        width = i + 1;
+        if (columns.putIfAbsent(name, i) != null) {
+          repeated.add(name);
+        }
+      }
+    }
+    return new Header(row, columns, names, repeated, width);
+  }
+
+  /** Blanks around a name, runs of blanks or line ends in it, and its Unicode form do not count. */
+  static String fold(String name) {
+    return Normalizer.normalize(name.strip().replaceAll("\\s+", " "), Normalizer.Form.NFC);
+  }
+
+  /** The column with a name, counted from 0. */
+  Optional<Integer> find(String name) {
+    return Optional.ofNullable(columns.get(fold(name)));
+  }
+
+  /** Those of the names that have no column. */
+  List<String> missing(Collection<String> needed) {
+    return needed.stream().filter(name -> !columns.containsKey(fold(name))).toList();
+  }
+
+  /** Those of the names that have more than one. */
+  List<String> doubled(Collection<String> needed) {
+    return needed.stream().filter(name -> repeated.contains(fold(name))).toList();
+  }
+}

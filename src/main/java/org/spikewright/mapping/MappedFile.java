@@ -1,0 +1,19 @@
+package org.spikewright.mapping;
+
+/** What came of a whole file. */
+public sealed interface MappedFile {
+
+  /** Its rows were mapped. */
+  record Mapped(Tally tally) implements MappedFile {}
+
+  /**
+   * The mapping does not fit the file; nothing of it is to be used.
+   *
+   * @param place {@code line 12}, {@code sheet Data, row 3}, or {@code the file}
+   * @param found what stood there
+   * @param expected what should have stood there
+   * @param advice what can be done
+   */
+  record Unmappable(String place, String found, String expected, String advice)
+      implements MappedFile {}
+}

@@ -1,0 +1,240 @@
+package org.spikewright.config;
+
+import static org.assertj.core.api.Assertions.assertThat;
+
+import java.io.IOException;
+import java.nio.file.Files;
+import java.nio.file.Path;
+import java.time.ZoneId;
+import java.util.List;
+import java.util.Optional;
+import org.junit.jupiter.api.Test;
+import org.junit.jupiter.api.io.TempDir;
+import org.spikewright.mapping.Mapping;
+import org.spikewright.mapping.Tally;
+import org.spikewright.mapping.Trial;
+import org.spikewright.reading.Reading;
+import org.spikewright.reading.Role;
+import org.spikewright.table.Cell;
+import org.spikewright.table.Row;
+import org.spikewright.table.Source;
+
+/** The mappings that are shipped, each with a few rows of the export it is made for. */
+class ExamplesTest {
+  private static final Path MAPPINGS = Path.of("mappings");
+  private static final ZoneId LISBON = ZoneId.of("Europe/Lisbon");
+
+  private static Mapping mapping(String file) {
+    Loaded<Mapping> loaded = MappingFile.load(MAPPINGS.resolve(file), LISBON);
+    assertThat(loaded).as(loaded.toString()).isInstanceOf(Loaded.Good.class);
+    return ((Loaded.Good<Mapping>) loaded).value();
+  }
+
+  @Test
+  void allLoad() {
+    MappingFolder folder = MappingFolder.load(MAPPINGS, LISBON);
+    assertThat(folder.faults()).isEmpty();
+    assertThat(folder.good()).hasSize(6);
+  }
+
+  @Test
+  void theReferenceNamesEveryKey() throws IOException {
+    String text = Files.readString(MAPPINGS.resolve("reference-all-keys.toml"));
+    MappingKeys.KEYS.forEach(
+        (section, keys) -> {
+          if (!section.equals("label") && !section.equals("file") && !section.equals("fixed")) {
+            for (String key : keys) {
+              assertThat(text).as(section).containsPattern("(?m)^(#: )?\\[?" + key + "( *=|\\])");
+            }
+          }
+        });
+    for (String key : MappingKeys.METHOD_IN_FIXED) {
+      assertThat(text).containsPattern("(?m)^(#: )?" + key + " *=");
+    }
+  }
+
+  @Test
+  void theReferenceReadsAnExport() {
+    Mapping mapping = mapping("reference-all-keys.toml");
+    assertThat(mapping.claims("flame/a.csv")).isTrue();
+    assertThat(mapping.claims("Flame/B7/x/a.TXT")).isTrue();
+    assertThat(mapping.claims("furnace/a.csv")).isFalse();
+    Trial trial =
+        Trial.text(
+            mapping,
+            "flame/B7/run1.txt",
+            ";",
+            "Flame export;;",
+            "Sample label;Element;Peak area;Line;Position;Rep;Date;Time;Run;Spike;Aliquot;Filled to;"
+                + "Stock;Dilution;Prep;Remark;Type",
+            "W-1;Cd;0,12;228.8;1;1;15.01.2025;18:30:00;R1;;;;;;;;Unk 1",
+            "W-1;Cd;1.000,5;228.8;2;1;15.01.2025;18:31:00;R1;50;10;50;5;1 + 9;acid;;Unk 1",
+            "W-1;Cd;>9;228.8;3;1;15.01.2025;18:32:00;R1;;;;;1:10;acid;;QC",
+            "W-1;Cd;0,1;228.8;3;1;15.01.2025;18:32:00;R1;;;;;;;rinse 1;Unk",
+            "STD-1;Cd;0,1;228.8;3;1;15.01.2025;18:32:00;R1;;;;;;;;Std 1",
+            "W-1 + 2,5 mL;Pb;0,1;283.3;4;1;15.01.2025;18:33:00;R1;;;;;;;;S");
+    assertThat(trial.tally()).isEqualTo(new Tally(6, 4, 0, 2));
+    Reading first = trial.readings.get(0);
+    assertThat(first.facts().addition().amount()).hasToString("0 µL");
+    assertThat(first.facts().aliquot().get()).hasToString("20 mL ± 0.03 mL");
+    assertThat(first.measuredAt().get()).hasToString("2025-01-15T18:30:00Z");
+    assertThat(first.batch().delimits()).isTrue();
+    Reading second = trial.readings.get(1);
+    assertThat(second.facts().preparation().dilution()).isEqualTo(10);
+    assertThat(second.facts().addition().toString()).contains("50 µL", "5 mg/L");
+    assertThat(trial.readings.get(2).facts().role()).isEqualTo(Role.CONTROL);
+    Reading lead = trial.readings.get(3);
+    assertThat(lead.facts().addition().amount()).hasToString("2.5 mL");
+    assertThat(lead.facts().method().reportingLimit()).hasValue(0.002);
+  }
+
+  @Test
+  void longCsv() {
+    Trial trial =
+        Trial.text(
+            mapping("long-csv.toml"),
+            "furnace/night.csv",
+            ",",
+            "sample,analyte,aliquot_mL,stock_mgL,added_mL,final_mL,replicate,signal,measured_at",
+            "S000001,A01,10,8.07,0,50,1,123.4,2025-01-15T18:00:00",
+            "S000001,A01,10,8.07,1,50,1,OVER,2025-01-15T18:00:20",
+            "S000001,A01,10,8.07,2,50,1,,2025-01-15T18:00:40",
+            "S000001,A01,10,8.07,3,50,1,NaN,2025-01-15T18:01:00");
+    assertThat(trial.tally()).isEqualTo(new Tally(4, 3, 1, 0));
+    assertThat(trial.readings.get(0).replicateMapped()).isTrue();
+  }
+
+  @Test
+  void longXlsx() {
+    Source source = new Source("plasma/a.xlsx", Optional.of("Readings"));
+    Cell time = new Cell.Moment(java.time.LocalDateTime.parse("2025-01-15T18:30"), "45672.77");
+    List<Cell> header =
+        cells(
+            "Sample name",
+            "Type",
+            "Element",
+            "Wavelength (nm)",
+            "Tube",
+            "Intensity",
+            "Acquired",
+            "Spike (µL)",
+            "Dilution");
+    Trial trial =
+        Trial.rows(
+            mapping("long-xlsx.toml"),
+            "plasma/a.xlsx",
+            List.of(
+                new Row(source, 1, cells("Export")),
+                new Row(source, 3, header),
+                new Row(
+                    source,
+                    4,
+                    List.of(
+                        new Cell.Text("W-1"),
+                        new Cell.Text("Unknown"),
+                        new Cell.Text("Cd"),
+                        new Cell.Number(228.8, "228.8"),
+                        new Cell.Number(1, "1"),
+                        new Cell.Number(1234.5, "1234.5"),
+                        time,
+                        new Cell.Number(0, "0"),
+                        new Cell.Number(10, "10"))),
+                new Row(source, 5, List.of(new Cell.Text("S1"), new Cell.Text("Std 1"))),
+                new Row(
+                    source,
+                    6,
+                    List.of(
+                        new Cell.Text("W-1"),
+                        new Cell.Text("Unknown"),
+                        new Cell.Text("As"),
+                        new Cell.Number(228.8, "228.8"),
+                        new Cell.Number(1, "1"),
+                        new Cell.Number(1, "1"),
+                        time,
+                        new Cell.Number(0, "0")))));
+    assertThat(trial.tally()).isEqualTo(new Tally(3, 1, 1, 1));
+    assertThat(trial.readings.get(0).facts().preparation().dilution()).isEqualTo(10);
+    assertThat(trial.readings.get(0).flask()).isEqualTo("1");
+    assertThat(trial.rejections.get(0).found()).contains("[fixed]");
+    assertThat(trial.rejections.get(0).expected()).contains("for As");
+  }
+
+  private static List<Cell> cells(String... texts) {
+    return java.util.Arrays.stream(texts).<Cell>map(Cell.Text::new).toList();
+  }
+
+  @Test
+  void growingVolume() {
+    Trial trial =
+        Trial.text(
+            mapping("growing-volume.toml"),
+            "voltammetry/a.txt",
+            "\t",
+            "Sample\tStep\tDate\tTime\tAdded\tPeak current",
+            "W-1\t0\t15.01.2025\t18:30:00\t0\t1,5",
+            "W-1\t1\t15.01.2025\t18:33:00\t100\t2,5",
+            "W-1\t1\t15.01.2025\t18:34:00\t100\t2,6",
+            "W-1\t2\t15.01.2025\t18:36:00\t100\t3,5");
+    assertThat(trial.readings)
+        .extracting(reading -> reading.facts().addition().amount().toString())
+        .containsExactly("0 µL", "100 µL", "100 µL", "200 µL");
+    assertThat(trial.readings.get(1).facts()).isSameAs(trial.readings.get(2).facts());
+  }
+
+  @Test
+  void stated() {
+    Trial trial =
+        Trial.text(
+            mapping("stated.toml"),
+            "fluorescence/B7/a.csv",
+            ";",
+            "Label;Intensity",
+            "W-17;10",
+            "W-17;11",
+            "W-17 + 5 µg/L;20",
+            "W-17 + 5 mg;20");
+    assertThat(trial.tally()).isEqualTo(new Tally(4, 3, 1, 0));
+    assertThat(trial.readings)
+        .extracting(Reading::flask)
+        .containsExactly("0 µg/L", "0 µg/L", "5 µg/L");
+    assertThat(trial.readings).extracting(Reading::replicate).containsExactly("1", "2", "1");
+    assertThat(trial.readings.get(0).batch().name()).isEqualTo("B7");
+    assertThat(trial.readings.get(0).batch().delimits()).isTrue();
+  }
+
+  @Test
+  void solids() {
+    Trial trial =
+        Trial.text(
+            mapping("solids.toml"),
+            "sediment/a.csv",
+            ",",
+            "ID,Element,Flask,Rep,Absorbance,Added µL,Weight g,Dry %,Dilution",
+            "K-1,Pb,1,1,0.1,0,0.5012,85,1:10",
+            "K-1,Pb,1,1,0.1,0,0.5012,120,1:10");
+    assertThat(trial.tally()).isEqualTo(new Tally(2, 1, 1, 0));
+    assertThat(trial.readings.get(0).facts().preparation().shown())
+        .isEqualTo("diluted 10-fold, 0.5012 g, in 50 mL, dry fraction 0.85");
+    assertThat(trial.readings.get(0).facts().blanks().method().get())
+        .hasToString("0.4 µg/L ± 0.1 µg/L");
+  }
+
+  @Test
+  void twoMappingsOfOneNameAreOneTooMany(@TempDir Path folder) throws IOException {
+    String text = Files.readString(MAPPINGS.resolve("long-csv.toml"));
+    Files.writeString(folder.resolve("b.toml"), text);
+    Files.writeString(folder.resolve("a.toml"), text);
+    Files.writeString(folder.resolve("c.toml"), "nme = 1");
+    Files.writeString(folder.resolve(".hidden.toml"), "x");
+    Files.writeString(folder.resolve("note.txt"), "x");
+    MappingFolder loaded = MappingFolder.load(folder, LISBON);
+    assertThat(loaded.loaded()).hasSize(3);
+    assertThat(loaded.loaded().get(0)).isInstanceOf(Loaded.Good.class);
+    ConfigFault second = ((Loaded.Faulty<Mapping>) loaded.loaded().get(1)).faults().get(0);
+    assertThat(second.file()).isEqualTo("b.toml");
+    assertThat(second.line()).isEqualTo(4);
+    assertThat(second.found()).isEqualTo("the name 'furnace', which a.toml has already");
+    assertThat(loaded.faults()).hasSizeGreaterThan(2);
+    assertThat(MappingFolder.load(folder.resolve("none"), LISBON).faults()).hasSize(1);
+  }
+}

@@ -1,0 +1,2 @@
+/** Planted offences, so that each rule of the architecture is seen to fire. Never run. */
+package org.spikewright.offence;
