@@ -65,8 +65,8 @@ public sealed interface ChartPlan {
   enum Stroke {
     /** Filled marks. */
     POINTS,
-    /** Large hollow marks about other marks. */
-    RINGS,
+    /** Large crosses over other marks. */
+    CROSSES,
     /** A thin line without marks. */
     LINE,
     /** A thick line with end marks. */

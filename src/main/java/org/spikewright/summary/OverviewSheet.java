@@ -7,6 +7,7 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Locale;
 import java.util.Map;
+import java.util.stream.IntStream;
 import org.spikewright.judgement.Verdict;
 import org.spikewright.quantity.Numbers;
 import org.spikewright.reading.Subject;
@@ -25,14 +26,7 @@ final class OverviewSheet {
       List.of(Verdict.REPORT, Verdict.REVIEW, Verdict.REPEAT, Verdict.WAITING);
 
   private static final List<ColumnPlan> COLUMNS =
-      List.of(
-          ColumnPlan.text("", 24),
-          ColumnPlan.text("", 11),
-          ColumnPlan.text("", 11),
-          ColumnPlan.text("", 22),
-          ColumnPlan.text("", 16),
-          ColumnPlan.text("", 10),
-          ColumnPlan.text("", 92));
+      IntStream.of(24, 11, 11, 11, 14, 22, 92).mapToObj(w -> ColumnPlan.text("", w)).toList();
 
   private final Night night;
   private final Counts counts;
@@ -124,7 +118,7 @@ final class OverviewSheet {
     if (counts.first().isEmpty()) {
       row(CellPlan.text("nothing"));
     } else {
-      header("Sample", "Analyte", "Verdict", "To report", "Instrument", "Series", "Why");
+      header("Sample", "Analyte", "Verdict", "Series", "Instrument", "To report", "Why");
     }
     for (ResultRow result : counts.first()) {
       Subject subject = result.key().subject();
@@ -132,10 +126,10 @@ final class OverviewSheet {
           CellPlan.text(subject.sample().text()),
           CellPlan.text(subject.analyte()),
           CellPlan.text(result.verdict().word(), Words.look(result.verdict())),
-          CellPlan.text(result.reported()),
-          CellPlan.text(subject.instrument()),
           ResultsSheet.link(result, index),
-          CellPlan.text(String.join(" ", result.sentences()), Look.WRAPPED));
+          CellPlan.text(subject.instrument()),
+          CellPlan.text(result.reported()),
+          CellPlan.text(why(result), Look.WRAPPED));
     }
     int all = counts.verdicts().get(Verdict.REPEAT) + counts.verdicts().get(Verdict.REVIEW);
     if (all > counts.first().size()) {
@@ -143,6 +137,13 @@ final class OverviewSheet {
       row(CellPlan.text("and " + more + " more: see Results", Look.FAINT));
     }
     blank();
+  }
+
+  /** The most serious flag's sentence, and how many more there are. */
+  private static String why(ResultRow result) {
+    int more = result.sentences().size() - 1;
+    String first = result.sentences().isEmpty() ? "" : result.sentences().get(0);
+    return more > 0 ? first + " (+ " + more + (more == 1 ? " flag)" : " flags)") : first;
   }
 
   private void flags() {

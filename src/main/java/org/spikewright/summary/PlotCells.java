@@ -33,7 +33,7 @@ final class PlotCells {
 
   List<List<CellPlan>> rows() {
     List<List<CellPlan>> rows = new ArrayList<>();
-    for (int row = 1; row <= Math.max(FIRST + flasks, 47); row++) {
+    for (int row = 1; row <= Math.max(FIRST + flasks, 54); row++) {
       List<CellPlan> cells = new ArrayList<>(left(row));
       pad(cells, 4);
       cells.addAll(numbers(row));
@@ -64,16 +64,20 @@ final class PlotCells {
           List.of(
               CellPlan.text("Series", Look.STRONG),
               CellPlan.text(PlotData.label(chosen.number(), result), Look.CHOICE));
-      case 4 -> List.of(CellPlan.text("To report"), words('J', result.reported()));
-      case 5 -> List.of(CellPlan.text("Unit of x"), words('K', chosen.entry().axisUnit()));
-      case 6 -> List.of(CellPlan.text("Flags"), words('L', String.join(" ", result.sentences())));
+      case 4 -> List.of(CellPlan.text("To report"), words('J', result.reported(), Look.PLAIN));
+      case 5 ->
+          List.of(CellPlan.text("Unit of x"), words('K', chosen.entry().axisUnit(), Look.PLAIN));
+      case 6 ->
+          List.of(
+              CellPlan.text("Flags"),
+              words('L', String.join(" ", result.sentences()), Look.WRAPPED));
       default -> List.of();
     };
   }
 
   /** A text of the chosen series. */
-  private CellPlan words(char column, String cached) {
-    return new CellPlan.Formula(lookUp(column) + "&\"\"", new CellPlan.Text(cached, Look.PLAIN));
+  private CellPlan words(char column, String cached, Look look) {
+    return new CellPlan.Formula(lookUp(column) + "&\"\"", new CellPlan.Text(cached, look));
   }
 
   private List<CellPlan> numbers(int row) {

@@ -92,7 +92,6 @@ final class PlotSheet {
         trace(
             "95 % interval of the result",
             ChartPlan.Stroke.INTERVAL, cells.intervalX(), cells.intervalY()));
-    signals.add(trace("odd flask", ChartPlan.Stroke.RINGS, x, cells.flasks('L')));
     signals.add(
         new ChartPlan.Trace(
             "flasks (bars: replicates' sd)",
@@ -100,20 +99,21 @@ final class PlotSheet {
             x,
             cells.flasks('J'),
             List.of(cells.flasks('N'))));
+    signals.add(trace("odd flask", ChartPlan.Stroke.CROSSES, x, cells.flasks('L')));
     List<ChartPlan.Trace> residuals = new ArrayList<>();
-    residuals.add(trace("odd flask", ChartPlan.Stroke.RINGS, x, cells.flasks('M')));
     residuals.add(trace("residual", ChartPlan.Stroke.POINTS, x, cells.flasks('K')));
+    residuals.add(trace("odd flask", ChartPlan.Stroke.CROSSES, x, cells.flasks('M')));
     String xTitle = "addition, referred to the aliquot (zero signal: minus the concentration)";
     return List.of(
         new ChartPlan.Scatter(
             "Signal against addition",
-            new ChartPlan.Box(0, 7, 2, 31),
+            new ChartPlan.Box(0, 7, 2, 36),
             xTitle,
             "signal used",
             signals),
         new ChartPlan.Scatter(
             "Residuals",
-            new ChartPlan.Box(0, 32, 2, 46),
+            new ChartPlan.Box(0, 37, 2, 54),
             "addition, referred to the aliquot",
             "signal minus line",
             residuals));

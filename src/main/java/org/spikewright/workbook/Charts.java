@@ -132,7 +132,7 @@ final class Charts {
   private static void stroke(XDDFScatterChartData.Series series, ChartPlan.Stroke stroke) {
     switch (stroke) {
       case POINTS -> marks(series, MarkerStyle.CIRCLE, 7, fill(Palette.POINT));
-      case RINGS -> marks(series, MarkerStyle.DIAMOND, 15, null);
+      case CROSSES -> marks(series, MarkerStyle.X, 14, null);
       case LINE -> drawn(series, line(Palette.LINE, 1.5), MarkerStyle.NONE);
       case INTERVAL -> {
         drawn(series, line(Palette.part(Look.REVIEW), 4), MarkerStyle.DASH);

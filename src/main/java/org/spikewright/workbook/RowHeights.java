@@ -59,7 +59,7 @@ final class RowHeights {
       int end = text.indexOf('\n', start);
       end = end < 0 ? text.length() : end;
       // Words are not cut, which costs room at the ends of lines.
-      lines += 1 + (int) ((end - start) * 1.08 / width);
+      lines += 1 + (int) ((end - start) * 1.02 / width);
       start = end + 1;
     }
     return Math.max(1, lines);

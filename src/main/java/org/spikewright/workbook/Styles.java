@@ -67,6 +67,10 @@ final class Styles {
     style.setDataFormat(book.createDataFormat().getFormat(format));
     style.setVerticalAlignment(VerticalAlignment.TOP);
     boolean header = look == Look.HEADER || look == Look.HEADER_RIGHT;
+    if (format.equals(DAY) || format.equals(MOMENT)) {
+      style.setAlignment(HorizontalAlignment.LEFT);
+      style.setIndention((short) 1);
+    }
     style.setWrapText(look == Look.WRAPPED || header);
     String fill = Palette.fill(look);
     if (!fill.equals("FFFFFF")) {
@@ -115,7 +119,7 @@ final class Styles {
   }
 
   private XSSFCellStyle linked() {
-    XSSFCellStyle style = make(Look.PLAIN, "General");
+    XSSFCellStyle style = text(Look.PLAIN, false);
     XSSFFont font = book.createFont();
     font.setFontName("Calibri");
     font.setFontHeightInPoints((short) 10);
