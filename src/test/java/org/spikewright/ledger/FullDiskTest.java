@@ -30,14 +30,14 @@ class FullDiskTest {
             .isInstanceOf(LedgerFault.class)
             .hasMessageContaining("disk is full")
             .hasMessageContaining("a.db");
-        assertThatThrownBy(() -> delivery.commit(Samples.tally(0), "done/big.csv"))
+        assertThatThrownBy(() -> delivery.commit(Samples.tally(0), "", "done/big.csv"))
             .isInstanceOf(IllegalStateException.class);
       }
       assertThat(ledger.newestArrival()).isEqualTo(1);
       sql.script(List.of("PRAGMA max_page_count = 100000"));
       try (Delivery delivery = ledger.receive(Samples.arriving("big.csv", Samples.DAY))) {
         fill(delivery);
-        assertThat(delivery.commit(Samples.tally(40_000), "done/big.csv").repeated()).isZero();
+        assertThat(delivery.commit(Samples.tally(40_000), "", "done/big.csv").repeated()).isZero();
       }
       assertThat(ledger.subjects(Samples.DAY, 1)).containsExactly(kept.subject());
       assertThat(ledger.subjects(Samples.DAY, 2)).hasSize(101);
