@@ -55,7 +55,9 @@ final class Journal {
       long before = length;
       length = -1;
       disk.append(channel, before, bytes);
-      disk.sync(file.getParent());
+      if (before == 0) {
+        disk.sync(file.getParent());
+      }
       length = before + bytes.length;
       arrivals.add(entry.arrival());
     }

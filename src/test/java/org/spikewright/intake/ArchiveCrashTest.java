@@ -183,7 +183,7 @@ class ArchiveCrashTest {
               again.journal(DAY, first);
               assertThat(again.journalOf(DAY)).as(point).isEqualTo(List.of(first, second));
             });
-    assertThat(points).isEqualTo(8);
+    assertThat(points).isEqualTo(7);
   }
 
   @Test
