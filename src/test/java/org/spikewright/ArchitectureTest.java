@@ -139,6 +139,11 @@ class ArchitectureTest {
     noChance(IN_CORE).check(OURS);
   }
 
+  private static final List<String> PLANTED =
+      Stream.of(noTime(), noLocale(), noCharset(), noChance(DescribedPredicate.alwaysTrue()))
+          .flatMap(rule -> rule.evaluate(OFFENCES).getFailureReport().getDetails().stream())
+          .toList();
+
   static Stream<BannedCalls.Call> bannedCalls() {
     return Stream.of(BannedCalls.TIME, BannedCalls.LOCALE, BannedCalls.CHARSET, BannedCalls.CHANCE)
         .flatMap(List::stream);
@@ -147,12 +152,7 @@ class ArchitectureTest {
   @ParameterizedTest
   @MethodSource("bannedCalls")
   void the_rule_sees_a_planted_call(BannedCalls.Call call) {
-    DescribedPredicate<JavaClass> all = DescribedPredicate.alwaysTrue();
-    List<String> reported =
-        Stream.of(noTime(), noLocale(), noCharset(), noChance(all))
-            .flatMap(rule -> rule.evaluate(OFFENCES).getFailureReport().getDetails().stream())
-            .toList();
-    assertThat(reported)
+    assertThat(PLANTED)
         .anyMatch(line -> line.startsWith(call + " in " + DefaultsOffence.class.getName()));
   }
 

@@ -31,8 +31,8 @@ public record QuadraticFit(
     int residualDf) {
 
   /**
-   * Fits the parabola. Orthogonal polynomials and one round of refinement on the residuals keep the
-   * digits: the certified coefficients of NIST StRD Pontius are met to 12 digits.
+   * Fits the parabola. Polynomials made orthogonal twice over keep the digits: the certified
+   * coefficients of NIST StRD Pontius are met to 12.
    *
    * @return empty with fewer than three distinct x, or when a coefficient does not fit into a
    *     number
@@ -47,22 +47,11 @@ public record QuadraticFit(
     for (int i = 0; i < e.length; i++) {
       e[i] = line.residual(i);
     }
-    double c2 = 0;
-    double toSlope = 0;
-    double toMean = 0;
-    for (int round = 0; round < 2; round++) {
-      double bend = dot(basis.z, e) / basis.szz;
-      double slope = dot(basis.u, e) / basis.suu;
-      double mean = StraightLine.mean(e);
-      for (int i = 0; i < e.length; i++) {
-        e[i] -= mean + slope * basis.u[i] + bend * basis.z[i];
-      }
-      c2 += bend;
-      toSlope += slope;
-      toMean += mean;
+    double bend = dot(basis.z, e) / basis.szz;
+    for (int i = 0; i < e.length; i++) {
+      e[i] -= bend * basis.z[i];
     }
-    return Optional.of(basis.natural(line, c2, toSlope, toMean, dot(e, e)))
-        .filter(QuadraticFit::isFinite);
+    return Optional.of(basis.natural(line, bend, dot(e, e))).filter(QuadraticFit::isFinite);
   }
 
   /**
@@ -101,16 +90,15 @@ public record QuadraticFit(
       return new Basis(u, z, unit, suu, dot(z, z), skew, square);
     }
 
-    QuadraticFit natural(
-        StraightLine line, double bend, double toSlope, double toMean, double sse) {
+    QuadraticFit natural(StraightLine line, double bend, double sse) {
       double u0 = -line.xMean() / unit;
       double z0 = u0 * u0 - skew * u0 - square;
       double steep0 = 2 * u0 - skew;
       int df = line.n() - 3;
       double sd = df > 0 ? Math.max(Math.sqrt(sse / df), line.rounding()) : Double.NaN;
       return new QuadraticFit(
-          line.yMean() + toMean + line.slope() * -line.xMean() + toSlope * u0 + bend * z0,
-          line.slope() + (toSlope + bend * steep0) / unit,
+          line.signalIntercept() + bend * z0,
+          line.slope() + bend * steep0 / unit,
           bend / unit / unit,
           known(sd * Math.sqrt(1.0 / line.n() + u0 * u0 / suu + z0 * z0 / szz)),
           known(sd * Math.sqrt(1 / suu + steep0 * steep0 / szz) / unit),

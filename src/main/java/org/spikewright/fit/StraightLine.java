@@ -183,8 +183,8 @@ public record StraightLine(
   }
 
   /**
-   * The mean, with one correction step so that a large offset costs no digits, and never outside
-   * the values: the mean of equal numbers is that number, not its neighbour.
+   * The mean, with one correction step so that a large offset costs no digits and the mean of equal
+   * numbers is that number, not its neighbour.
    */
   static double mean(double[] values) {
     double sum = 0;
@@ -196,7 +196,7 @@ public record StraightLine(
     for (double value : values) {
       rest += value - mean;
     }
-    return Math.max(min(values), Math.min(max(values), mean + rest / values.length));
+    return mean + rest / values.length;
   }
 
   private static double size(double[] values) {

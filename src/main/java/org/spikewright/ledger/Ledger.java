@@ -19,6 +19,7 @@ public final class Ledger extends LedgerView {
   private final Arrivals arrivals;
   private final DayIndex days;
   private final long pauseMillis;
+  private boolean closed;
 
   Ledger(Sql sql, Sql reads, Owner owner, LabCalendar calendar, Duration longestPause) {
     super(reads, calendar, longestPause);
@@ -130,9 +131,13 @@ public final class Ledger extends LedgerView {
     SqliteFile.checkpoint(sql);
   }
 
-  /** Forgets what is under way and gives the ledger up. */
+  /** Forgets what is under way and gives the ledger up; closed again, it does nothing. */
   @Override
   public void close() {
+    if (closed) {
+      return;
+    }
+    closed = true;
     try {
       super.close();
     } finally {

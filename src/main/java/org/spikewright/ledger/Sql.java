@@ -159,6 +159,7 @@ final class Sql implements AutoCloseable {
   void rollback() {
     inTransaction = false;
     broken = false;
+    dropStatements();
     try {
       connection.rollback();
     } catch (SQLException given) {
@@ -184,6 +185,9 @@ final class Sql implements AutoCloseable {
       return deed.on(connection);
     } catch (SQLException failure) {
       broken = inTransaction;
+      if (!inTransaction) {
+        dropStatements();
+      }
       throw fault(failure);
     }
   }
@@ -219,6 +223,18 @@ final class Sql implements AutoCloseable {
   private PreparedStatement keep(String sql, PreparedStatement statement) {
     prepared.put(sql, statement);
     return statement;
+  }
+
+  /** After a failure a kept statement may be of no more use; all are prepared anew when needed. */
+  private void dropStatements() {
+    for (PreparedStatement statement : prepared.values()) {
+      try {
+        statement.close();
+      } catch (SQLException closed) {
+        // It is closed all the same.
+      }
+    }
+    prepared.clear();
   }
 
   private LedgerFault fault(SQLException failure) {

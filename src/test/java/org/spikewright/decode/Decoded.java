@@ -20,7 +20,7 @@ import org.spikewright.table.TableShape;
 record Decoded(List<Row> rows, Optional<DecodeFault> fault) {
   static {
     // Thousands of files are refused here on purpose; their accounts would drown the results.
-    ((Logger) LoggerFactory.getLogger(org.slf4j.Logger.ROOT_LOGGER_NAME)).setLevel(Level.ERROR);
+    ((Logger) LoggerFactory.getLogger(FileDecoder.class)).setLevel(Level.ERROR);
   }
 
   static Decoded of(Path file, TableShape shape) {

@@ -2,7 +2,6 @@ package org.spikewright.fit;
 
 import static org.assertj.core.api.Assertions.assertThat;
 
-import java.util.Locale;
 import java.util.stream.Stream;
 import org.apache.commons.csv.CSVRecord;
 import org.junit.jupiter.params.ParameterizedTest;
@@ -28,7 +27,6 @@ class CertifiedDigitsTest {
     double value = quantity.equals("s**2") ? ours.get("s") * ours.get("s") : ours.get(quantity);
     double expected = ReferenceTable.number(row, "printed");
     double digits = -Math.log10(Math.max(Math.abs(value / expected - 1), 1e-15));
-    System.out.printf(Locale.ROOT, "LRE %s %s %.1f%n", row.get("case"), quantity, digits);
     assertThat(digits).as("%s %s: %s", row.get("case"), quantity, value).isGreaterThan(12);
   }
 }

@@ -98,6 +98,10 @@ class DegenerateSeriesTest {
           .as("seed %s", seed)
           .isCloseTo(nativeConcentration, relative(1e-11, 100));
       assertThat(estimate.standardError().orElseThrow()).as("seed %s", seed).isLessThan(1e-9);
+      NativeEstimate sure = NativeEstimate.of(line, 0, 3).orElseThrow();
+      assertThat(sure.value())
+          .as("seed %s", seed)
+          .isBetween(sure.lower95().orElseThrow(), sure.upper95().orElseThrow());
       assertThat(BendTest.of(line).orElseThrow().pTwoSided()).as("seed %s", seed).isGreaterThan(.3);
       for (int i = 0; i < line.n(); i++) {
         assertThat(DeletedResidual.of(line, i, 0).orElseThrow().p())

@@ -80,7 +80,7 @@ class NastyNumbersTest {
   private static void examine(StraightLine line, SplittableRandom random, String seen)
       throws Exception {
     double sd = random.nextInt(4) == 0 ? 0 : Math.pow(10, random.nextInt(-60, 60));
-    double df = random.nextInt(5) == 0 ? Double.POSITIVE_INFINITY : random.nextDouble(0.5, 50);
+    double df = random.nextInt(5) == 0 ? Double.POSITIVE_INFINITY : 0.5 * random.nextInt(1, 100);
     finite(line, seen);
     finite(line.residualSd(), seen);
     finite(line.slopeStandardError(), seen);

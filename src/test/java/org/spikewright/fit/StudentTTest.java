@@ -88,7 +88,6 @@ class StudentTTest {
       Detection.of(1, 3);
     }
     assertThat(Duration.ofNanos(System.nanoTime() - again)).isLessThan(Duration.ofSeconds(5));
-    System.out.println("Detection.factors: " + fresh.toNanos() / 1000 + " microseconds");
   }
 
   @Test

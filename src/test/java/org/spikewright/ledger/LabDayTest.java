@@ -159,7 +159,7 @@ class LabDayTest {
     try (Delivery delivery = ledger.receive(Samples.arriving("rows.csv", next.plusDays(1)))) {
       delivery.reading(at(-100));
       delivery.rejection(ExactlyOnceTest.rejection("rows.csv", 7));
-      delivery.commit(new Tally(2, 1, 1, 0), "done/rows.csv");
+      delivery.commit(new Tally(2, 1, 1, 0), "", "done/rows.csv");
     }
     assertThat(ledger.owed(LATER, false)).containsExactly(next.plusDays(1));
   }
