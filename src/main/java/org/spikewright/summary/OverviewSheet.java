@@ -1,11 +1,9 @@
 package org.spikewright.summary;
 
-import java.time.format.DateTimeFormatter;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.LinkedHashMap;
 import java.util.List;
-import java.util.Locale;
 import java.util.Map;
 import java.util.stream.IntStream;
 import org.spikewright.judgement.Verdict;
@@ -63,13 +61,18 @@ final class OverviewSheet {
 
   private void title() {
     String moment =
-        DateTimeFormatter.ofPattern("yyyy-MM-dd HH:mm", Locale.ROOT)
-            .format(night.moment().atZone(night.zone()));
+        night.moment().atZone(night.zone()).toLocalDateTime().toString().substring(0, 16);
     String laboratory = night.laboratory().isEmpty() ? "" : night.laboratory() + " · ";
     row(CellPlan.text("Lab day " + night.labDay(), Look.TITLE));
     row(
         CellPlan.text(
-            laboratory + "revision " + night.revision() + " of " + moment + " " + night.zone(),
+            laboratory
+                + "revision "
+                + night.revision()
+                + " of "
+                + moment.replace('T', ' ')
+                + " "
+                + night.zone(),
             Look.STRONG));
     row(
         CellPlan.text(

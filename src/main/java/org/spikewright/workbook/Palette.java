@@ -17,6 +17,8 @@ final class Palette {
   static final String CHOICE_FILL = "FFF6DC";
   static final String LINK = "1F5F8B";
 
+  private static final byte OPAQUE = (byte) 0xFF;
+
   private Palette() {}
 
   /** The fill of a cell, or white. */
@@ -60,6 +62,7 @@ final class Palette {
   }
 
   static XSSFColor color(String hex) {
-    return new XSSFColor(rgb(hex));
+    byte[] rgb = rgb(hex);
+    return new XSSFColor(new byte[] {OPAQUE, rgb[0], rgb[1], rgb[2]});
   }
 }

@@ -68,8 +68,7 @@ public final class XlsxWriter {
   }
 
   private void write(SummaryPlan plan, OutputStream out, LongConsumer progress) throws IOException {
-    try (SXSSFWorkbook book = new SXSSFWorkbook(new XSSFWorkbook(), WINDOW)) {
-      book.setCompressTempFiles(false);
+    try (SXSSFWorkbook book = new StreamedBook(WINDOW)) {
       properties(plan, book.getXSSFWorkbook());
       Styles styles = new Styles(book.getXSSFWorkbook());
       for (SheetPlan sheet : plan.sheets()) {
