@@ -76,12 +76,11 @@ final class Filing {
     }
   }
 
-  private Filed resume(Arrived arrived, String target) throws IOException {
-    if (arrived.outcome() == Arrived.Result.REFUSED) {
-      archive.note(target, Beside.REASON, reasonText(arrived));
-    }
+  private Filed resume(Arrived arrived, String target) {
     Path from = station.settings().watch().resolve(arrived.name());
-    return archive.resume(from, arrived.sha256(), target);
+    return arrived.outcome() == Arrived.Result.REFUSED
+        ? archive.resumeRefusal(from, arrived.sha256(), target, reasonText(arrived))
+        : archive.resume(from, arrived.sha256(), target);
   }
 
   /** Somebody else's file lies under the promised name and stays there. */

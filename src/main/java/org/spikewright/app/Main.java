@@ -34,9 +34,21 @@ public final class Main implements Runnable {
 
   /** Runs a command and ends the process with its exit code. */
   public static void main(String[] args) {
+    Thread.setDefaultUncaughtExceptionHandler(Main::halt);
     int code = run(args);
     if (code != ExitCode.DONE) {
       System.exit(code);
+    }
+  }
+
+  /**
+   * A virtual machine that ran out of memory cannot be trusted to go on: it ends, and what was
+   * under way is forgotten and done again at the next start.
+   */
+  private static void halt(Thread thread, Throwable error) {
+    System.err.println("A fault of the program in '" + thread.getName() + "': " + error);
+    if (error instanceof VirtualMachineError) {
+      Runtime.getRuntime().halt(ExitCode.FAULT);
     }
   }
 
