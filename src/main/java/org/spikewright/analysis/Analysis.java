@@ -1,8 +1,6 @@
 package org.spikewright.analysis;
 
-import java.time.Instant;
 import java.util.Iterator;
-import java.util.Optional;
 import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.series.Gathered;
@@ -40,19 +38,5 @@ public final class Analysis implements Iterable<Outcome> {
         return judge.judge(walk.next());
       }
     };
-  }
-
-  /**
-   * The first instant at which a series that is waited for is judged as it stands; empty if none.
-   */
-  public Optional<Instant> waitingUntil() {
-    Optional<Instant> first = Optional.empty();
-    for (Gathered gathered : series) {
-      Optional<Instant> until = judge.waitingUntil(gathered);
-      if (until.isPresent() && (first.isEmpty() || until.get().isBefore(first.get()))) {
-        first = until;
-      }
-    }
-    return first;
   }
 }

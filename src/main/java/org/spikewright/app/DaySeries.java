@@ -6,6 +6,7 @@ import java.util.Deque;
 import java.util.Iterator;
 import java.util.List;
 import java.util.NoSuchElementException;
+import java.util.Set;
 import org.spikewright.ledger.LedgerView;
 import org.spikewright.reading.Subject;
 import org.spikewright.series.Gathered;
@@ -28,11 +29,22 @@ final class DaySeries implements Iterable<Gathered> {
    * @param upTo number of the last delivery that counts
    */
   DaySeries(LedgerView ledger, Gathering gathering, LocalDate day, long upTo) {
+    this(ledger, gathering, day, upTo, ledger.subjects(day, upTo));
+  }
+
+  private DaySeries(
+      LedgerView ledger, Gathering gathering, LocalDate day, long upTo, List<Subject> subjects) {
     this.ledger = ledger;
     this.gathering = gathering;
     this.day = day;
     this.upTo = upTo;
-    this.subjects = ledger.subjects(day, upTo);
+    this.subjects = subjects;
+  }
+
+  /** The series of some subjects alone. */
+  DaySeries of(Set<Subject> wanted) {
+    List<Subject> some = subjects.stream().filter(wanted::contains).toList();
+    return new DaySeries(ledger, gathering, day, upTo, some);
   }
 
   @Override

@@ -3,30 +3,24 @@ package org.spikewright.app;
 import java.nio.file.Path;
 import java.time.Instant;
 import java.time.LocalDate;
+import java.time.temporal.ChronoUnit;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import java.util.stream.Stream;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
 import org.spikewright.analysis.Analysis;
-import org.spikewright.config.Loaded;
 import org.spikewright.config.Settings;
 import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.ledger.Ledger;
-import org.spikewright.ledger.ResultOrder;
 import org.spikewright.ledger.RevisionRecord;
 import org.spikewright.ledger.RevisionStart;
 import org.spikewright.ledger.RevisionWriter;
-import org.spikewright.series.Gathering;
-import org.spikewright.series.GatheringRules;
-import org.spikewright.summary.CsvPlan;
-import org.spikewright.summary.Night;
+import org.spikewright.series.Gathered;
 import org.spikewright.summary.ResultRow;
-import org.spikewright.summary.SummaryPlan;
-import org.spikewright.workbook.CsvWriter;
 import org.spikewright.workbook.WriteFault;
-import org.spikewright.workbook.XlsxWriter;
 
 /**
  * Makes what is owed: for each lab day that has something new, a revision of its results in the
@@ -48,12 +42,14 @@ final class NightlySummary {
   private final Ledger ledger;
   private final Progress progress;
   private final Stop stop;
+  private final RevisionFiles files;
 
   NightlySummary(Station station, Progress progress, Stop stop) {
     this.station = station;
     this.ledger = station.ledger();
     this.progress = progress;
     this.stop = stop;
+    this.files = new RevisionFiles(station, progress);
   }
 
   /**
@@ -68,9 +64,13 @@ final class NightlySummary {
       if (stop.isRequested()) {
         break;
       }
-      Optional<RevisionRecord> revision = revise(day);
+      KeptNight kept = new KeptNight();
+      Optional<RevisionRecord> revision = revise(day, kept);
       if (revision.isPresent()) {
-        issued.add(issue(revision.get()));
+        issued.add(
+            kept.source().isPresent()
+                ? files.write(revision.get(), kept.source().get())
+                : files.write(revision.get()));
       }
     }
     progress.done();
@@ -81,15 +81,15 @@ final class NightlySummary {
   List<Issued> issueInterrupted() throws WriteFault {
     List<Issued> issued = new ArrayList<>();
     for (RevisionRecord revision : ledger.owedRevisions()) {
-      issued.add(issue(revision));
+      issued.add(files.write(revision));
     }
     return issued;
   }
 
   /** Judges a lab day's series and records what is new; empty when nothing is. */
-  private Optional<RevisionRecord> revise(LocalDate day) {
+  private Optional<RevisionRecord> revise(LocalDate day, KeptNight kept) {
     Settings settings = station.settings();
-    Instant now = station.clock().instant();
+    Instant now = station.clock().instant().truncatedTo(ChronoUnit.MILLIS);
     boolean inProgress = settings.calendar().endOf(day).isAfter(now);
     RevisionStart start =
         new RevisionStart(
@@ -100,89 +100,24 @@ final class NightlySummary {
             settings.sha256(),
             settings.text(),
             Version.NUMBER);
+    Judge judge = NightAnalysis.judge(settings, start.moment());
     try (RevisionWriter writer = ledger.startRevision(start)) {
-      Analysis analysis = analysis(settings, day, start.arrivalLimit(), writer.moment());
+      Optional<Instant> waitingUntil = Optional.empty();
       long count = 0;
-      for (Outcome outcome : analysis) {
-        writer.result(ResultRow.of(outcome), InputsHash.of(outcome.gathered(), settings.sha256()));
+      for (Outcome outcome :
+          new Analysis(NightAnalysis.series(ledger, settings, day, start.arrivalLimit()), judge)) {
+        Gathered gathered = outcome.gathered();
+        ResultRow row = ResultRow.of(outcome);
+        writer.result(row, InputsHash.of(gathered, settings.sha256()));
+        kept.add(outcome, row);
+        waitingUntil = earlier(waitingUntil, judge.waitingUntil(gathered));
         progress.at("judging series", ++count);
       }
-      return writer.commit(analysis.waitingUntil());
+      return writer.commit(waitingUntil);
     }
   }
 
-  private Analysis analysis(Settings settings, LocalDate day, long upTo, Instant moment) {
-    Gathering gathering =
-        new Gathering(new GatheringRules(settings.calendar(), settings.longestPause()));
-    return new Analysis(
-        new DaySeries(ledger, gathering, day, upTo),
-        new Judge(settings.criteria(), moment, settings.waitForFlasks()));
-  }
-
-  /** Writes the files of a committed revision: results and flasks, then the workbook. */
-  private Issued issue(RevisionRecord revision) throws WriteFault {
-    Night night = night(revision);
-    String name = revision.labDay() + "-r" + revision.revision();
-    Path folder = station.settings().summaries();
-    String results = "results-" + name + ".csv";
-    String workbook = "summary-" + name + ".xlsx";
-    String resultsHash =
-        CsvWriter.write(
-            CsvPlan.results(
-                ledger.results(revision.labDay(), revision.revision(), ResultOrder.BY_KEY)),
-            folder.resolve(results));
-    CsvWriter.write(
-        CsvPlan.flasks(night.outcomes()),
-        folder.resolve("flasks-" + name + ".csv"),
-        lines -> progress.at("writing flasks", lines));
-    String workbookHash =
-        new XlsxWriter()
-            .write(
-                SummaryPlan.of(night),
-                folder.resolve(workbook),
-                station.temporaryFolder(),
-                series -> progress.at("writing workbook, series", series));
-    ledger.issued(
-        revision.labDay(),
-        revision.revision(),
-        new RevisionRecord.Issued(workbook, workbookHash, results, resultsHash));
-    progress.done();
-    LOG.info(
-        "summary written lab_day={} revision={} series={} file={}",
-        revision.labDay(),
-        revision.revision(),
-        revision.results(),
-        workbook);
-    return new Issued(revision, folder.resolve(workbook));
-  }
-
-  private Night night(RevisionRecord revision) {
-    Settings settings = settingsOf(revision);
-    LocalDate day = revision.labDay();
-    long upTo = revision.arrivalLimit();
-    return new Night(
-        day,
-        revision.revision(),
-        revision.moment(),
-        revision.inProgress(),
-        settings.calendar().zone(),
-        settings.laboratory(),
-        revision.results(),
-        ledger.results(day, revision.revision(), ResultOrder.BY_SEVERITY),
-        analysis(settings, day, upTo, revision.moment()),
-        ledger.files(day, upTo),
-        ledger.refused(day, upTo),
-        SettingsLines.of(settings, station.mappings().good(), revision),
-        settings.criteria());
-  }
-
-  /** The settings that held when the revision was made, which may not be today's. */
-  private Settings settingsOf(RevisionRecord revision) {
-    Settings now = station.settings();
-    if (now.sha256().equals(revision.settingsSha256())) {
-      return now;
-    }
-    Loaded<Settings> then = Settings.read(now.summaries(), revision.settingsText());
-    return then instanceof Loaded.Good<Settings> good ? good.value() : now;
+  private static Optional<Instant> earlier(Optional<Instant> one, Optional<Instant> other) {
+    return Stream.of(one, other).flatMap(Optional::stream).min(Instant::compareTo);
   }
 }

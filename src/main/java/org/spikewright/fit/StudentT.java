@@ -1,5 +1,7 @@
 package org.spikewright.fit;
 
+import java.util.Map;
+import java.util.concurrent.ConcurrentHashMap;
 import org.apache.commons.math3.distribution.NormalDistribution;
 import org.apache.commons.math3.distribution.TDistribution;
 import org.apache.commons.math3.special.Beta;
@@ -17,6 +19,11 @@ final class StudentT {
 
   /** Beyond this the expansions in 1/df are closer than the beta function. */
   private static final double MANY = 1e6;
+
+  /** Moderated degrees of freedom are any number, so that a service would collect them for ever. */
+  private static final int REMEMBERED = 4096;
+
+  private static final Map<Asked, Double> QUANTILES = new ConcurrentHashMap<>();
 
   private StudentT() {}
 
@@ -43,6 +50,15 @@ final class StudentT {
 
   /** The value that is not exceeded with probability {@code p}. */
   static double quantile(double p, double df) {
+    if (QUANTILES.size() >= REMEMBERED) {
+      QUANTILES.clear();
+    }
+    return QUANTILES.computeIfAbsent(new Asked(p, df), asked -> computed(asked.p(), asked.df()));
+  }
+
+  private record Asked(double p, double df) {}
+
+  private static double computed(double p, double df) {
     if (df > MANY) {
       double z = NORMAL.inverseCumulativeProbability(p);
       return z + (z * z * z + z) / (4 * df);

@@ -7,6 +7,7 @@ import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalLong;
 import org.spikewright.series.SeriesKey;
 import org.spikewright.summary.ResultRow;
 
@@ -64,9 +65,11 @@ public final class RevisionWriter implements AutoCloseable {
     if (!row.key().labDay().equals(start.labDay())) {
       throw new IllegalArgumentException("a result of another lab day: " + row.key());
     }
-    long series = series(row.key());
+    Object[] identity = identity(row.key());
+    OptionalLong fresh = addSeries(identity);
+    long series = fresh.orElseGet(() -> knownSeries(identity));
     String content = ResultCodec.encode(row);
-    Optional<Newest> newest = newest(series);
+    Optional<Newest> newest = fresh.isPresent() ? Optional.empty() : newest(series);
     boolean same =
         newest.isPresent()
             && newest.get().content().equals(content)
@@ -162,26 +165,30 @@ public final class RevisionWriter implements AutoCloseable {
     places.flush();
   }
 
-  private long series(SeriesKey key) {
-    Object[] identity = {
+  private Object[] identity(SeriesKey key) {
+    return new Object[] {
       ids.subject(key.subject()),
       key.labDay().toEpochDay(),
       ids.name(key.batch()),
       ids.name(key.preparation()),
       key.ordinal()
     };
+  }
+
+  /** The number of a series that is new; empty when it is known. */
+  private OptionalLong addSeries(Object[] identity) {
     return sql.number(
-            "INSERT INTO series (subject, day, batch, preparation, ordinal) VALUES (?, ?, ?, ?, ?)"
-                + " ON CONFLICT (subject, day, batch, preparation, ordinal) DO NOTHING"
-                + " RETURNING id",
+        "INSERT INTO series (subject, day, batch, preparation, ordinal) VALUES (?, ?, ?, ?, ?)"
+            + " ON CONFLICT (subject, day, batch, preparation, ordinal) DO NOTHING RETURNING id",
+        identity);
+  }
+
+  private long knownSeries(Object[] identity) {
+    return sql.number(
+            "SELECT id FROM series WHERE subject = ? AND day = ? AND batch = ?"
+                + " AND preparation = ? AND ordinal = ?",
             identity)
-        .orElseGet(
-            () ->
-                sql.number(
-                        "SELECT id FROM series WHERE subject = ? AND day = ? AND batch = ?"
-                            + " AND preparation = ? AND ordinal = ?",
-                        identity)
-                    .orElseThrow());
+        .orElseThrow();
   }
 
   private Optional<Newest> newest(long series) {

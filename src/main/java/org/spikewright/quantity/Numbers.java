@@ -17,6 +17,11 @@ public final class Numbers {
       return "0";
     }
     double size = Math.abs(value);
+    if (size >= 1e-3 && size < 1e7) {
+      // Here the shortest text has no exponent.
+      String text = Double.toString(value);
+      return text.endsWith(".0") ? text.substring(0, text.length() - 2) : text;
+    }
     if (!(size >= 1e-6 && size < 1e15)) {
       return Double.toString(value);
     }

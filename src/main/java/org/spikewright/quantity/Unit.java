@@ -1,5 +1,6 @@
 package org.spikewright.quantity;
 
+import java.util.Collections;
 import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
@@ -28,7 +29,8 @@ public record Unit(String symbol, Dimension dimension, double perBase) {
    * @return empty when the table has no such unit
    */
   public static Optional<Unit> find(String spelling) {
-    return Optional.ofNullable(TABLE.get(fold(spelling)));
+    Unit plain = TABLE.get(spelling);
+    return plain != null ? Optional.of(plain) : Optional.ofNullable(TABLE.get(fold(spelling)));
   }
 
   /** Finds a unit that the program itself names; {@link IllegalArgumentException} when unknown. */
@@ -94,7 +96,7 @@ public record Unit(String symbol, Dimension dimension, double perBase) {
     ratios(table, amounts, amountSizes, masses, massSizes, Dimension.AMOUNT_PER_MASS);
     String[] molars = {"M", "mM", "µM", "nM", "pM"};
     addAll(table, molars, amountSizes, Dimension.AMOUNT_PER_VOLUME);
-    return Map.copyOf(table);
+    return Collections.unmodifiableMap(table);
   }
 
   private static void addAll(
@@ -120,6 +122,8 @@ public record Unit(String symbol, Dimension dimension, double perBase) {
 
   private static void add(
       Map<String, Unit> table, String symbol, Dimension dimension, double size) {
-    table.put(fold(symbol), new Unit(symbol, dimension, size));
+    Unit unit = new Unit(symbol, dimension, size);
+    table.put(symbol, unit);
+    table.put(fold(symbol), unit);
   }
 }

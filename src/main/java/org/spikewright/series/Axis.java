@@ -25,6 +25,8 @@ import org.spikewright.reading.FlaskFacts;
  */
 record Axis(Unit unit, double[] x, double[] factor, double dilution) {
 
+  private static final Unit LITRE = Unit.of("L");
+
   /** Places flasks that passed {@link AxisCheck}. */
   static Axis of(List<FlaskFacts> flasks) {
     return switch (flasks.get(0).design()) {
@@ -106,7 +108,7 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
   }
 
   private static double added(FlaskFacts facts) {
-    return facts.addition().amount().in(Unit.of("L"));
+    return facts.addition().amount().in(LITRE);
   }
 
   private static double spike(FlaskFacts facts, Unit unit, Quantity aliquot) {

@@ -21,6 +21,8 @@ final class AxisCheck {
   /** What is wrong with a series' facts, and what would be right. */
   record Misfit(String found, String expected) {}
 
+  private static final Unit LITRE = Unit.of("L");
+
   private final List<FlaskDraft> flasks;
 
   private AxisCheck(List<FlaskDraft> flasks) {
@@ -32,8 +34,8 @@ final class AxisCheck {
     AxisCheck check = new AxisCheck(flasks);
     return check
         .differing("design", facts -> facts.design().word())
-        .or(() -> check.differing("preparation", facts -> facts.preparation().toString()))
-        .or(() -> check.differing("method blank", facts -> facts.blanks().method().toString()))
+        .or(() -> check.differing("preparation", FlaskFacts::preparation))
+        .or(() -> check.differing("method blank", facts -> facts.blanks().method()))
         .or(() -> check.differing("kind of concentration", AxisCheck::kinds))
         .or(check::ofDesign)
         .or(check::mixedKinds)
@@ -41,22 +43,25 @@ final class AxisCheck {
   }
 
   /** The dimensions of everything that is added to or taken from a concentration on the axis. */
-  private static String kinds(FlaskFacts facts) {
+  private static List<Dimension> kinds(FlaskFacts facts) {
     return Stream.of(
             Optional.of(Axis.unit(facts)),
             facts.blanks().solvent().map(blank -> blank.quantity().unit()),
             facts.blanks().method().map(blank -> blank.quantity().unit()))
         .flatMap(Optional::stream)
-        .map(unit -> unit.dimension().words())
+        .map(Unit::dimension)
         .distinct()
-        .collect(Collectors.joining(" with "));
+        .toList();
   }
 
   private Optional<Misfit> mixedKinds() {
-    String kinds = kinds(flasks.get(0).facts());
-    return kinds.contains(" with ")
-        ? Optional.of(new Misfit(kinds, "stock and blanks of one kind"))
-        : Optional.empty();
+    List<Dimension> kinds = kinds(flasks.get(0).facts());
+    return kinds.size() == 1
+        ? Optional.empty()
+        : Optional.of(
+            new Misfit(
+                kinds.stream().map(Dimension::words).collect(Collectors.joining(" with ")),
+                "stock and blanks of one kind"));
   }
 
   private Optional<Misfit> ofDesign() {
@@ -85,16 +90,15 @@ final class AxisCheck {
     if (facts.finalVolume().isEmpty()) {
       return true;
     }
-    Unit litre = Unit.of("L");
-    double total = facts.finalVolume().get().in(litre);
-    double in = facts.aliquot().orElseThrow().in(litre) + facts.addition().amount().in(litre);
+    double total = facts.finalVolume().get().in(LITRE);
+    double in = facts.aliquot().orElseThrow().in(LITRE) + facts.addition().amount().in(LITRE);
     return in <= total * (1 + 1e-9);
   }
 
   private Optional<Misfit> oneVessel() {
     return needs("a volume of stock as its addition", f -> f.addition() instanceof OfStock)
-        .or(() -> differing("aliquot", facts -> shown(facts.aliquot())))
-        .or(() -> differing("start volume", facts -> shown(facts.startVolume())))
+        .or(() -> differing("aliquot", FlaskFacts::aliquot))
+        .or(() -> differing("start volume", FlaskFacts::startVolume))
         .or(this::startVolume);
   }
 
@@ -111,8 +115,7 @@ final class AxisCheck {
     if (aliquot.isPresent() && !isPositive(aliquot)) {
       return Optional.of(new Misfit("an aliquot of " + aliquot.get(), "an aliquot above 0"));
     }
-    Unit litre = Unit.of("L");
-    if (aliquot.isPresent() && aliquot.get().in(litre) > start.get().in(litre) * (1 + 1e-9)) {
+    if (aliquot.isPresent() && aliquot.get().in(LITRE) > start.get().in(LITRE) * (1 + 1e-9)) {
       return Optional.of(
           new Misfit(
               "an aliquot of " + aliquot.get() + " in a vessel that starts with " + start.get(),
@@ -135,8 +138,8 @@ final class AxisCheck {
     }
     return needs("an aliquot volume above 0", f -> isPositive(f.aliquot()))
         .or(() -> needs("a final volume above 0", f -> isPositive(f.finalVolume())))
-        .or(() -> differing("aliquot", facts -> shown(facts.aliquot())))
-        .or(() -> differing("final volume", facts -> shown(facts.finalVolume())));
+        .or(() -> differing("aliquot", FlaskFacts::aliquot))
+        .or(() -> differing("final volume", FlaskFacts::finalVolume));
   }
 
   /** Whether concentration, digest and test portion lead to the unit that the method asks for. */
@@ -178,6 +181,9 @@ final class AxisCheck {
   }
 
   private Optional<Misfit> needs(String what, Predicate<FlaskFacts> holds) {
+    if (flasks.stream().allMatch(flask -> holds.test(flask.facts()))) {
+      return Optional.empty();
+    }
     String without =
         flasks.stream()
             .filter(flask -> !holds.test(flask.facts()))
@@ -189,19 +195,31 @@ final class AxisCheck {
             new Misfit("flask " + without + " without " + what, what + " for each flask"));
   }
 
-  private Optional<Misfit> differing(String what, Function<FlaskFacts, String> word) {
-    List<String> words = flasks.stream().map(f -> word.apply(f.facts())).distinct().toList();
-    return words.size() < 2
-        ? Optional.empty()
-        : Optional.of(
-            new Misfit("more than one " + what + ": " + String.join(", ", words), "one " + what));
+  /** Whether a fact that a series has once differs from flask to flask; each value is named. */
+  private Optional<Misfit> differing(String what, Function<FlaskFacts, ?> fact) {
+    Object first = fact.apply(flasks.get(0).facts());
+    if (flasks.stream().allMatch(flask -> fact.apply(flask.facts()).equals(first))) {
+      return Optional.empty();
+    }
+    String values =
+        flasks.stream()
+            .map(flask -> words(fact.apply(flask.facts())))
+            .distinct()
+            .collect(Collectors.joining(", "));
+    return Optional.of(new Misfit("more than one " + what + ": " + values, "one " + what));
+  }
+
+  private static String words(Object fact) {
+    if (fact instanceof Optional<?> optional) {
+      return optional.map(AxisCheck::words).orElse("none");
+    }
+    if (fact instanceof Preparation preparation) {
+      return preparation.shown().isEmpty() ? "none" : preparation.shown();
+    }
+    return fact.toString();
   }
 
   private static boolean isPositive(Optional<Measured> volume) {
     return volume.isPresent() && volume.get().quantity().value() > 0;
-  }
-
-  private static String shown(Optional<Measured> volume) {
-    return volume.map(Measured::toString).orElse("none");
   }
 }

@@ -69,6 +69,9 @@ final class Clusters {
    * addition or preparation is the same reading corrected: the later delivery counts.
    */
   private static List<Recorded> newestOfCorrected(List<Recorded> timed) {
+    if (timed.stream().mapToLong(Recorded::arrival).distinct().count() < 2) {
+      return timed;
+    }
     Map<Instance, Long> newest = new HashMap<>();
     Set<Instance> corrected = new HashSet<>();
     for (Recorded recorded : timed) {

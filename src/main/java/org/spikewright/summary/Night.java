@@ -6,6 +6,7 @@ import java.time.ZoneId;
 import java.util.List;
 import org.spikewright.judgement.Criteria;
 import org.spikewright.judgement.Outcome;
+import org.spikewright.judgement.Verdict;
 
 /**
  * Everything a revision of a lab day's summary is made from. The three sequences can be walked more
@@ -17,9 +18,9 @@ import org.spikewright.judgement.Outcome;
  * @param inProgress whether the lab day had not closed at that moment
  * @param zone in which times are shown
  * @param laboratory the laboratory's name; may be empty
- * @param seriesCount how many elements {@code outcomes} and {@code results} have
+ * @param seriesCount how many elements {@code results} has
  * @param results verdicts that need a person first, then by key
- * @param outcomes by key
+ * @param outcomes by key; only those that are {@link #isDetailed} need be there
  * @param files by arrival
  * @param refused by arrival and place
  * @param settings in order; the limits follow from {@code criteria} and need not be among them
@@ -38,4 +39,13 @@ public record Night(
     List<FileEntry> files,
     Iterable<RefusedRow> refused,
     List<Setting> settings,
-    Criteria criteria) {}
+    Criteria criteria) {
+
+  /** Up to so many series, the Series sheet holds every one. */
+  static final int EVERY_SERIES = 2000;
+
+  /** Whether the Series sheet of so many series holds those with this verdict. */
+  public static boolean isDetailed(int seriesCount, Verdict verdict) {
+    return seriesCount <= EVERY_SERIES || verdict != Verdict.REPORT;
+  }
+}

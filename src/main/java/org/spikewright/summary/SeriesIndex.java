@@ -30,9 +30,6 @@ record SeriesIndex(
     int differing,
     List<FlaskLine> plotted) {
 
-  /** Up to so many series, the Series sheet holds every one. */
-  static final int EVERY_SERIES = 2000;
-
   /** No series begins below this row, so that the sheet never continues on a second one. */
   static final int LAST_START = 1_000_000;
 
@@ -66,7 +63,7 @@ record SeriesIndex(
 
   /** Whether the Series sheet holds a series with this verdict, while it has room. */
   static boolean holds(Night night, Verdict verdict) {
-    return night.seriesCount() <= EVERY_SERIES || verdict != Verdict.REPORT;
+    return Night.isDetailed(night.seriesCount(), verdict);
   }
 
   static SeriesIndex of(Night night, Optional<SeriesKey> toPlot) {

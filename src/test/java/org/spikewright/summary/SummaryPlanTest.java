@@ -101,7 +101,7 @@ class SummaryPlanTest {
 
   @Test
   void onANightOfThousandsTheSeriesSheetHoldsThoseThatNeedAPerson() {
-    Night night = Nights.large(SeriesIndex.EVERY_SERIES + 50);
+    Night night = Nights.large(Night.EVERY_SERIES + 50);
     int needed = 0;
     for (ResultRow row : night.results()) {
       needed += row.verdict() == Verdict.REPORT ? 0 : 1;
@@ -111,7 +111,7 @@ class SummaryPlanTest {
         rows(sheet(plan, "Series")).stream()
             .filter(row -> row.size() == 2 && text(row.get(1)).startsWith("BW-"))
             .count();
-    assertThat(needed).isBetween(50, SeriesIndex.EVERY_SERIES);
+    assertThat(needed).isBetween(50, Night.EVERY_SERIES);
     assertThat(headings).isEqualTo(needed);
     assertThat(text(sheet(plan, "Series").head().get(1).get(0)))
         .contains("the " + needed + " series that need a person")

@@ -1,0 +1,64 @@
+package org.spikewright.app;
+
+import java.time.LocalDate;
+import java.util.HashSet;
+import java.util.List;
+import java.util.Set;
+import org.spikewright.analysis.Analysis;
+import org.spikewright.config.Settings;
+import org.spikewright.judgement.Judge;
+import org.spikewright.judgement.Outcome;
+import org.spikewright.ledger.LedgerView;
+import org.spikewright.ledger.ResultOrder;
+import org.spikewright.ledger.RevisionRecord;
+import org.spikewright.reading.Subject;
+import org.spikewright.summary.Night;
+import org.spikewright.summary.ResultRow;
+
+/**
+ * What the files of a revision are written from; each can be walked more than once.
+ *
+ * @param outcomes of every series, by key
+ * @param detailed of the series that the workbook shows flask by flask, by key
+ * @param byKey the results by key
+ * @param worstFirst the results that need a person first
+ * @param inMemory whether it may be walked by several threads
+ */
+record NightSource(
+    Iterable<Outcome> outcomes,
+    Iterable<Outcome> detailed,
+    Iterable<ResultRow> byKey,
+    Iterable<ResultRow> worstFirst,
+    boolean inMemory) {
+
+  /** From what was judged a moment ago. */
+  static NightSource kept(List<Outcome> outcomes, List<ResultRow> rows) {
+    return new NightSource(
+        outcomes,
+        outcomes.stream().filter(o -> Night.isDetailed(rows.size(), o.verdict())).toList(),
+        rows,
+        rows.stream().sorted(ResultOrder.BY_SEVERITY.comparator()).toList(),
+        true);
+  }
+
+  /** From the ledger, judged again: everything follows from what the revision fixed. */
+  static NightSource from(LedgerView ledger, Settings settings, RevisionRecord revision) {
+    LocalDate day = revision.labDay();
+    Judge judge = NightAnalysis.judge(settings, revision.moment());
+    DaySeries series = NightAnalysis.series(ledger, settings, day, revision.arrivalLimit());
+    Iterable<ResultRow> worstFirst =
+        ledger.results(day, revision.revision(), ResultOrder.BY_SEVERITY);
+    Set<Subject> detailed = new HashSet<>();
+    for (ResultRow row : worstFirst) {
+      if (Night.isDetailed(revision.results(), row.verdict())) {
+        detailed.add(row.key().subject());
+      }
+    }
+    return new NightSource(
+        new Analysis(series, judge),
+        new Analysis(series.of(detailed), judge),
+        ledger.results(day, revision.revision(), ResultOrder.BY_KEY),
+        worstFirst,
+        false);
+  }
+}
