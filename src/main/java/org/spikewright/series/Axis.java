@@ -118,11 +118,18 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
     return (stock + solvent) * addition.volume().in(aliquot.unit()) / aliquot.value();
   }
 
-  /** The unit of the axis that a flask leads to: its stock's, or that of its stated addition. */
+  /**
+   * The unit of the axis that a flask leads to: the result's where that is a concentration of the
+   * same kind, so that the axis reads as the result does; else its stock's, or that of its stated
+   * addition.
+   */
   static Unit unit(FlaskFacts facts) {
-    return facts.addition() instanceof OfStock spike
-        ? spike.stock().quantity().unit()
-        : facts.addition().amount().unit();
+    Unit added =
+        facts.addition() instanceof OfStock spike
+            ? spike.stock().quantity().unit()
+            : facts.addition().amount().unit();
+    Unit asked = facts.method().resultUnit();
+    return asked.dimension() == added.dimension() ? asked : added;
   }
 
   private static Quantity aliquot(FlaskFacts facts) {
