@@ -74,7 +74,7 @@ final class DesignFlags {
                   + " noise, not preparation.",
               "Prefer flasks as the unit of evidence."));
     }
-    series.notes().forEach(note -> flags.add(of(note)));
+    series.notes().forEach(note -> flags.add(of(note, series)));
     return flags;
   }
 
@@ -100,7 +100,7 @@ final class DesignFlags {
             "Look for a missing file or refused row; else prepare the missing flasks."));
   }
 
-  private static Flag of(SeriesNote note) {
+  private static Flag of(SeriesNote note, AdditionSeries series) {
     return switch (note.kind()) {
       case SUPERSEDED_READING ->
           Flags.plain(
@@ -112,7 +112,11 @@ final class DesignFlags {
           Flags.plain(
               FlagKind.SECOND_RUN,
               Weight.REVIEW,
-              "Measured a second time: flask " + note.words() + "; the first run gives the result.",
+              "Measured a second time: flask "
+                  + note.words()
+                  + "; the first run gives the result, the second "
+                  + secondResult(series)
+                  + ".",
               "Decide which run counts; both are on the Series sheet.");
       case EXPORTED_AGAIN ->
           Flags.plain(
@@ -139,5 +143,12 @@ final class DesignFlags {
               "Reading below range or missing, left out: " + note.words() + ".",
               "Check whether the flask should be read again.");
     };
+  }
+
+  /** What the second run alone would give. */
+  private static String secondResult(AdditionSeries series) {
+    return series.secondRun().map(SeriesFit::of).orElseThrow() instanceof SeriesFit.Fitted second
+        ? "would give " + Flags.n(second.result().value()) + " " + series.toResult().unit().symbol()
+        : "gives none by itself";
   }
 }

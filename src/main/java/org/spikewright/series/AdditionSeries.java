@@ -45,6 +45,28 @@ public record AdditionSeries(
     return flasks.stream().filter(Flask::isUsable).toList();
   }
 
+  /** The flasks that were measured a second time, as a series of their own; empty when none was. */
+  public Optional<AdditionSeries> secondRun() {
+    List<Flask> second =
+        flasks.stream().filter(flask -> !flask.secondRun().isEmpty()).map(Flask::second).toList();
+    return second.isEmpty()
+        ? Optional.empty()
+        : Optional.of(
+            new AdditionSeries(
+                key,
+                batchName,
+                role,
+                design,
+                preparation,
+                method,
+                axisUnit,
+                toResult,
+                second,
+                List.of(),
+                lastReadingAt,
+                timed));
+  }
+
   /** The number of readings, of all flasks, that count. */
   public int readings() {
     return flasks.stream().mapToInt(flask -> flask.readings().size()).sum();

@@ -3,6 +3,7 @@ package org.spikewright.series;
 import java.util.List;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Recorded;
+import org.spikewright.reading.Signal;
 
 /**
  * One flask of a series (in one vessel: its state after an addition), as the line sees it.
@@ -28,6 +29,50 @@ public record Flask(
     double meanSignal,
     double replicateSd,
     int numbers) {
+
+  /** A flask with the mean of its readings. */
+  static Flask of(FlaskDraft draft, double x, double volumeFactor) {
+    double baseline = draft.facts().blanks().baseline().orElse(0);
+    double[] signals =
+        draft.readings().stream()
+            .map(recorded -> recorded.reading().signal())
+            .filter(Signal.Value.class::isInstance)
+            .mapToDouble(signal -> ((Signal.Value) signal).value() - baseline)
+            .toArray();
+    double mean = mean(signals);
+    return new Flask(
+        draft.label(),
+        draft.facts(),
+        x,
+        volumeFactor,
+        draft.readings(),
+        draft.secondRun(),
+        mean,
+        standardDeviation(signals, mean),
+        signals.length);
+  }
+
+  private static double mean(double[] values) {
+    double sum = 0;
+    for (double value : values) {
+      sum += value;
+    }
+    return sum / values.length;
+  }
+
+  private static double standardDeviation(double[] values, double mean) {
+    double squares = 0;
+    for (double value : values) {
+      squares += (value - mean) * (value - mean);
+    }
+    return values.length < 2 ? Double.NaN : Math.sqrt(squares / (values.length - 1));
+  }
+
+  /** The same flask by its second run alone; without a second run it has no readings. */
+  public Flask second() {
+    FlaskDraft draft = new FlaskDraft(label + ", second run", facts, secondRun, List.of());
+    return of(draft, x, volumeFactor);
+  }
 
   /** Whether the flask takes part in the fit. */
   public boolean isUsable() {

@@ -31,7 +31,7 @@ final class SeriesBuilder {
     Axis axis = Axis.of(drafts.stream().map(FlaskDraft::facts).toList());
     List<Flask> flasks = new ArrayList<>();
     for (int i = 0; i < drafts.size(); i++) {
-      flasks.add(flask(drafts.get(i), axis.x()[i], axis.factor()[i]));
+      flasks.add(Flask.of(drafts.get(i), axis.x()[i], axis.factor()[i]));
     }
     flasks.sort(Comparator.comparingDouble(Flask::x).thenComparing(Flask::label));
     return new AdditionSeries(
@@ -59,43 +59,6 @@ final class SeriesBuilder {
                     draft.facts(),
                     List.of(recorded),
                     List.of()));
-  }
-
-  private static Flask flask(FlaskDraft draft, double x, double factor) {
-    double baseline = draft.facts().blanks().baseline().orElse(0);
-    double[] signals =
-        draft.readings().stream()
-            .map(recorded -> recorded.reading().signal())
-            .filter(Signal.Value.class::isInstance)
-            .mapToDouble(signal -> ((Signal.Value) signal).value() - baseline)
-            .toArray();
-    double mean = mean(signals);
-    return new Flask(
-        draft.label(),
-        draft.facts(),
-        x,
-        factor,
-        draft.readings(),
-        draft.secondRun(),
-        mean,
-        standardDeviation(signals, mean),
-        signals.length);
-  }
-
-  private static double mean(double[] values) {
-    double sum = 0;
-    for (double value : values) {
-      sum += value;
-    }
-    return sum / values.length;
-  }
-
-  private static double standardDeviation(double[] values, double mean) {
-    double squares = 0;
-    for (double value : values) {
-      squares += (value - mean) * (value - mean);
-    }
-    return values.length < 2 ? Double.NaN : Math.sqrt(squares / (values.length - 1));
   }
 
   private Instant lastReadingAt() {

@@ -62,6 +62,9 @@ record FlaskLine(
         int point = own.remove();
         lines.add(used(outcome.result().orElseThrow(), point, point == odd));
       }
+      if (!flask.secondRun().isEmpty()) {
+        lines.add(secondRun(flask.second()));
+      }
     }
     return lines;
   }
@@ -90,6 +93,12 @@ record FlaskLine(
   private static FlaskLine unused(Flask flask, Outcome outcome) {
     OptionalDouble none = OptionalDouble.empty();
     return new FlaskLine(flask, false, none, none, none, none, none, why(flask, outcome));
+  }
+
+  private static FlaskLine secondRun(Flask flask) {
+    OptionalDouble none = OptionalDouble.empty();
+    return new FlaskLine(
+        flask, false, none, none, none, none, none, "second run: the first gives the result");
   }
 
   private static String why(Flask flask, Outcome outcome) {

@@ -295,4 +295,21 @@ class JudgeTest {
     assertThat(series.startedAt()).contains(Bench.START);
     assertThat(series.lastReadingAt()).isEqualTo(Bench.START.plus(Duration.ofMinutes(3)));
   }
+
+  @Test
+  void aSecondRunIsFittedBesideTheFirstAndNeverAveraged() {
+    List<Recorded> readings = new ArrayList<>(madeUpSeries(1, 1.5, 2, 2.5));
+    for (int i = 0; i < 4; i++) {
+      readings.add(Bench.recorded(Bench.reading(Bench.madeUp(i), "1", 2 + 0.5 * i, 60 + i)));
+    }
+    Outcome outcome = judge(readings);
+    assertThat(outcome.result().orElseThrow().value()).isCloseTo(2, within(1e-12));
+    assertThat(outcome.flags())
+        .filteredOn(flag -> flag.kind() == FlagKind.SECOND_RUN)
+        .singleElement()
+        .extracting(Flag::sentence)
+        .asString()
+        .contains("the second would give 4.00 mg/L");
+    assertThat(outcome.verdict()).isEqualTo(Verdict.REVIEW);
+  }
 }
