@@ -1,13 +1,23 @@
 package org.spikewright.app;
 
-import java.util.Optional;
+import java.io.IOException;
+import java.io.InputStream;
+import java.io.UncheckedIOException;
+import java.util.Properties;
 
-/** The program's version, as the jar's manifest has it. */
+/** The program's version, as the build wrote it down. */
 final class Version {
-  /** {@code development} when the program runs from its class files. */
-  static final String NUMBER =
-      Optional.ofNullable(Version.class.getPackage().getImplementationVersion())
-          .orElse("development");
+  static final String NUMBER = read();
 
   private Version() {}
+
+  private static String read() {
+    Properties properties = new Properties();
+    try (InputStream in = Version.class.getResourceAsStream("version.properties")) {
+      properties.load(in);
+    } catch (IOException unreadable) {
+      throw new UncheckedIOException(unreadable);
+    }
+    return properties.getProperty("version");
+  }
 }
