@@ -32,6 +32,7 @@ final class AxisCheck {
     AxisCheck check = new AxisCheck(flasks);
     return check
         .differing("design", facts -> facts.design().word())
+        .or(() -> check.differing("role", facts -> facts.role().word()))
         .or(() -> check.differing("preparation", facts -> facts.preparation().toString()))
         .or(() -> check.differing("method blank", facts -> facts.blanks().method().toString()))
         .or(() -> check.differing("kind of concentration", AxisCheck::kinds))
@@ -95,7 +96,17 @@ final class AxisCheck {
     return needs("a volume of stock as its addition", f -> f.addition() instanceof OfStock)
         .or(() -> differing("aliquot", facts -> shown(facts.aliquot())))
         .or(() -> differing("start volume", facts -> shown(facts.startVolume())))
+        .or(this::stocks)
         .or(this::startVolume);
+  }
+
+  /** Of a total volume, what each stock brought cannot be told. */
+  private Optional<Misfit> stocks() {
+    AxisCheck spiked =
+        new AxisCheck(flasks.stream().filter(f -> !f.facts().addition().isNone()).toList());
+    return spiked
+        .differing("stock", facts -> ((OfStock) facts.addition()).stock().toString())
+        .or(() -> spiked.differing("solvent blank", facts -> shown(facts.blanks().solvent())));
   }
 
   private Optional<Misfit> startVolume() {
@@ -201,7 +212,7 @@ final class AxisCheck {
     return volume.isPresent() && volume.get().quantity().value() > 0;
   }
 
-  private static String shown(Optional<Measured> volume) {
-    return volume.map(Measured::toString).orElse("none");
+  private static String shown(Optional<Measured> amount) {
+    return amount.map(Measured::toString).orElse("none");
   }
 }
