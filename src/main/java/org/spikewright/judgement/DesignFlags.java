@@ -45,7 +45,7 @@ final class DesignFlags {
     return Flags.plain(
         FlagKind.WAITING,
         Weight.NOTE,
-        series.usableFlasks().size()
+        series.preparedFlasks()
             + " of "
             + series.method().expectedFlasks()
             + " flasks are here; the others are waited for until "
@@ -80,7 +80,7 @@ final class DesignFlags {
 
   private static void fewFlasks(AdditionSeries series, List<Flag> flags) {
     int expected = series.method().expectedFlasks();
-    int flasks = series.usableFlasks().size();
+    int flasks = series.preparedFlasks();
     long levels = series.usableFlasks().stream().mapToDouble(Flask::x).distinct().count();
     if (flasks >= expected) {
       return;

@@ -50,7 +50,7 @@ public final class Judge {
   /** The instant up to which a series is waited for; empty when it is not short of flasks. */
   public Optional<Instant> waitingUntil(Gathered gathered) {
     if (gathered instanceof AdditionSeries series
-        && series.usableFlasks().size() < series.method().expectedFlasks()) {
+        && series.preparedFlasks() < series.method().expectedFlasks()) {
       Instant until = series.lastReadingAt().plus(waitForFlasks);
       return until.isAfter(moment) ? Optional.of(until) : Optional.empty();
     }

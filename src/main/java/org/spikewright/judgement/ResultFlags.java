@@ -184,7 +184,7 @@ final class ResultFlags {
 
   private Optional<Flag> overTrustedRange() {
     OptionalDouble trusted = result.series().method().trustedSignal();
-    double top = result.flasks().stream().mapToDouble(Flask::meanSignal).max().orElse(0);
+    double top = result.flasks().stream().mapToDouble(Flask::meanAsRead).max().orElse(0);
     if (trusted.isEmpty() || top <= trusted.getAsDouble()) {
       return Optional.empty();
     }

@@ -67,6 +67,18 @@ public record AdditionSeries(
                 timed));
   }
 
+  /**
+   * How many flasks were prepared of those that take part in the fit: fewer than its points where
+   * each reading counts as a flask.
+   */
+  public int preparedFlasks() {
+    return (int)
+        usableFlasks().stream()
+            .map(flask -> flask.readings().get(0).reading().flask())
+            .distinct()
+            .count();
+  }
+
   /** The number of readings, of all flasks, that count. */
   public int readings() {
     return flasks.stream().mapToInt(flask -> flask.readings().size()).sum();

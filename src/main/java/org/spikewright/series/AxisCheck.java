@@ -34,6 +34,7 @@ final class AxisCheck {
     AxisCheck check = new AxisCheck(flasks);
     return check
         .differing("design", facts -> facts.design().word())
+        .or(() -> check.differing("role", facts -> facts.role().word()))
         .or(() -> check.differing("preparation", FlaskFacts::preparation))
         .or(() -> check.differing("method blank", facts -> facts.blanks().method()))
         .or(() -> check.differing("kind of concentration", AxisCheck::kinds))
@@ -99,7 +100,17 @@ final class AxisCheck {
     return needs("a volume of stock as its addition", f -> f.addition() instanceof OfStock)
         .or(() -> differing("aliquot", FlaskFacts::aliquot))
         .or(() -> differing("start volume", FlaskFacts::startVolume))
+        .or(this::stocks)
         .or(this::startVolume);
+  }
+
+  /** Of a total volume, what each stock brought cannot be told. */
+  private Optional<Misfit> stocks() {
+    AxisCheck spiked =
+        new AxisCheck(flasks.stream().filter(f -> !f.facts().addition().isNone()).toList());
+    return spiked
+        .differing("stock", facts -> ((OfStock) facts.addition()).stock())
+        .or(() -> spiked.differing("solvent blank", facts -> facts.blanks().solvent()));
   }
 
   private Optional<Misfit> startVolume() {
@@ -197,6 +208,9 @@ final class AxisCheck {
 
   /** Whether a fact that a series has once differs from flask to flask; each value is named. */
   private Optional<Misfit> differing(String what, Function<FlaskFacts, ?> fact) {
+    if (flasks.isEmpty()) {
+      return Optional.empty();
+    }
     Object first = fact.apply(flasks.get(0).facts());
     if (flasks.stream().allMatch(flask -> fact.apply(flask.facts()).equals(first))) {
       return Optional.empty();

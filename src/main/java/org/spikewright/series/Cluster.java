@@ -19,4 +19,10 @@ record Cluster(
     String batch,
     String batchName,
     List<String> alsoNamed,
-    List<Recorded> readings) {}
+    List<Recorded> readings) {
+
+  /** The same with other readings. */
+  Cluster with(List<Recorded> others) {
+    return new Cluster(labDay, batch, batchName, alsoNamed, others);
+  }
+}

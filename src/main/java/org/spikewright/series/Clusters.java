@@ -5,14 +5,14 @@ import java.time.LocalDate;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.HashMap;
-import java.util.HashSet;
 import java.util.List;
 import java.util.Map;
-import java.util.Set;
+import java.util.Optional;
 import java.util.SortedMap;
 import java.util.TreeMap;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
+import org.spikewright.reading.Signal;
 
 /** Divides the readings of one subject by batch, or by pauses where nothing else delimits them. */
 final class Clusters {
@@ -42,7 +42,8 @@ final class Clusters {
       }
     }
     List<Cluster> clusters = new ArrayList<>(timed(newestOfCorrected(timed)));
-    clusters.addAll(UntimedBatches.merge(untimed, rules.calendar()));
+    UntimedBatches.merge(untimed, rules.calendar())
+        .forEach(cluster -> clusters.add(cluster.with(newestOfCorrected(cluster.readings()))));
     clusters.sort(
         Comparator.comparing(Cluster::labDay)
             .thenComparing(Cluster::batch)
@@ -56,45 +57,59 @@ final class Clusters {
         .add(recorded);
   }
 
-  private record Instance(Instant time, String replicate, String signal) {
-    static Instance of(Recorded recorded) {
+  /** What tells one act of reading from another, whatever the bench said was in the flask. */
+  private record Instance(String when, String replicate, String signal) {
+    /** Empty where nothing tells: the flask's own label then makes the identity. */
+    static Optional<Instance> of(Recorded recorded) {
       Reading reading = recorded.reading();
-      return new Instance(
-          reading.measuredAt().orElseThrow(), reading.replicate(), reading.signal().text());
+      Optional<Instant> time = reading.measuredAt();
+      if (time.isPresent()) {
+        return Optional.of(
+            new Instance(time.get().toString(), reading.replicate(), reading.signal().text()));
+      }
+      if (reading.flaskMapped() || !(reading.signal() instanceof Signal.Value)) {
+        return Optional.empty();
+      }
+      // An order in the file counts within an addition, so that it moves when that is corrected.
+      String replicate = reading.replicateMapped() ? reading.replicate() : "";
+      String preparation = reading.facts().preparation().shown();
+      return Optional.of(new Instance(preparation, replicate, reading.signal().text()));
     }
   }
 
   /**
-   * A timed reading that comes again from another delivery with the same signal but another
-   * addition or preparation is the same reading corrected: the later delivery counts.
+   * A reading that comes again from another delivery with the same signal but another addition or
+   * preparation is the same reading corrected: the later delivery counts. Without a time, readings
+   * of one batch and preparation are told apart by their signals alone where no flask is named.
    */
-  private static List<Recorded> newestOfCorrected(List<Recorded> timed) {
-    if (timed.stream().mapToLong(Recorded::arrival).distinct().count() < 2) {
-      return timed;
+  private static List<Recorded> newestOfCorrected(List<Recorded> readings) {
+    if (readings.stream().mapToLong(Recorded::arrival).distinct().count() < 2) {
+      return readings;
     }
-    Map<Instance, Long> newest = new HashMap<>();
-    Set<Instance> corrected = new HashSet<>();
-    for (Recorded recorded : timed) {
-      Instance instance = Instance.of(recorded);
-      long before = newest.getOrDefault(instance, recorded.arrival());
-      newest.put(instance, Math.max(before, recorded.arrival()));
-      if (before != recorded.arrival()) {
-        corrected.add(instance);
-      }
-    }
-    if (corrected.isEmpty()) {
-      return timed;
+    Map<Instance, List<Recorded>> instances = new HashMap<>();
+    for (Recorded recorded : readings) {
+      Instance.of(recorded)
+          .ifPresent(i -> instances.computeIfAbsent(i, k -> new ArrayList<>()).add(recorded));
     }
     List<Recorded> kept = new ArrayList<>();
-    for (Recorded recorded : timed) {
-      Instance instance = Instance.of(recorded);
-      if (!corrected.contains(instance)) {
-        kept.add(recorded);
-      } else if (recorded.arrival() == newest.get(instance)) {
-        kept.add(recorded.replacingOneMore());
+    for (Recorded recorded : readings) {
+      List<Recorded> same =
+          Instance.of(recorded).map(instances::get).orElseGet(() -> List.of(recorded));
+      if (same.stream().noneMatch(other -> corrects(other, recorded))) {
+        boolean corrects = same.stream().anyMatch(other -> corrects(recorded, other));
+        kept.add(corrects ? recorded.replacingOneMore() : recorded);
       }
     }
     return kept;
+  }
+
+  private static boolean corrects(Recorded later, Recorded earlier) {
+    return later.arrival() > earlier.arrival() && !flaskOf(later).equals(flaskOf(earlier));
+  }
+
+  private static String flaskOf(Recorded recorded) {
+    Reading reading = recorded.reading();
+    return reading.facts().preparation().shown() + '\n' + reading.flask();
   }
 
   private List<Cluster> timed(List<Recorded> readings) {

@@ -79,6 +79,11 @@ public record Flask(
     return numbers > 0;
   }
 
+  /** Mean of the readings as the instrument showed them, the baseline included. */
+  public double meanAsRead() {
+    return meanSignal + facts.blanks().baseline().orElse(0);
+  }
+
   /** The signal that the line is fitted to. */
   public double y() {
     return meanSignal * volumeFactor;

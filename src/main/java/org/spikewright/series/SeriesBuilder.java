@@ -49,7 +49,10 @@ final class SeriesBuilder {
         drafts.get(0).readings().get(0).reading().measuredAt().isPresent());
   }
 
-  /** Each reading as a flask of its own, where the laboratory asks for that. */
+  /**
+   * Each reading as a flask of its own, where the laboratory asks for that; a second run stays with
+   * the first of them.
+   */
   private static Stream<FlaskDraft> readingByReading(FlaskDraft draft) {
     return draft.readings().stream()
         .map(
@@ -58,7 +61,7 @@ final class SeriesBuilder {
                     draft.label() + ", reading " + (draft.readings().indexOf(recorded) + 1),
                     draft.facts(),
                     List.of(recorded),
-                    List.of()));
+                    recorded.equals(draft.readings().get(0)) ? draft.secondRun() : List.of()));
   }
 
   private Instant lastReadingAt() {

@@ -6,6 +6,7 @@ import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Preparation;
+import org.spikewright.reading.Role;
 
 /**
  * From the axis to the result: {@code result = (x · dilution − methodBlank) · perSample ·
@@ -39,7 +40,7 @@ public record ToResult(
         preparation.dryMassFraction().isPresent()
             ? new Unit(asked.symbol() + " dry", asked.dimension(), asked.perBase())
             : asked;
-    Optional<Measured> blank = facts.blanks().method();
+    Optional<Measured> blank = methodBlank(facts);
     return new ToResult(
         preparation.dilution() * axis.dilution(),
         blank.map(b -> b.in(axis.unit())).orElse(0.0),
@@ -47,6 +48,11 @@ public record ToResult(
         perSample / dry,
         digested ? axis.unit().perBase() / asked.perBase() : axis.unit().to(asked),
         unit);
+  }
+
+  /** A blank measured as a series is the blank: taking it off itself would leave nothing. */
+  private static Optional<Measured> methodBlank(FlaskFacts facts) {
+    return facts.role() == Role.BLANK ? Optional.empty() : facts.blanks().method();
   }
 
   private static double litres(Preparation preparation) {
