@@ -13,6 +13,7 @@ import org.spikewright.intake.Inbox;
 import org.spikewright.intake.Journalled;
 import org.spikewright.intake.Sighting;
 import org.spikewright.ledger.Arrived;
+import org.spikewright.ledger.LedgerFault;
 
 /**
  * Files recorded deliveries away. The ledger comes first: a delivery that is recorded but not filed
@@ -38,7 +39,7 @@ final class Filing {
   void file(Arrived arrived, Sighting sighting) throws IOException {
     if (station.settings().leave()) {
       inbox.handled(sighting);
-      station.ledger().filed(arrived.number(), "left at " + arrived.name());
+      station.ledger().filed(arrived.number(), left(arrived));
       return;
     }
     Filed filed = move(arrived, sighting, arrived.archiveName());
@@ -63,6 +64,10 @@ final class Filing {
   void finishInterrupted() {
     for (Arrived arrived : station.ledger().unfiled()) {
       try {
+        if (station.settings().leave()) {
+          station.ledger().filed(arrived.number(), left(arrived));
+          continue;
+        }
         String target = arrived.archiveName();
         Filed filed = resume(arrived, target);
         if (filed instanceof Filed.Occupied) {
@@ -70,18 +75,25 @@ final class Filing {
           filed = resume(arrived, target);
         }
         finish(arrived, filed, target);
-      } catch (IOException trouble) {
+      } catch (IOException | LedgerFault trouble) {
         waits(arrived, trouble.getMessage());
+      } catch (RuntimeException fault) {
+        // One delivery that cannot be filed must not keep the others from being read.
+        LOG.debug("fault at file={}", arrived.name(), fault);
+        waits(arrived, "a fault of the program (" + fault + ")");
       }
     }
   }
 
-  private Filed resume(Arrived arrived, String target) throws IOException {
-    if (arrived.outcome() == Arrived.Result.REFUSED) {
-      archive.note(target, Beside.REASON, reasonText(arrived));
-    }
+  private static String left(Arrived arrived) {
+    return "left at " + arrived.name();
+  }
+
+  private Filed resume(Arrived arrived, String target) {
     Path from = station.settings().watch().resolve(arrived.name());
-    return archive.resume(from, arrived.sha256(), target);
+    return arrived.outcome() == Arrived.Result.REFUSED
+        ? archive.resumeRefusal(from, arrived.sha256(), target, reasonText(arrived))
+        : archive.resume(from, arrived.sha256(), target);
   }
 
   /** Somebody else's file lies under the promised name and stays there. */

@@ -1,6 +1,8 @@
 package org.spikewright.app;
 
 import java.io.PrintWriter;
+import org.slf4j.Logger;
+import org.slf4j.LoggerFactory;
 import picocli.CommandLine;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Model.CommandSpec;
@@ -27,6 +29,8 @@ import picocli.CommandLine.Spec;
       "(try, once --strict); 2 configuration; 3 fault; 4 another process owns the ledger."
     })
 public final class Main implements Runnable {
+  private static final Logger LOG = LoggerFactory.getLogger(Main.class);
+
   @Spec private CommandSpec spec;
 
   /** For the command line alone. */
@@ -34,10 +38,29 @@ public final class Main implements Runnable {
 
   /** Runs a command and ends the process with its exit code. */
   public static void main(String[] args) {
+    endWhenBroken();
     int code = run(args);
     if (code != ExitCode.DONE) {
       System.exit(code);
     }
+  }
+
+  /**
+   * After an error of the virtual machine, such as memory used up, nothing in the process is to be
+   * trusted: it ends at once, as after a power cut, and whoever started it may start it again.
+   */
+  static void endWhenBroken() {
+    Thread.setDefaultUncaughtExceptionHandler(
+        (thread, fault) -> {
+          try {
+            LOG.error("the program cannot go on: {}", fault.toString(), fault);
+          } finally {
+            boolean isMain = "main".equals(thread.getName());
+            if (isMain || fault instanceof VirtualMachineError) {
+              Runtime.getRuntime().halt(ExitCode.FAULT);
+            }
+          }
+        });
   }
 
   /** Runs a command and returns its exit code. */

@@ -64,16 +64,26 @@ final class NightlySummary {
    */
   List<Issued> makeOwed(Instant due, boolean includeInProgress) throws WriteFault {
     List<Issued> issued = new ArrayList<>(issueInterrupted());
+    Optional<RuntimeException> first = Optional.empty();
     for (LocalDate day : ledger.owed(due, includeInProgress)) {
       if (stop.isRequested()) {
         break;
       }
-      Optional<RevisionRecord> revision = revise(day);
-      if (revision.isPresent()) {
-        issued.add(issue(revision.get()));
+      try {
+        Optional<RevisionRecord> revision = revise(day);
+        if (revision.isPresent()) {
+          issued.add(issue(revision.get()));
+        }
+      } catch (RuntimeException fault) {
+        // A lab day that cannot be judged must not keep the others from being summarised.
+        LOG.debug("fault at lab_day={}", day, fault);
+        first = first.or(() -> Optional.of(fault));
       }
     }
     progress.done();
+    if (first.isPresent()) {
+      throw first.get();
+    }
     return issued;
   }
 
@@ -81,12 +91,15 @@ final class NightlySummary {
   List<Issued> issueInterrupted() throws WriteFault {
     List<Issued> issued = new ArrayList<>();
     for (RevisionRecord revision : ledger.owedRevisions()) {
+      if (stop.isRequested()) {
+        break;
+      }
       issued.add(issue(revision));
     }
     return issued;
   }
 
-  /** Judges a lab day's series and records what is new; empty when nothing is. */
+  /** Judges a lab day's series and records what is new; empty when nothing is, or at a stop. */
   private Optional<RevisionRecord> revise(LocalDate day) {
     Settings settings = station.settings();
     Instant now = station.clock().instant();
@@ -104,6 +117,9 @@ final class NightlySummary {
       Analysis analysis = analysis(settings, day, start.arrivalLimit(), writer.moment());
       long count = 0;
       for (Outcome outcome : analysis) {
+        if (stop.isRequested()) {
+          return Optional.empty();
+        }
         writer.result(ResultRow.of(outcome), InputsHash.of(outcome.gathered(), settings.sha256()));
         progress.at("judging series", ++count);
       }
