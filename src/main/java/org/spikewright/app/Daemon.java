@@ -53,7 +53,10 @@ final class Daemon {
     Inbox inbox = new Inbox(settings.watch(), new SettleRule(settings.settle()));
     this.round =
         new Round(
-            inbox, new Reception(station, stop, Progress.none()), new Filing(station, inbox), stop);
+            inbox,
+            new Reception(station, stop, Progress.none())::receive,
+            new Filing(station, inbox),
+            stop);
     this.summary = new NightlySummary(station, Progress.none(), stop);
     this.steady = new Steady(station.clock());
   }

@@ -46,7 +46,11 @@ final class Once {
     Progress progress = Progress.onTerminal();
     Inbox inbox = new Inbox(station.settings().watch(), new SettleRule(settle));
     Round round =
-        new Round(inbox, new Reception(station, stop, progress), new Filing(station, inbox), stop);
+        new Round(
+            inbox,
+            new Reception(station, stop, progress)::receive,
+            new Filing(station, inbox),
+            stop);
     Steady steady = new Steady(station.clock());
     Instant patience = steady.now().plus(settle).plus(PATIENCE);
     List<Arrived> received = new ArrayList<>();

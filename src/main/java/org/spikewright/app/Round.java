@@ -27,17 +27,22 @@ final class Round {
    */
   record Report(List<Arrived> received, boolean settling) {}
 
+  /** Takes one file in. */
+  interface Receiver {
+    Reception.Received receive(Sighting file) throws IOException;
+  }
+
   private final Inbox inbox;
-  private final Reception reception;
+  private final Receiver receiver;
   private final Filing filing;
   private final Stop stop;
   private final Standing failing = new Standing(LOG);
   private final Standing waiting = new Standing(LOG);
   private final Retries retries = new Retries();
 
-  Round(Inbox inbox, Reception reception, Filing filing, Stop stop) {
+  Round(Inbox inbox, Receiver receiver, Filing filing, Stop stop) {
     this.inbox = inbox;
-    this.reception = reception;
+    this.receiver = receiver;
     this.filing = filing;
     this.stop = stop;
   }
@@ -75,7 +80,7 @@ final class Round {
   private void take(Sighting file, Instant now, List<Arrived> received) {
     String key = file.path().toString();
     try {
-      Reception.Received outcome = reception.receive(file);
+      Reception.Received outcome = receiver.receive(file);
       if (outcome instanceof Reception.Received.Recorded recorded) {
         received.add(recorded.arrived());
         filing.file(recorded.arrived(), file);

@@ -8,7 +8,6 @@ import java.nio.file.Files;
 import java.nio.file.Path;
 import java.time.Duration;
 import java.time.Instant;
-import java.util.List;
 import org.junit.jupiter.api.AfterEach;
 import org.junit.jupiter.api.BeforeEach;
 import org.junit.jupiter.api.Test;
@@ -150,32 +149,5 @@ class DaemonTest {
     assertThat(log.with("furnace/run.csv")).hasSize(1);
     assertThat(log.with("furnace/run.csv").get(0)).contains("furnace.toml", "faulty");
     assertThat(lab.inbox().resolve("furnace/run.csv")).exists();
-  }
-
-  @Test
-  void aFileThatBringsOutAFaultOfTheProgramWaitsWhileOthersGoOn() {
-    lab.write(
-        "mappings/label.toml",
-        Laboratory.mapping("label", "")
-            .replace("sample   = \"sample\"\n", "")
-            .replace(
-                "[fixed]",
-                "[label]\ncolumn = \"sample\"\npattern = '(?<id>(B|W)+)'\nsample = \"id\"\n[fixed]"));
-    start();
-    lab.drop("a/unclaimed.csv", "");
-    // Deep enough for the stack to end within the pattern.
-    lab.drop("label/a-poison.csv", Exports.of("BW".repeat(30_000)));
-    lab.drop("label/b-good.csv", Exports.of("BW"));
-
-    awaitDone("label/b-good.csv");
-
-    await().atMost(PATIENCE).until(() -> !log.with("label/a-poison.csv could not").isEmpty());
-    await()
-        .during(Duration.ofSeconds(2))
-        .until(() -> log.with("label/a-poison.csv could not").size() == 1);
-    assertThat(log.with("arrived file=label/a-poison.csv")).hasSize(1);
-    assertThat(lab.inbox().resolve("label/a-poison.csv")).exists();
-    List<String> fatal = log.with("not to be trusted");
-    assertThat(fatal).isEmpty();
   }
 }
