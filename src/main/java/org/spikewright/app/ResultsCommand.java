@@ -27,7 +27,7 @@ import picocli.CommandLine.Spec;
 @Command(
     name = "results",
     mixinStandardHelpOptions = true,
-    description = "Prints the newest results of every lab day as CSV (UTF-8); writes nothing.",
+    description = "Prints the newest results of every lab day as CSV (UTF-8); changes nothing.",
     footer = {"", "Example: spikewright results --conf spikewright.toml > results.csv"})
 final class ResultsCommand implements Callable<Integer> {
   @Mixin private ConfOption conf;

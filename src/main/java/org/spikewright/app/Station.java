@@ -103,7 +103,8 @@ record Station(
     try {
       Files.createDirectories(folder);
     } catch (IOException trouble) {
-      problems.add("the folder " + folder + " cannot be made: " + trouble);
+      String why = Files.exists(folder) ? "a file of that name is there" : trouble.toString();
+      problems.add("the folder " + folder + " cannot be made: " + why);
     }
   }
 
