@@ -8,6 +8,7 @@ import java.nio.file.Path;
 import java.util.List;
 import java.util.Map;
 import java.util.TreeMap;
+import java.util.function.Function;
 import java.util.stream.Stream;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
@@ -20,38 +21,37 @@ class MachineTest {
   /** What a machine may be set to. */
   private static final Map<String, List<String>> MACHINES =
       Map.of(
-          "Turkish", List.of("-Duser.language=tr", "-Duser.country=TR"),
-          "Hindi digits",
+          "Turkish, in Apia",
+              List.of("-Duser.language=tr", "-Duser.country=TR", "-Duser.timezone=Pacific/Apia"),
+          "Hindi digits, Latin-1",
               List.of(
                   "-Duser.language=hi",
                   "-Duser.country=IN",
                   "-Duser.extensions=u-nu-deva",
-                  "-Duser.timezone=Asia/Kolkata"),
-          "Apia", List.of("-Duser.timezone=Pacific/Apia"),
-          "Latin-1", List.of("-Dfile.encoding=ISO-8859-1", "-Duser.language=de"));
+                  "-Dfile.encoding=ISO-8859-1"));
 
   @TempDir Path folder;
 
   @Test
   void everyMachineGivesTheSameResultsByteForByte() throws IOException {
-    Map<String, String> plain = demo("plain", List.of());
+    Map<String, String> plain = demo("plain", args -> InProcess.run(args));
     assertThat(plain.keySet())
         .contains("results-2026-03-04-r1.csv", "flasks-2026-03-04-r1.csv", "printed");
-    assertThat(plain.get("printed"))
-        .contains("µg/L")
-        .hasLineCount(plain.get("results-2026-03-04-r1.csv").split("\n").length);
+    assertThat(plain.get("printed")).contains("µg/L").hasSizeGreaterThan(1000);
 
     for (Map.Entry<String, List<String>> machine : MACHINES.entrySet()) {
-      assertThat(demo(machine.getKey(), machine.getValue())).as(machine.getKey()).isEqualTo(plain);
+      Map<String, String> there =
+          demo(machine.getKey(), args -> Program.run(machine.getValue(), args));
+      assertThat(there).as(machine.getKey()).isEqualTo(plain);
     }
   }
 
   /** Every CSV that the demo writes on such a machine, and what results prints there. */
-  private Map<String, String> demo(String name, List<String> machine) throws IOException {
-    Path copy = folder.resolve(name.replace(' ', '-'));
-    Program.Ended ended = Program.run(machine, "demo", "--from", EXAMPLE, "--to", copy.toString());
-    assertThat(ended.code()).as(name + ": " + ended).isEqualTo(ExitCode.DONE);
+  private Map<String, String> demo(String name, Function<String[], Program.Ended> machine)
+      throws IOException {
+    Path copy = folder.resolve(name.replaceAll("\\W+", "-"));
     Map<String, String> texts = new TreeMap<>();
+    said(machine, "demo", "--from", EXAMPLE, "--to", copy.toString());
     try (Stream<Path> files = Files.list(copy.resolve("summaries"))) {
       for (Path file : (Iterable<Path>) files::iterator) {
         if (file.toString().endsWith(".csv")) {
@@ -59,10 +59,14 @@ class MachineTest {
         }
       }
     }
-    Program.Ended printed =
-        Program.run(machine, "results", "--conf", copy.resolve("spikewright.toml").toString());
-    assertThat(printed.code()).as(name + ": " + printed).isEqualTo(ExitCode.DONE);
-    texts.put("printed", printed.out());
+    String conf = copy.resolve("spikewright.toml").toString();
+    texts.put("printed", said(machine, "results", "--conf", conf));
     return texts;
+  }
+
+  private static String said(Function<String[], Program.Ended> machine, String... args) {
+    Program.Ended ended = machine.apply(args);
+    assertThat(ended.code()).as(ended.toString()).isEqualTo(ExitCode.DONE);
+    return ended.out();
   }
 }
