@@ -54,7 +54,9 @@ final class ConfOption {
                   command
                       .commandLine()
                       .getErr()
-                      .println("mapping not used until it is corrected: " + fault));
+                      .println(
+                          "mapping not used until it is corrected and the program started again: "
+                              + fault));
       command.commandLine().getErr().flush();
       return body.applyAsInt(station);
     }

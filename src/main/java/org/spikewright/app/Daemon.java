@@ -23,6 +23,9 @@ final class Daemon {
   /** Within this the daemon is down after it was told to stop. */
   private static final Duration PATIENCE = Duration.ofSeconds(8);
 
+  /** How a process ends that was told to. */
+  private static final int STOPPED = 143;
+
   private static final Duration SUMMARY_CHECK = Duration.ofSeconds(20);
 
   private final Station station;
@@ -32,14 +35,28 @@ final class Daemon {
   private final Round round;
   private final NightlySummary summary;
   private final Steady steady;
+  private final Duration summaryCheck;
 
   Daemon(Station station) {
+    this(station, SUMMARY_CHECK);
+  }
+
+  /**
+   * A daemon.
+   *
+   * @param summaryCheck how often it asks whether a summary is due
+   */
+  Daemon(Station station, Duration summaryCheck) {
     this.station = station;
+    this.summaryCheck = summaryCheck;
     Settings settings = station.settings();
     Inbox inbox = new Inbox(settings.watch(), new SettleRule(settings.settle()));
     this.round =
         new Round(
-            inbox, new Reception(station, stop, Progress.none()), new Filing(station, inbox), stop);
+            inbox,
+            new Reception(station, stop, Progress.none())::receive,
+            new Filing(station, inbox),
+            stop);
     this.summary = new NightlySummary(station, Progress.none(), stop);
     this.steady = new Steady(station.clock());
   }
@@ -47,17 +64,33 @@ final class Daemon {
   /** Runs until the process is told to end, and returns when everything is closed. */
   void run() throws InterruptedException {
     Runtime.getRuntime().addShutdownHook(new Thread(this::end, "stop"));
+    try {
+      work();
+    } finally {
+      ended.countDown();
+    }
+  }
+
+  private void work() throws InterruptedException {
     Waker waker = new Waker(PATIENCE);
     LOG.info("watching folder={} every={} s", station.settings().watch(), seconds());
     waker.every(station.settings().lookEvery(), "look into the watched folder", this::look);
-    waker.every(SUMMARY_CHECK, "make summaries that are due", this::summarise);
+    waker.every(summaryCheck, "make summaries that are due", this::summarise);
     while (!stop.isRequested()) {
       Thread.sleep(100);
     }
-    waker.close();
+    if (!waker.stop(PATIENCE)) {
+      // Closing the ledger under a running task is no clean end either; the system frees the lock.
+      LOG.warn("did not stop in time; what was under way is forgotten at the next start");
+      Runtime.getRuntime().halt(STOPPED);
+    }
     station.close();
     LOG.info("stopped");
-    ended.countDown();
+  }
+
+  /** Asks it to end; {@link #run} returns soon after. */
+  void stop() {
+    stop.request();
   }
 
   private String seconds() {
@@ -95,7 +128,7 @@ final class Daemon {
     stop.request();
     try {
       if (!ended.await(PATIENCE.toMillis() + 1000, TimeUnit.MILLISECONDS)) {
-        LOG.warn("did not stop in time; what was under way is forgotten at the next start");
+        LOG.warn("the end takes too long and is cut short; nothing that is recorded is lost");
       }
     } catch (InterruptedException interrupted) {
       Thread.currentThread().interrupt();

@@ -38,6 +38,9 @@ final class DemoCommand implements Callable<Integer> {
    */
   private static final Instant DEMO_NOW = Instant.parse("2026-03-05T03:45:00Z");
 
+  /** Lies in every copy: a folder without it is never replaced. */
+  private static final String MARK = "made-by-demo.txt";
+
   @Mixin private ConfOption conf;
   @Spec private CommandSpec spec;
 
@@ -61,10 +64,15 @@ final class DemoCommand implements Callable<Integer> {
       return problems(
           List.of("no example in " + example + "; run the demo from the project's folder"));
     }
-    if (Files.exists(copy) && !Files.isRegularFile(copy.resolve("spikewright.toml"))) {
+    if (within(example, copy) || within(copy, example)) {
+      return problems(List.of("the copy " + copy + " must lie apart from the example " + example));
+    }
+    if (Files.exists(copy) && !Files.isRegularFile(copy.resolve(MARK))) {
       return problems(List.of(copy + " is there and is no demo; it is left as it is"));
     }
     remove(copy);
+    Files.createDirectories(copy);
+    Files.writeString(copy.resolve(MARK), "Made by the demo, which replaces this folder.\n");
     copy(example, copy);
     Loaded<Settings> loaded = Settings.load(copy.resolve("spikewright.toml"));
     return loaded instanceof Loaded.Good<Settings> good
@@ -73,6 +81,10 @@ final class DemoCommand implements Callable<Integer> {
         : problems(
             ((Loaded.Faulty<Settings>) loaded)
                 .faults().stream().map(ConfigFault::toString).toList());
+  }
+
+  private static boolean within(Path inner, Path outer) {
+    return inner.toAbsolutePath().normalize().startsWith(outer.toAbsolutePath().normalize());
   }
 
   private int problems(List<String> problems) {

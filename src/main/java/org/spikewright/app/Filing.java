@@ -13,6 +13,7 @@ import org.spikewright.intake.Inbox;
 import org.spikewright.intake.Journalled;
 import org.spikewright.intake.Sighting;
 import org.spikewright.ledger.Arrived;
+import org.spikewright.ledger.LedgerFault;
 
 /**
  * Files recorded deliveries away. The ledger comes first: a delivery that is recorded but not filed
@@ -38,7 +39,7 @@ final class Filing {
   void file(Arrived arrived, Sighting sighting) throws IOException {
     if (station.settings().leave()) {
       inbox.handled(sighting);
-      station.ledger().filed(arrived.number(), "left at " + arrived.name());
+      station.ledger().filed(arrived.number(), left(arrived));
       return;
     }
     Filed filed = move(arrived, sighting, arrived.archiveName());
@@ -63,6 +64,10 @@ final class Filing {
   void finishInterrupted() {
     for (Arrived arrived : station.ledger().unfiled()) {
       try {
+        if (station.settings().leave()) {
+          station.ledger().filed(arrived.number(), left(arrived));
+          continue;
+        }
         String target = arrived.archiveName();
         Filed filed = resume(arrived, target);
         if (filed instanceof Filed.Occupied) {
@@ -70,10 +75,18 @@ final class Filing {
           filed = resume(arrived, target);
         }
         finish(arrived, filed, target);
-      } catch (IOException trouble) {
+      } catch (IOException | LedgerFault trouble) {
         waits(arrived, trouble.getMessage());
+      } catch (RuntimeException fault) {
+        // One delivery that cannot be filed must not keep the others from being read.
+        LOG.debug("fault at file={}", arrived.name(), fault);
+        waits(arrived, "a fault of the program (" + fault + ")");
       }
     }
+  }
+
+  private static String left(Arrived arrived) {
+    return "left at " + arrived.name();
   }
 
   private Filed resume(Arrived arrived, String target) {

@@ -1,6 +1,8 @@
 package org.spikewright.app;
 
 import java.io.PrintWriter;
+import org.slf4j.Logger;
+import org.slf4j.LoggerFactory;
 import picocli.CommandLine;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Model.CommandSpec;
@@ -27,6 +29,8 @@ import picocli.CommandLine.Spec;
       "(try, once --strict); 2 configuration; 3 fault; 4 another process owns the ledger."
     })
 public final class Main implements Runnable {
+  private static final Logger LOG = LoggerFactory.getLogger(Main.class);
+
   @Spec private CommandSpec spec;
 
   /** For the command line alone. */
@@ -34,7 +38,7 @@ public final class Main implements Runnable {
 
   /** Runs a command and ends the process with its exit code. */
   public static void main(String[] args) {
-    Thread.setDefaultUncaughtExceptionHandler(Main::halt);
+    endWhenBroken();
     int code = run(args);
     if (code != ExitCode.DONE) {
       System.exit(code);
@@ -42,14 +46,21 @@ public final class Main implements Runnable {
   }
 
   /**
-   * A virtual machine that ran out of memory cannot be trusted to go on: it ends, and what was
-   * under way is forgotten and done again at the next start.
+   * After an error of the virtual machine, such as memory used up, nothing in the process is to be
+   * trusted: it ends at once, as after a power cut, and whoever started it may start it again.
    */
-  private static void halt(Thread thread, Throwable error) {
-    System.err.println("A fault of the program in '" + thread.getName() + "': " + error);
-    if (error instanceof VirtualMachineError) {
-      Runtime.getRuntime().halt(ExitCode.FAULT);
-    }
+  static void endWhenBroken() {
+    Thread.setDefaultUncaughtExceptionHandler(
+        (thread, fault) -> {
+          try {
+            LOG.error("the program cannot go on: {}", fault.toString(), fault);
+          } finally {
+            boolean isMain = "main".equals(thread.getName());
+            if (isMain || fault instanceof VirtualMachineError) {
+              Runtime.getRuntime().halt(ExitCode.FAULT);
+            }
+          }
+        });
   }
 
   /** Runs a command and returns its exit code. */

@@ -60,20 +60,23 @@ final class NightlySummary {
    */
   List<Issued> makeOwed(Instant due, boolean includeInProgress) throws WriteFault {
     List<Issued> issued = new ArrayList<>(issueInterrupted());
+    Optional<RuntimeException> first = Optional.empty();
     for (LocalDate day : ledger.owed(due, includeInProgress)) {
       if (stop.isRequested()) {
         break;
       }
-      KeptNight kept = new KeptNight();
-      Optional<RevisionRecord> revision = revise(day, kept);
-      if (revision.isPresent()) {
-        issued.add(
-            kept.source().isPresent()
-                ? files.write(revision.get(), kept.source().get())
-                : files.write(revision.get()));
+      try {
+        make(day).ifPresent(issued::add);
+      } catch (RuntimeException fault) {
+        // A lab day that cannot be judged must not keep the others from being summarised.
+        LOG.debug("fault at lab_day={}", day, fault);
+        first = first.or(() -> Optional.of(fault));
       }
     }
     progress.done();
+    if (first.isPresent()) {
+      throw first.get();
+    }
     return issued;
   }
 
@@ -81,12 +84,28 @@ final class NightlySummary {
   List<Issued> issueInterrupted() throws WriteFault {
     List<Issued> issued = new ArrayList<>();
     for (RevisionRecord revision : ledger.owedRevisions()) {
+      if (stop.isRequested()) {
+        break;
+      }
       issued.add(files.write(revision));
     }
     return issued;
   }
 
-  /** Judges a lab day's series and records what is new; empty when nothing is. */
+  private Optional<Issued> make(LocalDate day) throws WriteFault {
+    KeptNight kept = new KeptNight();
+    Optional<RevisionRecord> revision = revise(day, kept);
+    if (revision.isEmpty()) {
+      return Optional.empty();
+    }
+    Optional<NightSource> source = kept.source();
+    return Optional.of(
+        source.isPresent()
+            ? files.write(revision.get(), source.get())
+            : files.write(revision.get()));
+  }
+
+  /** Judges a lab day's series and records what is new; empty when nothing is, or at a stop. */
   private Optional<RevisionRecord> revise(LocalDate day, KeptNight kept) {
     Settings settings = station.settings();
     Instant now = station.clock().instant().truncatedTo(ChronoUnit.MILLIS);
@@ -106,6 +125,9 @@ final class NightlySummary {
       long count = 0;
       for (Outcome outcome :
           new Analysis(NightAnalysis.series(ledger, settings, day, start.arrivalLimit()), judge)) {
+        if (stop.isRequested()) {
+          return Optional.empty();
+        }
         Gathered gathered = outcome.gathered();
         ResultRow row = ResultRow.of(outcome);
         writer.result(row, InputsHash.of(gathered, settings.sha256()));

@@ -19,9 +19,18 @@ final class Once {
    *
    * @param received deliveries
    * @param summaries issued
+   * @param waiting files that wait for a person, and why
+   * @param failing files that could not be taken in, and why
    * @param unsettled whether a file kept growing and was left
+   * @param stopped whether it was told to stop before its end
    */
-  record Report(List<Arrived> received, List<NightlySummary.Issued> summaries, boolean unsettled) {}
+  record Report(
+      List<Arrived> received,
+      List<NightlySummary.Issued> summaries,
+      List<String> waiting,
+      List<String> failing,
+      boolean unsettled,
+      boolean stopped) {}
 
   private final Station station;
   private final Duration settle;
@@ -37,7 +46,11 @@ final class Once {
     Progress progress = Progress.onTerminal();
     Inbox inbox = new Inbox(station.settings().watch(), new SettleRule(settle));
     Round round =
-        new Round(inbox, new Reception(station, stop, progress), new Filing(station, inbox), stop);
+        new Round(
+            inbox,
+            new Reception(station, stop, progress)::receive,
+            new Filing(station, inbox),
+            stop);
     Steady steady = new Steady(station.clock());
     Instant patience = steady.now().plus(settle).plus(PATIENCE);
     List<Arrived> received = new ArrayList<>();
@@ -51,6 +64,7 @@ final class Once {
     progress.done();
     List<NightlySummary.Issued> summaries =
         new NightlySummary(station, progress, stop).makeOwed(station.clock().instant(), true);
-    return new Report(received, summaries, last.settling());
+    return new Report(
+        received, summaries, round.waiting(), round.failing(), last.settling(), stop.isRequested());
   }
 }

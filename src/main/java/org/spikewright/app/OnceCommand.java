@@ -44,14 +44,22 @@ final class OnceCommand implements Callable<Integer> {
     try {
       Once.Report report = new Once(station, wait, stop).run();
       print(report, spec.commandLine().getOut());
-      boolean refused = report.received().stream().anyMatch(OnceCommand::isRefused);
-      return strict && refused ? ExitCode.REFUSED : ExitCode.DONE;
+      return exitCode(report);
     } catch (Exception trouble) {
       return Faults.report(trouble, spec.commandLine().getErr());
     } finally {
       station.close();
       hook.over();
     }
+  }
+
+  private int exitCode(Once.Report report) {
+    if (!report.failing().isEmpty()) {
+      return ExitCode.FAULT;
+    }
+    boolean refused =
+        !report.waiting().isEmpty() || report.received().stream().anyMatch(OnceCommand::isRefused);
+    return strict && refused ? ExitCode.REFUSED : ExitCode.DONE;
   }
 
   private static boolean isRefused(Arrived arrived) {
@@ -86,7 +94,11 @@ final class OnceCommand implements Callable<Integer> {
                         + issued.record().results()
                         + " results of lab day "
                         + issued.record().labDay()));
-    if (report.summaries().isEmpty()) {
+    report.waiting().forEach(out::println);
+    report.failing().forEach(out::println);
+    if (report.stopped()) {
+      out.println("stopped before the end; what is left is done the next time");
+    } else if (report.summaries().isEmpty()) {
       out.println("nothing new: no summary is owed");
     }
     if (report.unsettled()) {

@@ -4,8 +4,10 @@ import java.io.IOException;
 import java.time.Instant;
 import java.time.LocalDate;
 import java.util.ArrayList;
+import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
+import java.util.Set;
 import java.util.function.Predicate;
 import java.util.stream.Collectors;
 import org.slf4j.Logger;
@@ -53,6 +55,9 @@ final class Reception {
   private final Stop stop;
   private final Progress progress;
 
+  /** What was said to have arrived and is not recorded yet, since it may be tried many times. */
+  private final Set<Sighting> announced = new HashSet<>();
+
   Reception(Station station, Stop stop, Progress progress) {
     this.station = station;
     this.stop = stop;
@@ -60,8 +65,22 @@ final class Reception {
   }
 
   Received receive(Sighting file) throws IOException {
+    Received received = tryToReceive(file);
+    announced.remove(file);
+    return received;
+  }
+
+  private Received tryToReceive(Sighting file) throws IOException {
     Instant now = station.clock().instant();
     LocalDate day = station.settings().calendar().dayOf(now);
+    List<Mapping> claimants =
+        station.mappings().good().stream().filter(m -> m.claims(file.name())).toList();
+    if (claimants.isEmpty() && !station.faultyMappings().isEmpty()) {
+      // Before its bytes are digested: it is asked again at each look.
+      return new Received.Waits(
+          "no mapping claims it, and a mapping that may do so is faulty: "
+              + station.faultyMappings().get(0));
+    }
     String sha256 = FileDigest.of(file.path());
     if (isAwaitingFiling(file, sha256)) {
       return new Received.Kept();
@@ -74,13 +93,8 @@ final class Reception {
       Arriving again = arriving(file, sha256, now, Optional.empty());
       return recorded(station.ledger().again(again, known.get(), doneName(day, file)));
     }
-    LOG.info("arrived file={} bytes={}", file.name(), file.size());
-    List<Mapping> claimants =
-        station.mappings().good().stream().filter(m -> m.claims(file.name())).toList();
-    if (claimants.isEmpty() && !station.faultyMappings().isEmpty()) {
-      return new Received.Waits(
-          "no mapping claims it, and a mapping that may do so is faulty: "
-              + station.faultyMappings().get(0));
+    if (announced.add(file)) {
+      LOG.info("arrived file={} bytes={}", file.name(), file.size());
     }
     if (claimants.size() != 1) {
       Refusal refusal =

@@ -1,10 +1,9 @@
 package org.spikewright.app;
 
 import java.io.BufferedOutputStream;
-import java.io.FileDescriptor;
-import java.io.FileOutputStream;
 import java.io.IOException;
 import java.io.OutputStream;
+import java.io.PrintStream;
 import java.time.LocalDate;
 import java.util.Iterator;
 import java.util.List;
@@ -28,7 +27,7 @@ import picocli.CommandLine.Spec;
 @Command(
     name = "results",
     mixinStandardHelpOptions = true,
-    description = "Prints the newest results of every lab day as CSV (UTF-8); writes nothing.",
+    description = "Prints the newest results of every lab day as CSV (UTF-8); changes nothing.",
     footer = {"", "Example: spikewright results --conf spikewright.toml > results.csv"})
 final class ResultsCommand implements Callable<Integer> {
   @Mixin private ConfOption conf;
@@ -47,10 +46,18 @@ final class ResultsCommand implements Callable<Integer> {
           List.of(refused.found() + "; " + refused.advice()),
           spec.commandLine().getErr());
     }
-    try (LedgerView view = ((Opening.Viewed) opening).view();
-        OutputStream out =
-            new BufferedOutputStream(new FileOutputStream(FileDescriptor.out), 1 << 16)) {
+    // Bytes, past the encoding of the console; its owner closes it.
+    PrintStream console = System.out;
+    try (LedgerView view = ((Opening.Viewed) opening).view()) {
+      OutputStream out = new BufferedOutputStream(console, 1 << 16);
       CsvWriter.print(CsvPlan.results(newest(view)), out);
+      out.flush();
+      if (console.checkError()) {
+        return Faults.report(
+            ExitCode.FAULT,
+            List.of("the results could not be printed to their end"),
+            spec.commandLine().getErr());
+      }
       return ExitCode.DONE;
     } catch (IOException trouble) {
       return Faults.report(trouble, spec.commandLine().getErr());

@@ -27,15 +27,22 @@ final class Round {
    */
   record Report(List<Arrived> received, boolean settling) {}
 
+  /** Takes one file in. */
+  interface Receiver {
+    Reception.Received receive(Sighting file) throws IOException;
+  }
+
   private final Inbox inbox;
-  private final Reception reception;
+  private final Receiver receiver;
   private final Filing filing;
   private final Stop stop;
-  private final Standing standing = new Standing(LOG);
+  private final Standing failing = new Standing(LOG);
+  private final Standing waiting = new Standing(LOG);
+  private final Retries retries = new Retries();
 
-  Round(Inbox inbox, Reception reception, Filing filing, Stop stop) {
+  Round(Inbox inbox, Receiver receiver, Filing filing, Stop stop) {
     this.inbox = inbox;
-    this.reception = reception;
+    this.receiver = receiver;
     this.filing = filing;
     this.stop = stop;
   }
@@ -53,33 +60,54 @@ final class Round {
       if (stop.isRequested()) {
         break;
       }
-      take(file, received);
+      if (retries.isDue(file, now)) {
+        take(file, now, received);
+      }
     }
     return new Report(received, !look.settling().isEmpty());
   }
 
-  private void take(Sighting file, List<Arrived> received) {
+  /** What could not be taken in, and why; it is tried again. */
+  List<String> failing() {
+    return failing.texts();
+  }
+
+  /** What waits for a person, and why. */
+  List<String> waiting() {
+    return waiting.texts();
+  }
+
+  private void take(Sighting file, Instant now, List<Arrived> received) {
     String key = file.path().toString();
     try {
-      Reception.Received outcome = reception.receive(file);
+      Reception.Received outcome = receiver.receive(file);
       if (outcome instanceof Reception.Received.Recorded recorded) {
         received.add(recorded.arrived());
         filing.file(recorded.arrived(), file);
       } else if (outcome instanceof Reception.Received.Waits waits) {
-        standing.trouble(key, "waiting file=" + file.name() + " reason=\"" + waits.why() + "\"");
+        waiting.trouble(key, "waiting file=" + file.name() + " reason=\"" + waits.why() + "\"");
+        failing.over(key);
         return;
       } else if (outcome instanceof Reception.Received.Kept) {
         inbox.handled(file);
       }
-      standing.over(key);
+      waiting.over(key);
+      failing.over(key);
+      retries.over(file);
     } catch (LedgerFault | IOException | UncheckedIOException trouble) {
-      standing.trouble(
-          key,
-          "file="
-              + file.name()
-              + " could not be taken in and will be tried again: "
-              + trouble.getMessage());
+      failed(file, now, trouble.getMessage());
+    } catch (RuntimeException | StackOverflowError fault) {
+      // A fault of the program that this file brings out must not keep the others waiting.
+      LOG.debug("fault at file={}", file.name(), fault);
+      failed(file, now, "a fault of the program (" + fault + ")");
     }
+  }
+
+  private void failed(Sighting file, Instant now, String why) {
+    retries.failed(file, now);
+    failing.trouble(
+        file.path().toString(),
+        "file=" + file.name() + " could not be taken in and will be tried again: " + why);
   }
 
   private static void tell(Notice notice) {

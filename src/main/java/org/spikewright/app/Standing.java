@@ -1,13 +1,14 @@
 package org.spikewright.app;
 
-import java.util.HashMap;
+import java.util.List;
 import java.util.Map;
+import java.util.TreeMap;
 import org.slf4j.Logger;
 
 /** Troubles that last: each is said once when it begins or changes, and once when it is over. */
 final class Standing {
   private final Logger log;
-  private final Map<String, String> troubles = new HashMap<>();
+  private final Map<String, String> troubles = new TreeMap<>();
 
   Standing(Logger log) {
     this.log = log;
@@ -24,5 +25,10 @@ final class Standing {
     if (text != null) {
       log.warn("over: {}", text);
     }
+  }
+
+  /** What lasts now, ordered by key. */
+  List<String> texts() {
+    return List.copyOf(troubles.values());
   }
 }

@@ -50,11 +50,12 @@ record Station(
               + settings.watch()
               + " is not there; make it, or correct watch under [folders]");
     }
-    if (!Files.isDirectory(settings.mappings())) {
-      mappings.faults().forEach(fault -> problems.add(fault.toString()));
-    }
     makeFolder(settings.summaries(), problems);
     makeFolder(settings.ledger().getParent(), problems);
+    if (!problems.isEmpty() || !Files.isDirectory(settings.mappings())) {
+      // A faulty mapping alone keeps nothing from starting; beside other problems it is one more.
+      mappings.faults().forEach(fault -> problems.add(fault.toString()));
+    }
     return problems.isEmpty()
         ? open(settings, mappings, clock)
         : new Attempt.Refused(ExitCode.CONFIGURATION, problems);
@@ -67,7 +68,7 @@ record Station(
           Ledger.open(
               settings.ledger(), settings.calendar(), settings.longestPause(), archive.hasFiles());
       if (opening instanceof Opening.Opened opened) {
-        XlsxWriter.sweep(temporaryFolder(settings));
+        sweep(settings, opened.ledger());
         return new Attempt.Opened(new Station(settings, mappings, archive, opened.ledger(), clock));
       }
       return opening instanceof Opening.OwnedByAnother other
@@ -85,6 +86,15 @@ record Station(
     }
   }
 
+  private static void sweep(Settings settings, Ledger ledger) throws IOException {
+    try {
+      XlsxWriter.sweep(temporaryFolder(settings));
+    } catch (IOException trouble) {
+      ledger.close();
+      throw trouble;
+    }
+  }
+
   private static Attempt refused(Opening.Refused refused) {
     return new Attempt.Refused(ExitCode.FAULT, List.of(refused.found() + "; " + refused.advice()));
   }
@@ -93,7 +103,8 @@ record Station(
     try {
       Files.createDirectories(folder);
     } catch (IOException trouble) {
-      problems.add("the folder " + folder + " cannot be made: " + trouble);
+      String why = Files.exists(folder) ? "a file of that name is there" : trouble.toString();
+      problems.add("the folder " + folder + " cannot be made: " + why);
     }
   }
 

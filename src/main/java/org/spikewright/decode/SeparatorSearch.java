@@ -2,6 +2,7 @@ package org.spikewright.decode;
 
 import java.io.IOException;
 import java.util.ArrayList;
+import java.util.Comparator;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
@@ -12,6 +13,8 @@ import org.apache.commons.csv.CSVRecord;
 /** Works out a text file's separator: the one under which one row holds all header words. */
 final class SeparatorSearch {
   private static final List<Character> CANDIDATES = List.of(';', '\t', ',', '|');
+
+  private static final int FIELDS_SHOWN = 40;
 
   private final List<String> words;
 
@@ -47,26 +50,28 @@ final class SeparatorSearch {
   }
 
   private Trial tried(TextFile file, char separator, char quote) throws IOException {
-    Trial best = new Trial(separator, 0, words, Optional.empty());
+    Trial best = new Trial(separator, 0, words, List.of(), Optional.empty());
     try (CsvRecords records = new CsvRecords(file, separator, quote)) {
       for (int row = 0; row < Limits.HEADER_ROWS && !best.fits() && records.hasNext(); row++) {
-        List<String> missing = missingFrom(records.next());
+        List<String> fields = fields(records.next());
+        List<String> missing = missingFrom(fields);
         if (missing.size() < best.missing().size()) {
-          best = new Trial(separator, records.line(), missing, Optional.empty());
+          best = new Trial(separator, records.line(), missing, fields, Optional.empty());
         }
       }
       return best;
     } catch (Unreadable e) {
-      return new Trial(separator, best.line(), best.missing(), Optional.of(e));
+      return new Trial(separator, best.line(), best.missing(), best.fields(), Optional.of(e));
     }
   }
 
-  private List<String> missingFrom(CSVRecord csv) {
-    Set<String> fields = new HashSet<>();
-    for (String field : csv) {
-      fields.add(field.strip());
-    }
-    return words.stream().filter(word -> !fields.contains(word)).toList();
+  private static List<String> fields(CSVRecord csv) {
+    return csv.stream().map(String::strip).toList();
+  }
+
+  private List<String> missingFrom(List<String> fields) {
+    Set<String> known = new HashSet<>(fields);
+    return words.stream().filter(word -> !known.contains(word)).toList();
   }
 
   private static Unreadable noneFits(List<Trial> trials) {
@@ -76,7 +81,12 @@ final class SeparatorSearch {
     return new Unreadable(
         "the file",
         "no row that holds all mapped headers, with none of the separators "
-            + trials.stream().map(Trial::account).collect(Collectors.joining("; ")),
+            + trials.stream().map(Trial::account).collect(Collectors.joining("; "))
+            + trials.stream()
+                .min(Comparator.comparingInt(trial -> trial.missing().size()))
+                .filter(nearest -> nearest.line() > 0)
+                .map(Trial::columns)
+                .orElse(""),
         "one row among the first " + Limits.HEADER_ROWS + " that holds every mapped header",
         "compare the headers in the mapping with the file, or declare the separator");
   }
@@ -101,13 +111,25 @@ final class SeparatorSearch {
    *
    * @param line of the row that holds most of the words; 0 for none
    * @param missing the words that this row does not hold
+   * @param fields what this row holds
    * @param stopped the fault that ended the search
    */
   private record Trial(
-      char separator, long line, List<String> missing, Optional<Unreadable> stopped) {
+      char separator,
+      long line,
+      List<String> missing,
+      List<String> fields,
+      Optional<Unreadable> stopped) {
 
     boolean fits() {
       return missing.isEmpty();
+    }
+
+    /** The columns that the row has. */
+    String columns() {
+      String names =
+          fields.stream().limit(FIELDS_SHOWN).map(Shown::quoted).collect(Collectors.joining(", "));
+      return "; line " + line + " has " + names;
     }
 
     String account() {

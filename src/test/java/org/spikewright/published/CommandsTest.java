@@ -45,11 +45,11 @@ class CommandsTest {
       Files.copy(folder.resolve(dropped.export()), export);
     }
     Path conf = Files.writeString(lab.resolve("spikewright.toml"), CONFIGURATION);
-    Program.Run once =
-        Program.run(lab, "once", "--strict", "--settle", "0s", "--conf", conf.toString());
-    assertThat(once.exitCode()).as(once.out() + once.err()).isZero();
-    Program.Run results = Program.run(lab, "results", "--conf", conf.toString());
-    assertThat(results.exitCode()).as(results.err()).isZero();
+    Program.Ended once =
+        Program.run("once", "--strict", "--settle", "0s", "--conf", conf.toString());
+    assertThat(once.code()).as(once.out() + once.err()).isZero();
+    Program.Ended results = Program.run("results", "--conf", conf.toString());
+    assertThat(results.code()).as(results.err()).isZero();
     Map<String, CSVRecord> rows = new TreeMap<>();
     for (CSVRecord row : ReferenceTable.rows(new StringReader(results.out()))) {
       rows.put(row.get("source_files"), row);

@@ -95,10 +95,10 @@ class RedeliveryTest {
 
   private static Map<String, CSVRecord> results() throws IOException {
     String conf = lab.resolve("spikewright.toml").toString();
-    Program.Run once = Program.run(lab, "once", "--strict", "--settle", "0s", "--conf", conf);
-    assertThat(once.exitCode()).as(once.out() + once.err()).isZero();
-    Program.Run printed = Program.run(lab, "results", "--conf", conf);
-    assertThat(printed.exitCode()).as(printed.err()).isZero();
+    Program.Ended once = Program.run("once", "--strict", "--settle", "0s", "--conf", conf);
+    assertThat(once.code()).as(once.out() + once.err()).isZero();
+    Program.Ended printed = Program.run("results", "--conf", conf);
+    assertThat(printed.code()).as(printed.err()).isZero();
     Map<String, CSVRecord> rows = new TreeMap<>();
     for (CSVRecord row : ReferenceTable.rows(new StringReader(printed.out()))) {
       assertThat(rows.put(row.get("sample"), row)).as("one result a sample").isNull();
