@@ -21,10 +21,9 @@ record DemoRun(Path folder) {
   /** Runs the demo on a copy of the example below {@code folder}. */
   static DemoRun in(Path folder) {
     DemoRun demo = new DemoRun(folder.resolve("demo"));
-    Program.Run run =
-        Program.run(
-            folder, "demo", "--from", "watch-folder-example", "--to", demo.folder().toString());
-    assertThat(run.exitCode()).as(run.out() + run.err()).isZero();
+    Program.Ended run =
+        Program.run("demo", "--from", "watch-folder-example", "--to", demo.folder().toString());
+    assertThat(run.code()).as(run.out() + run.err()).isZero();
     return demo;
   }
 
