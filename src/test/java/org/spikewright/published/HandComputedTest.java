@@ -20,6 +20,8 @@ import org.spikewright.judgement.SeriesResult;
 import org.spikewright.judgement.Verdict;
 import org.spikewright.reading.Role;
 import org.spikewright.series.Flask;
+import org.spikewright.summary.ResultColumns;
+import org.spikewright.summary.ResultRow;
 
 /**
  * Results that a person can follow with a pencil: each is computed in the test by the formulas of
@@ -447,7 +449,11 @@ class HandComputedTest {
     for (int i = 1; i < lines.length; i++) {
       lines[i] += "," + type;
     }
-    SeriesResult result = read(ROLES, lines).result();
+    PublishedCase read = read(ROLES, lines);
+    SeriesResult result = read.result();
+    assertThat(ResultColumns.fields(ResultRow.of(read.only())))
+        .element(ResultColumns.NAMES.indexOf("role"))
+        .isEqualTo(role.word());
     assertThat(result.series().role()).isEqualTo(role);
     double found = ByHand.line(steps(4, 1), SCATTERED).found();
     isAbout(found - blank, result.value(), 1e-12);
