@@ -44,28 +44,28 @@ final class RevisionFiles {
     String name = revision.labDay() + "-r" + revision.revision();
     String results = "results-" + name + ".csv";
     String workbook = "summary-" + name + ".xlsx";
-    FutureTask<String> tables =
+    String resultsHash = CsvWriter.write(CsvPlan.results(source.byKey()), folder.resolve(results));
+    FutureTask<String> flasks =
         new FutureTask<>(
-            () -> {
-              CsvWriter.write(
-                  CsvPlan.flasks(source.outcomes()), folder.resolve("flasks-" + name + ".csv"));
-              return CsvWriter.write(CsvPlan.results(source.byKey()), folder.resolve(results));
-            });
+            () ->
+                CsvWriter.write(
+                    CsvPlan.flasks(source.outcomes()), folder.resolve("flasks-" + name + ".csv")));
     if (source.inMemory()) {
-      new Thread(tables, "result files").start();
+      new Thread(flasks, "flasks file").start();
     } else {
-      tables.run();
+      flasks.run();
     }
     String workbookHash;
     try {
       workbookHash = workbook(revision, source, folder.resolve(workbook));
     } finally {
-      finish(tables);
+      waitFor(flasks);
     }
+    throwFaultOf(flasks);
     ledger.issued(
         revision.labDay(),
         revision.revision(),
-        new RevisionRecord.Issued(workbook, workbookHash, results, hash(tables)));
+        new RevisionRecord.Issued(workbook, workbookHash, results, resultsHash));
     progress.done();
     LOG.info(
         "summary written lab_day={} revision={} series={} file={}",
@@ -86,12 +86,12 @@ final class RevisionFiles {
             count -> progress.at("writing workbook, series", count));
   }
 
-  /** Waits for the tables, whatever became of them. */
-  private static void finish(FutureTask<String> tables) {
+  /** Waits for a file's end, whatever became of it. */
+  private static void waitFor(FutureTask<String> file) {
     boolean interrupted = false;
-    while (!tables.isDone()) {
+    while (!file.isDone()) {
       try {
-        tables.get();
+        file.get();
       } catch (InterruptedException again) {
         interrupted = true;
       } catch (ExecutionException toldLater) {
@@ -103,16 +103,16 @@ final class RevisionFiles {
     }
   }
 
-  private static String hash(FutureTask<String> tables) throws WriteFault {
+  private static void throwFaultOf(FutureTask<String> file) throws WriteFault {
     try {
-      return tables.get();
+      file.get();
     } catch (ExecutionException failed) {
       if (failed.getCause() instanceof WriteFault fault) {
         throw fault;
       }
       throw new IllegalStateException(failed.getCause());
-    } catch (InterruptedException done) {
-      throw new IllegalStateException(done);
+    } catch (InterruptedException told) {
+      throw new IllegalStateException(told);
     }
   }
 
