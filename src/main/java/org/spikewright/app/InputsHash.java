@@ -5,10 +5,9 @@ import java.nio.charset.StandardCharsets;
 import java.security.MessageDigest;
 import java.security.NoSuchAlgorithmException;
 import java.util.HexFormat;
-import java.util.List;
-import java.util.stream.Stream;
 import org.spikewright.reading.Recorded;
 import org.spikewright.series.AdditionSeries;
+import org.spikewright.series.Flask;
 import org.spikewright.series.Gathered;
 import org.spikewright.series.Ungrouped;
 import org.spikewright.table.Position;
@@ -28,18 +27,15 @@ final class InputsHash {
   static String of(Gathered gathered, String settingsSha256) {
     MessageDigest digest = sha256();
     digest.update(settingsSha256.getBytes(StandardCharsets.UTF_8));
-    readings(gathered).forEach(recorded -> add(digest, recorded));
-    return HexFormat.of().formatHex(digest.digest());
-  }
-
-  private static Stream<Recorded> readings(Gathered gathered) {
-    if (gathered instanceof Ungrouped ungrouped) {
-      return ungrouped.readings().stream();
+    if (gathered instanceof AdditionSeries series) {
+      for (Flask flask : series.flasks()) {
+        flask.readings().forEach(recorded -> add(digest, recorded));
+        flask.secondRun().forEach(recorded -> add(digest, recorded));
+      }
+    } else {
+      ((Ungrouped) gathered).readings().forEach(recorded -> add(digest, recorded));
     }
-    return ((AdditionSeries) gathered)
-        .flasks().stream()
-            .flatMap(flask -> Stream.of(flask.readings(), flask.secondRun()))
-            .flatMap(List::stream);
+    return HexFormat.of().formatHex(digest.digest());
   }
 
   private static void add(MessageDigest digest, Recorded recorded) {

@@ -10,7 +10,6 @@ import java.util.Optional;
 import java.util.stream.Stream;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
-import org.spikewright.analysis.Analysis;
 import org.spikewright.config.Settings;
 import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
@@ -120,19 +119,20 @@ final class NightlySummary {
             settings.text(),
             Version.NUMBER);
     Judge judge = NightAnalysis.judge(settings, start.moment());
-    try (RevisionWriter writer = ledger.startRevision(start)) {
+    DaySeries series = NightAnalysis.series(ledger, settings, day, start.arrivalLimit());
+    try (RevisionWriter writer = ledger.startRevision(start);
+        Ahead<Gathered> gathered = new Ahead<>(series)) {
       Optional<Instant> waitingUntil = Optional.empty();
       long count = 0;
-      for (Outcome outcome :
-          new Analysis(NightAnalysis.series(ledger, settings, day, start.arrivalLimit()), judge)) {
+      while (gathered.hasNext()) {
         if (stop.isRequested()) {
           return Optional.empty();
         }
-        Gathered gathered = outcome.gathered();
+        Outcome outcome = judge.judge(gathered.next());
         ResultRow row = ResultRow.of(outcome);
-        writer.result(row, InputsHash.of(gathered, settings.sha256()));
+        writer.result(row, InputsHash.of(outcome.gathered(), settings.sha256()));
         kept.add(outcome, row);
-        waitingUntil = earlier(waitingUntil, judge.waitingUntil(gathered));
+        waitingUntil = earlier(waitingUntil, judge.waitingUntil(outcome.gathered()));
         progress.at("judging series", ++count);
       }
       return writer.commit(waitingUntil);

@@ -3,7 +3,6 @@ package org.spikewright.app;
 import java.io.IOException;
 import java.time.Instant;
 import java.time.LocalDate;
-import java.util.ArrayList;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
@@ -20,12 +19,10 @@ import org.spikewright.ledger.Arrived;
 import org.spikewright.ledger.Arriving;
 import org.spikewright.ledger.Delivery;
 import org.spikewright.mapping.MappedFile;
-import org.spikewright.mapping.MappedSink;
 import org.spikewright.mapping.Mapping;
 import org.spikewright.mapping.Rejection;
 import org.spikewright.mapping.RowMapper;
 import org.spikewright.mapping.Tally;
-import org.spikewright.reading.Reading;
 import org.spikewright.reading.Subject;
 import org.spikewright.table.DecodeFault;
 
@@ -81,7 +78,8 @@ final class Reception {
           "no mapping claims it, and a mapping that may do so is faulty: "
               + station.faultyMappings().get(0));
     }
-    String sha256 = FileDigest.of(file.path());
+    FileDigest.Content content = FileDigest.contentOf(file.path());
+    String sha256 = content.sha256();
     if (isAwaitingFiling(file, sha256)) {
       return new Received.Kept();
     }
@@ -103,7 +101,8 @@ final class Reception {
               : Refusal.claimedByMany(claimants);
       return refuse(file, arriving(file, sha256, now, Optional.empty()), refusal);
     }
-    return read(file, arriving(file, sha256, now, Optional.of(claimants.get(0))), claimants.get(0));
+    Arriving arriving = arriving(file, sha256, now, Optional.of(claimants.get(0)));
+    return read(file, content, arriving, claimants.get(0));
   }
 
   /** Whether it was recorded before and only could not be moved yet. */
@@ -112,10 +111,13 @@ final class Reception {
         .anyMatch(a -> a.name().equals(file.name()) && a.sha256().equals(sha256));
   }
 
-  private Received read(Sighting file, Arriving arriving, Mapping mapping) throws IOException {
+  private Received read(
+      Sighting file, FileDigest.Content content, Arriving arriving, Mapping mapping)
+      throws IOException {
     Optional<Refusal> refusal;
-    try (Delivery delivery = station.ledger().receive(arriving)) {
-      FirstRejections sink = new FirstRejections(delivery);
+    // Closed in the reverse order: nothing is recorded any more when the delivery is forgotten.
+    try (Delivery delivery = station.ledger().receive(arriving);
+        Handover sink = new Handover(delivery)) {
       RowMapper mapper = mapping.open(file.name(), sink);
       Optional<DecodeFault> fault =
           FileDecoder.read(
@@ -126,12 +128,13 @@ final class Reception {
                 progress.at("reading " + file.name() + ", row", row.number());
                 return mapper.accept(row) && !stop.isRequested();
               });
-      if (stop.isRequested() || changed(file, arriving.sha256())) {
+      if (stop.isRequested() || changed(file, content)) {
         return new Received.LetGo();
       }
+      sink.finish();
       MappedFile mapped = mapper.finish();
       if (fault.isEmpty() && mapped instanceof MappedFile.Mapped done) {
-        return recorded(record(delivery, done.tally(), sink, file, arriving));
+        return recorded(record(delivery, done.tally(), sink.first(), file, arriving));
       }
       refusal =
           fault.map(Refusal::of).or(() -> Optional.of(Refusal.of((MappedFile.Unmappable) mapped)));
@@ -140,10 +143,10 @@ final class Reception {
   }
 
   private Arrived record(
-      Delivery delivery, Tally tally, FirstRejections sink, Sighting file, Arriving arriving)
+      Delivery delivery, Tally tally, List<Rejection> first, Sighting file, Arriving arriving)
       throws IOException {
     if (tally.readings() == 0) {
-      Refusal refusal = Refusal.withoutReadings(tally, sink.first);
+      Refusal refusal = Refusal.withoutReadings(tally, first);
       return delivery.refuse(tally, refusal.words(), rejectedName(file));
     }
     String note = withoutAdditions(delivery.withoutAdditions());
@@ -190,9 +193,9 @@ final class Reception {
   }
 
   /** Whether what was decoded may not be what was digested. */
-  private static boolean changed(Sighting file, String sha256) throws IOException {
+  private static boolean changed(Sighting file, FileDigest.Content content) throws IOException {
     return !Fingerprint.of(file.path()).equals(Optional.of(file.fingerprint()))
-        || !FileDigest.of(file.path()).equals(sha256);
+        || FileDigest.crc32(file.path()) != content.crc32();
   }
 
   private Arriving arriving(Sighting file, String sha256, Instant now, Optional<Mapping> mapping) {
@@ -217,28 +220,5 @@ final class Reception {
 
   private Predicate<String> promised() {
     return station.ledger()::archiveNameTaken;
-  }
-
-  /** Passes everything on and keeps the first refused row for the words of a refusal. */
-  private static final class FirstRejections implements MappedSink {
-    private final MappedSink next;
-    private final List<Rejection> first = new ArrayList<>();
-
-    FirstRejections(MappedSink next) {
-      this.next = next;
-    }
-
-    @Override
-    public void reading(Reading reading) {
-      next.reading(reading);
-    }
-
-    @Override
-    public void rejection(Rejection rejection) {
-      if (first.isEmpty()) {
-        first.add(rejection);
-      }
-      next.rejection(rejection);
-    }
   }
 }

@@ -2,18 +2,22 @@ package org.spikewright.ledger;
 
 /**
  * Doubles as text that is exact and the same on every Java version: a plain decimal where a short
- * one is exact, else hexadecimal. {@link Double#toString} will not do, because its digits changed
- * between Java versions, and equal facts must stay equal texts for as long as the ledger lives.
+ * one is exact, else a mark and the bits in hexadecimal. {@link Double#toString} will not do,
+ * because its digits changed between Java versions, and equal facts must stay equal texts for as
+ * long as the ledger lives.
  */
 final class ExactDouble {
   private static final double LARGEST_EXACT = 1L << 53;
   private static final int MOST_DECIMALS = 12;
 
+  /** Marks bits. */
+  private static final char BITS = '#';
+
   private ExactDouble() {}
 
   static String text(double value) {
     if (value == 0) {
-      return 1 / value > 0 ? "0" : Double.toHexString(value);
+      return 1 / value > 0 ? "0" : bits(value);
     }
     double scale = 1;
     for (int decimals = 0; decimals <= MOST_DECIMALS; decimals++) {
@@ -27,11 +31,17 @@ final class ExactDouble {
       }
       scale *= 10;
     }
-    return Double.toHexString(value);
+    return bits(value);
   }
 
   static double parse(String text) {
-    return Double.parseDouble(text);
+    return text.charAt(0) == BITS
+        ? Double.longBitsToDouble(Long.parseUnsignedLong(text, 1, text.length(), 16))
+        : Double.parseDouble(text);
+  }
+
+  private static String bits(double value) {
+    return BITS + Long.toHexString(Double.doubleToLongBits(value));
   }
 
   private static String decimal(long digits, int decimals) {

@@ -141,10 +141,19 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
   }
 
   private static boolean allEqual(double[] values) {
-    return Arrays.stream(values).allMatch(value -> value == values[0]);
+    for (double value : values) {
+      if (value != values[0]) {
+        return false;
+      }
+    }
+    return true;
   }
 
   private static double[] each(List<FlaskFacts> flasks, ToDoubleFunction<FlaskFacts> number) {
-    return flasks.stream().mapToDouble(number).toArray();
+    double[] numbers = new double[flasks.size()];
+    for (int i = 0; i < numbers.length; i++) {
+      numbers[i] = number.applyAsDouble(flasks.get(i));
+    }
+    return numbers;
   }
 }

@@ -192,7 +192,7 @@ final class AxisCheck {
   }
 
   private Optional<Misfit> needs(String what, Predicate<FlaskFacts> holds) {
-    if (flasks.stream().allMatch(flask -> holds.test(flask.facts()))) {
+    if (all(holds)) {
       return Optional.empty();
     }
     String without =
@@ -212,7 +212,7 @@ final class AxisCheck {
       return Optional.empty();
     }
     Object first = fact.apply(flasks.get(0).facts());
-    if (flasks.stream().allMatch(flask -> fact.apply(flask.facts()).equals(first))) {
+    if (all(facts -> fact.apply(facts).equals(first))) {
       return Optional.empty();
     }
     String values =
@@ -221,6 +221,15 @@ final class AxisCheck {
             .distinct()
             .collect(Collectors.joining(", "));
     return Optional.of(new Misfit("more than one " + what + ": " + values, "one " + what));
+  }
+
+  private boolean all(Predicate<FlaskFacts> holds) {
+    for (FlaskDraft flask : flasks) {
+      if (!holds.test(flask.facts())) {
+        return false;
+      }
+    }
+    return true;
   }
 
   private static String words(Object fact) {

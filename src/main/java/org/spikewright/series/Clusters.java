@@ -32,6 +32,10 @@ final class Clusters {
 
   /** The clusters of one subject's readings, ordered by lab day, batch and time. */
   List<Cluster> of(List<Recorded> readings) {
+    if (isOneRun(readings)) {
+      return List.of(
+          new Cluster(dayOfFirst(readings), "", firstName(readings), List.of(), readings));
+    }
     List<Recorded> timed = new ArrayList<>();
     SortedMap<String, List<Recorded>> untimed = new TreeMap<>();
     for (Recorded recorded : readings.stream().sorted(ORDER).toList()) {
@@ -49,6 +53,26 @@ final class Clusters {
             .thenComparing(Cluster::batch)
             .thenComparing(cluster -> cluster.readings().get(0), ORDER));
     return clusters;
+  }
+
+  /**
+   * Whether readings are one run as they stand, as nearly always: timed, in order, of one delivery.
+   */
+  private boolean isOneRun(List<Recorded> readings) {
+    Instant last = Instant.MIN;
+    for (Recorded recorded : readings) {
+      Reading reading = recorded.reading();
+      Optional<Instant> time = reading.measuredAt();
+      if (time.isEmpty()
+          || reading.batch().delimits()
+          || recorded.arrival() != readings.get(0).arrival()
+          || !time.get().isAfter(last)
+          || last != Instant.MIN && time.get().isAfter(last.plus(rules.longestPause()))) {
+        return false;
+      }
+      last = time.get();
+    }
+    return !readings.isEmpty();
   }
 
   private static void add(SortedMap<String, List<Recorded>> batches, Recorded recorded) {
@@ -150,6 +174,11 @@ final class Clusters {
   }
 
   private static String firstName(List<Recorded> run) {
-    return run.stream().map(r -> r.reading().batch().name()).min(String::compareTo).orElse("");
+    String first = run.get(0).reading().batch().name();
+    for (Recorded recorded : run) {
+      String name = recorded.reading().batch().name();
+      first = name.compareTo(first) < 0 ? name : first;
+    }
+    return first;
   }
 }

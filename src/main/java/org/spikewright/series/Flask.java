@@ -1,5 +1,6 @@
 package org.spikewright.series;
 
+import java.util.Arrays;
 import java.util.List;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Recorded;
@@ -33,12 +34,14 @@ public record Flask(
   /** A flask with the mean of its readings. */
   static Flask of(FlaskDraft draft, double x, double volumeFactor) {
     double baseline = draft.facts().blanks().baseline().orElse(0);
-    double[] signals =
-        draft.readings().stream()
-            .map(recorded -> recorded.reading().signal())
-            .filter(Signal.Value.class::isInstance)
-            .mapToDouble(signal -> ((Signal.Value) signal).value() - baseline)
-            .toArray();
+    double[] signals = new double[draft.readings().size()];
+    int numbers = 0;
+    for (Recorded recorded : draft.readings()) {
+      if (recorded.reading().signal() instanceof Signal.Value signal) {
+        signals[numbers++] = signal.value() - baseline;
+      }
+    }
+    signals = Arrays.copyOf(signals, numbers);
     double mean = mean(signals);
     return new Flask(
         draft.label(),
@@ -49,7 +52,7 @@ public record Flask(
         draft.secondRun(),
         mean,
         standardDeviation(signals, mean),
-        signals.length);
+        numbers);
   }
 
   private static double mean(double[] values) {

@@ -88,14 +88,17 @@ public final class Gathering {
 
   /** The facts of a flask: those of its latest delivery; empty when that contradicts itself. */
   private static Optional<FlaskFacts> facts(List<Recorded> readings) {
-    long latest = readings.stream().mapToLong(Recorded::arrival).max().orElseThrow();
-    List<FlaskFacts> facts =
-        readings.stream()
-            .filter(r -> r.arrival() == latest)
-            .map(r -> r.reading().facts())
-            .distinct()
-            .toList();
-    return facts.size() == 1 ? Optional.of(facts.get(0)) : Optional.empty();
+    Recorded latest = readings.get(0);
+    for (Recorded recorded : readings) {
+      latest = recorded.arrival() > latest.arrival() ? recorded : latest;
+    }
+    FlaskFacts facts = latest.reading().facts();
+    for (Recorded recorded : readings) {
+      if (recorded.arrival() == latest.arrival() && !recorded.reading().facts().equals(facts)) {
+        return Optional.empty();
+      }
+    }
+    return Optional.of(facts);
   }
 
   /**

@@ -7,6 +7,7 @@ import java.util.List;
 import java.util.stream.Collectors;
 import java.util.stream.Stream;
 import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
 import org.spikewright.reading.Signal.State;
 
@@ -65,14 +66,35 @@ final class SeriesBuilder {
   }
 
   private Instant lastReadingAt() {
-    return drafts.stream()
-        .flatMap(draft -> draft.readings().stream())
-        .map(recorded -> recorded.reading().measuredAt().orElse(recorded.firstArrivedAt()))
-        .max(Instant::compareTo)
-        .orElseThrow();
+    Instant last = Instant.MIN;
+    for (FlaskDraft draft : drafts) {
+      for (Recorded recorded : draft.readings()) {
+        Instant time = recorded.reading().measuredAt().orElse(recorded.firstArrivedAt());
+        last = time.isAfter(last) ? time : last;
+      }
+    }
+    return last;
+  }
+
+  /** Whether there is nothing to remark, as with nearly every series; so it is asked first. */
+  private boolean isPlain() {
+    for (FlaskDraft draft : drafts) {
+      if (!draft.secondRun().isEmpty() || !draft.facts().aliquot().equals(facts.aliquot())) {
+        return false;
+      }
+      for (Recorded recorded : draft.readings()) {
+        if (recorded.superseded() > 0 || !(recorded.reading().signal() instanceof Signal.Value)) {
+          return false;
+        }
+      }
+    }
+    return cluster.alsoNamed().isEmpty();
   }
 
   private List<SeriesNote> notes() {
+    if (isPlain()) {
+      return List.of();
+    }
     List<SeriesNote> notes = new ArrayList<>();
     note(notes, SeriesNote.Kind.OVER_RANGE, states(State.OVER_RANGE));
     note(

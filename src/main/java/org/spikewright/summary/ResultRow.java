@@ -4,6 +4,8 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.OptionalInt;
+import java.util.SortedSet;
+import java.util.TreeSet;
 import java.util.function.Function;
 import org.spikewright.fit.StraightLine;
 import org.spikewright.judgement.Flag;
@@ -143,11 +145,11 @@ public record ResultRow(
     }
 
     List<String> files() {
-      return readings.stream()
-          .map(recorded -> recorded.reading().position().source().file())
-          .distinct()
-          .sorted()
-          .toList();
+      SortedSet<String> files = new TreeSet<>();
+      for (Recorded recorded : readings) {
+        files.add(recorded.reading().position().source().file());
+      }
+      return List.copyOf(files);
     }
   }
 
