@@ -79,8 +79,8 @@ final class OnceCommand implements Callable<Integer> {
                     + " readings, "
                     + arrived.tally().rejections()
                     + " rows refused";
-            case REFUSED -> "refused  " + arrived.name() + ": " + firstLine(arrived.reason());
-            case KNOWN -> "known    " + arrived.name() + ": " + firstLine(arrived.reason());
+            case REFUSED -> "refused  " + arrived.name() + ": " + Refusal.oneLine(arrived.reason());
+            case KNOWN -> "known    " + arrived.name() + ": " + Refusal.oneLine(arrived.reason());
           });
     }
     report
@@ -105,10 +105,5 @@ final class OnceCommand implements Callable<Integer> {
       out.println("a file is still being written and was left for the next time");
     }
     out.flush();
-  }
-
-  private static String firstLine(String text) {
-    int end = text.indexOf('\n');
-    return end < 0 ? text : text.substring(0, end);
   }
 }

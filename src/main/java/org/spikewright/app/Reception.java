@@ -182,14 +182,12 @@ final class Reception {
               arrived.tally().rejections(),
               arrived.tally().skipped(),
               arrived.repeated());
-      case REFUSED -> LOG.info("refused file={} reason=\"{}\"", arrived.name(), oneLine(arrived));
+      case REFUSED ->
+          LOG.info(
+              "refused file={} reason=\"{}\"", arrived.name(), Refusal.oneLine(arrived.reason()));
       case KNOWN -> LOG.info("known file={} note=\"{}\"", arrived.name(), arrived.reason());
     }
     return new Received.Recorded(arrived);
-  }
-
-  private static String oneLine(Arrived arrived) {
-    return arrived.reason().replace('\n', ' ');
   }
 
   /** Whether what was decoded may not be what was digested. */

@@ -69,17 +69,25 @@ record Refusal(String place, String found, String expected, String advice) {
     return mapping.files().stream().map(Object::toString).collect(Collectors.joining(", "));
   }
 
-  /** In three sentences, one a line, as the ledger keeps it and people read it. */
+  /** In four lines, as the ledger keeps it and people read it. */
   String words() {
-    return "In "
+    return "Where:    "
         + place
-        + ": found "
+        + "\nFound:    "
         + found
-        + ".\nExpected: "
+        + "\nExpected: "
         + expected
-        + ".\nTo do: "
+        + "\nTo do:    "
         + advice
-        + "; then drop the file into the watched folder again.";
+        + "; then drop the file into the watched folder again";
+  }
+
+  /** The same in one line, for the log and the terminal. */
+  static String oneLine(String words) {
+    return words
+        .lines()
+        .map(line -> line.replaceFirst(": +", ": "))
+        .collect(Collectors.joining("; "));
   }
 
   /**

@@ -57,7 +57,8 @@ class BadInputTest {
       assertThat(reason)
           .as(file.name())
           .contains(file.says())
-          .contains("In ", ": found ", "Expected: ", "To do: ", "Nothing of this file was counted");
+          .contains(
+              "Where: ", "Found: ", "Expected: ", "To do: ", "Nothing of this file was counted");
     }
     assertThat(samples()).containsExactly("BW-1", "BW-2");
     List<String> sheet = newestWorkbooks();

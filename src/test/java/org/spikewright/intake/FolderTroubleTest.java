@@ -129,6 +129,8 @@ class FolderTroubleTest {
     assertThat(inbox.look(after(10)).notices())
         .extracting(Notice::phase)
         .containsExactly(Notice.Phase.ENDS);
+    // What empties the folder afterwards would warn of links that lead out of it.
+    Folder.shell(watched, "find . -type l -exec rm {} +");
   }
 
   @Test
