@@ -43,6 +43,17 @@ final class StudentT {
     return t < 0 ? tail : 1 - tail;
   }
 
+  /** Upper tail with one degree of freedom, in closed form; precise however small. */
+  private static double tailOfOne(double t) {
+    return Math.atan2(1, t) / Math.PI;
+  }
+
+  /** Upper tail with two degrees of freedom, in closed form; precise however small. */
+  private static double tailOfTwo(double t) {
+    double root = Math.sqrt(2 + t * t);
+    return 1 / (root * (root + t));
+  }
+
   /** Probability of a value at least as far from 0 as {@code t}. */
   static double twoSided(double t, double df) {
     return 2 * cumulative(-Math.abs(t), df);

@@ -49,9 +49,9 @@ public final class Numbers {
    */
   public static String roundedLike(double value, double guide, int significant) {
     BigDecimal digits =
-        new BigDecimal(guide).round(new MathContext(significant, RoundingMode.HALF_EVEN));
+        BigDecimal.valueOf(guide).round(new MathContext(significant, RoundingMode.HALF_EVEN));
     int scale = digits.scale() + significant - digits.precision();
-    BigDecimal rounded = new BigDecimal(value).setScale(scale, RoundingMode.HALF_EVEN);
+    BigDecimal rounded = BigDecimal.valueOf(value).setScale(scale, RoundingMode.HALF_EVEN);
     return inReach(guide) ? rounded.toPlainString() : rounded.toString();
   }
 
