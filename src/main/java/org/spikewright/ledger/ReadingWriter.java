@@ -52,7 +52,7 @@ final class ReadingWriter {
 
   /** The newest version of a reading that is there already. */
   private record Newest(
-      int nth, double signal, int state, long facts, long batch, boolean delimits) {}
+      int nth, double signal, int state, long facts, long batch, boolean delimits, long arrival) {}
 
   ReadingWriter(Sql sql, Ids ids, DayNotes notes, long arrival) {
     this.sql = sql;
@@ -132,7 +132,7 @@ final class ReadingWriter {
 
   private void again(NewRow row) {
     Newest newest = newest(row);
-    if (same(newest, row)) {
+    if (same(newest, row) && !isTakenBack(newest, row)) {
       repeated++;
       return;
     }
@@ -146,7 +146,7 @@ final class ReadingWriter {
 
   private Newest newest(NewRow row) {
     return sql.first(
-            "SELECT r.nth, r.signal, r.state, r.facts, o.batch, o.delimits"
+            "SELECT r.nth, r.signal, r.state, r.facts, o.batch, o.delimits, o.arrival"
                 + " FROM reading r JOIN origin o ON o.id = r.origin"
                 + " WHERE r.subject = ? AND r.read_at = ? AND r.batch = ? AND r.preparation = ?"
                 + " AND r.flask = ? AND r.replicate = ? ORDER BY r.nth DESC LIMIT 1",
@@ -157,7 +157,8 @@ final class ReadingWriter {
                     found.getInt(3),
                     found.getLong(4),
                     found.getLong(5),
-                    found.getInt(6) != 0),
+                    found.getInt(6) != 0,
+                    found.getLong(7)),
             row.subject(),
             row.at(),
             row.batch(),
@@ -165,6 +166,28 @@ final class ReadingWriter {
             row.flask(),
             row.replicate())
         .orElseThrow(() -> new IllegalStateException("a reading that was there is not"));
+  }
+
+  /**
+   * Whether a known reading comes again after a delivery that said another addition or preparation
+   * of the same act of reading: then it takes that correction back, and has to be the later one.
+   */
+  private boolean isTakenBack(Newest newest, NewRow row) {
+    return row.timed()
+        && sql.number(
+                "SELECT r.nth FROM reading r JOIN origin o ON o.id = r.origin"
+                    + " WHERE r.subject = ? AND r.read_at = ? AND r.batch = 0 AND r.replicate = ?"
+                    + " AND r.text = ? AND (r.flask <> ? OR r.preparation <> ?)"
+                    + " AND o.arrival > ? AND o.arrival < ? LIMIT 1",
+                row.subject(),
+                row.at(),
+                row.replicate(),
+                StoredText.encode(row.signal().text()),
+                row.flask(),
+                row.preparation(),
+                newest.arrival(),
+                arrival)
+            .isPresent();
   }
 
   /**

@@ -10,6 +10,7 @@ import java.nio.file.Path;
 import java.time.Instant;
 import java.time.temporal.ChronoUnit;
 import java.util.ArrayList;
+import java.util.Collections;
 import java.util.List;
 import java.util.Map;
 import java.util.TreeMap;
@@ -32,9 +33,10 @@ class RedeliveryTest {
   @TempDir private static Path lab;
   private static Map<String, CSVRecord> first;
   private static Map<String, CSVRecord> second;
+  private static Map<String, CSVRecord> third;
 
   @BeforeAll
-  static void deliverTwice() throws IOException {
+  static void deliverAgainAndAgain() throws IOException {
     Files.createDirectories(lab.resolve("mappings"));
     Files.writeString(lab.resolve("spikewright.toml"), CONFIGURATION);
     mapping("named", "flask = \"flask\"\nmeasured_at = \"at\"");
@@ -50,6 +52,7 @@ class RedeliveryTest {
     drop("untimed/old-name.csv", rows("renamed", 3.3, RIGHT, 4));
     drop("named/parts.csv", rows("in parts", 3, RIGHT, 3));
     drop("named/again.csv", rows("again", 3, RIGHT, 4));
+    drop("timed/back.csv", rows("taken back", 3, RIGHT, 4));
     first = results();
 
     drop("named/signal.csv", rows("signal corrected", 3, RIGHT, 4));
@@ -62,7 +65,13 @@ class RedeliveryTest {
     rest.subList(1, 4).clear();
     drop("named/parts-2.csv", rest);
     drop("named/again-2.csv", rows("again", 3, RIGHT, 4));
+    drop("timed/back.csv", rows("taken back", 3.3, RIGHT, 4));
     second = results();
+
+    List<String> back = new ArrayList<>(rows("taken back", 3, RIGHT, 4));
+    Collections.reverse(back.subList(1, back.size()));
+    drop("timed/back.csv", back);
+    third = results();
   }
 
   private static void mapping(String name, String columns) throws IOException {
@@ -129,6 +138,13 @@ class RedeliveryTest {
     isResult(first.get("addition corrected"), MISTYPED, RIGHT);
     isResult(second.get("addition corrected"), STEPS, RIGHT);
     assertThat(second.get("addition corrected").get("flags")).contains("superseded-reading");
+  }
+
+  @Test
+  void aCorrectionThatIsTakenBackNoLongerCounts() {
+    isResult(second.get("taken back"), MISTYPED, RIGHT);
+    isResult(third.get("taken back"), STEPS, RIGHT);
+    assertThat(third.get("taken back").get("flags")).contains("superseded-reading");
   }
 
   @Test
