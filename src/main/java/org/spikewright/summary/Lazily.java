@@ -12,7 +12,20 @@ final class Lazily {
 
   /** Each element as something else. */
   static <A, B> Iterable<B> map(Iterable<A> source, Function<? super A, ? extends B> each) {
-    return flatMap(source, element -> List.of(each.apply(element)));
+    return () -> {
+      Iterator<A> walk = source.iterator();
+      return new Iterator<>() {
+        @Override
+        public boolean hasNext() {
+          return walk.hasNext();
+        }
+
+        @Override
+        public B next() {
+          return each.apply(walk.next());
+        }
+      };
+    };
   }
 
   /** Some elements as something else. */
