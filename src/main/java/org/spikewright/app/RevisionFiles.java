@@ -110,6 +110,10 @@ final class RevisionFiles {
       if (failed.getCause() instanceof WriteFault fault) {
         throw fault;
       }
+      if (failed.getCause() instanceof Error broken) {
+        // Out of memory on this thread is as grave as on the other.
+        throw broken;
+      }
       throw new IllegalStateException(failed.getCause());
     } catch (InterruptedException told) {
       throw new IllegalStateException(told);

@@ -59,10 +59,7 @@ final class AxisCheck {
     List<Dimension> kinds = kinds(flasks.get(0).facts());
     return kinds.size() == 1
         ? Optional.empty()
-        : Optional.of(
-            new Misfit(
-                kinds.stream().map(Dimension::words).collect(Collectors.joining(" with ")),
-                "stock and blanks of one kind"));
+        : Optional.of(new Misfit(words(kinds), "stock and blanks of one kind"));
   }
 
   private Optional<Misfit> ofDesign() {
@@ -235,6 +232,12 @@ final class AxisCheck {
   private static String words(Object fact) {
     if (fact instanceof Optional<?> optional) {
       return optional.map(AxisCheck::words).orElse("none");
+    }
+    if (fact instanceof List<?> several) {
+      return several.stream().map(AxisCheck::words).collect(Collectors.joining(" with "));
+    }
+    if (fact instanceof Dimension dimension) {
+      return dimension.words();
     }
     if (fact instanceof Preparation preparation) {
       return preparation.shown().isEmpty() ? "none" : preparation.shown();

@@ -8,7 +8,6 @@ import java.io.Writer;
 import java.nio.charset.StandardCharsets;
 import java.nio.file.Path;
 import java.util.List;
-import java.util.function.LongConsumer;
 import org.apache.commons.csv.CSVFormat;
 import org.spikewright.summary.CsvPlan;
 
@@ -20,8 +19,6 @@ public final class CsvWriter {
   private static final CSVFormat FORMAT =
       CSVFormat.RFC4180.builder().setRecordSeparator('\n').get();
 
-  private static final int PROGRESS_STEP = 512;
-
   private CsvWriter() {}
 
   /**
@@ -30,35 +27,16 @@ public final class CsvWriter {
    * @return the SHA-256 of its bytes, in hexadecimal
    */
   public static String write(CsvPlan plan, Path target) throws WriteFault {
-    return write(plan, target, lines -> {});
-  }
-
-  /**
-   * The same, telling how many lines are written.
-   *
-   * @param progress called now and then with the lines written so far
-   */
-  public static String write(CsvPlan plan, Path target, LongConsumer progress) throws WriteFault {
-    return Aside.write(target, out -> print(plan, out, progress));
+    return Aside.write(target, out -> print(plan, out));
   }
 
   /** Prints to a stream, which is flushed and left open. */
   public static void print(CsvPlan plan, OutputStream out) throws IOException {
-    print(plan, out, lines -> {});
-  }
-
-  private static void print(CsvPlan plan, OutputStream out, LongConsumer progress)
-      throws IOException {
     Writer writer = new BufferedWriter(new OutputStreamWriter(out, StandardCharsets.UTF_8));
     FORMAT.printRecord(writer, plan.header().toArray());
-    long lines = 0;
     for (List<String> line : plan.lines()) {
       FORMAT.printRecord(writer, line.toArray());
-      if (++lines % PROGRESS_STEP == 0) {
-        progress.accept(lines);
-      }
     }
-    progress.accept(lines);
     writer.flush();
   }
 }

@@ -234,6 +234,30 @@ class GatheringTest {
   }
 
   @Test
+  void stocksOfDifferentKindsAreRefusedInWords() {
+    FlaskFacts mass = madeUp(1);
+    FlaskFacts amount =
+        new FlaskFacts(
+            mass.role(),
+            mass.design(),
+            new Addition.OfStock(
+                new Quantity(2, Unit.of("mL")),
+                Measured.exactly(new Quantity(1, Unit.of("mmol/L")))),
+            mass.aliquot(),
+            mass.finalVolume(),
+            mass.startVolume(),
+            mass.preparation(),
+            mass.blanks(),
+            mass.method());
+    List<Gathered> gathered =
+        Bench.gather(
+            List.of(recorded(reading(mass, "1", 1, 0)), recorded(reading(amount, "1", 2, 1))));
+    assertThat(((Ungrouped) gathered.get(0)).found())
+        .isEqualTo(
+            "more than one kind of concentration: a mass concentration, an amount concentration");
+  }
+
+  @Test
   void theThreeBlanksGoWhereTheyBelong() {
     Blanks blanks =
         new Blanks(OptionalDouble.of(0.1), Optional.of(mgPerL(0.25)), Optional.of(mgPerL(0.5)));
