@@ -1,24 +1,29 @@
 package org.spikewright.config;
 
+import java.util.Arrays;
+import java.util.EnumMap;
+import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.stream.Stream;
 import org.spikewright.judgement.Criteria;
+import org.spikewright.judgement.CriteriaBook;
+import org.spikewright.judgement.Criterion;
 import org.spikewright.judgement.Flag.LimitSource;
 import org.spikewright.judgement.Limit;
 
-/** Reads {@code [criteria]}: each key a number, or a table with limit, on, source and reason. */
+/**
+ * Reads {@code [criteria]}: each key a number, or a table with limit, on, source and reason; under
+ * {@code [criteria.method."name"]} the same for one method.
+ */
 final class CriteriaSection {
+  /** The limits, and a table with limits for each method that sets its own. */
   static final List<String> KEYS =
-      List.of(
-          "false_alarms",
-          "bend_to_review",
-          "bend_to_repeat",
-          "least_correlation",
-          "least_top_addition",
-          "large_top_addition",
-          "largest_top_addition",
-          "target_uncertainty");
+      Stream.concat(Arrays.stream(Criterion.values()).map(Criterion::key), Stream.of("method"))
+          .toList();
+
+  private static final List<String> OWN_KEYS = KEYS.subList(0, KEYS.size() - 1);
 
   static final List<String> LIMIT_KEYS = List.of("limit", "on", "source", "reason");
 
@@ -31,29 +36,34 @@ final class CriteriaSection {
     this.section = section;
   }
 
-  static Criteria criteria(Section section) {
-    return new CriteriaSection(section).criteria();
+  static CriteriaBook book(Section section) {
+    Criteria general = new CriteriaSection(section).over(Criteria.defaults());
+    Map<String, Criteria> methods = new HashMap<>();
+    Optional<Section> each = section.openSection("method");
+    if (each.isPresent()) {
+      for (String method : each.get().keys()) {
+        each.get()
+            .section(method, OWN_KEYS)
+            .ifPresent(own -> methods.put(method, new CriteriaSection(own).over(general)));
+      }
+    }
+    return new CriteriaBook(general, methods);
   }
 
-  private Criteria criteria() {
-    Criteria byDefault = Criteria.defaults();
-    Criteria criteria =
-        new Criteria(
-            limit("false_alarms", byDefault.falseAlarms(), 0.5),
-            limit("bend_to_review", byDefault.bendToReview(), 10),
-            limit("bend_to_repeat", byDefault.bendToRepeat(), 10),
-            limit("least_correlation", byDefault.leastCorrelation(), 1),
-            limit("least_top_addition", byDefault.leastTopAddition(), 1000),
-            limit("large_top_addition", byDefault.largeTopAddition(), 1000),
-            limit("largest_top_addition", byDefault.largestTopAddition(), 1000),
-            limit("target_uncertainty", byDefault.targetUncertainty(), 10));
-    inOrder("bend_to_review", criteria.bendToReview(), "bend_to_repeat", criteria.bendToRepeat());
-    inOrder(
-        "large_top_addition",
-        criteria.largeTopAddition(),
-        "largest_top_addition",
-        criteria.largestTopAddition());
+  private Criteria over(Criteria general) {
+    Map<Criterion, Limit> limits = new EnumMap<>(Criterion.class);
+    for (Criterion criterion : Criterion.values()) {
+      limits.put(criterion, limit(criterion.key(), general.of(criterion), criterion.most()));
+    }
+    Criteria criteria = new Criteria(limits);
+    inOrder(Criterion.BEND_TO_REVIEW, Criterion.BEND_TO_REPEAT, criteria);
+    inOrder(Criterion.LARGE_TOP_ADDITION, Criterion.LARGEST_TOP_ADDITION, criteria);
+    inOrder(Criterion.ELECTRODE_SLOPE_LEAST, Criterion.ELECTRODE_SLOPE_MOST, criteria);
     return criteria;
+  }
+
+  private void inOrder(Criterion lower, Criterion upper, Criteria criteria) {
+    inOrder(lower.key(), criteria.of(lower), upper.key(), criteria.of(upper));
   }
 
   private void inOrder(String lower, Limit least, String upper, Limit most) {

@@ -62,7 +62,7 @@ public final class MappingFile {
     Places places =
         places(root, fixed, new PlacesSection(notation, defaultZone, named), notation, named);
     RowRules rows = RowsSection.rules(root, fixed, table.extraCells());
-    MethodRule method = new MethodSection(root, fixed, notation).rule();
+    MethodRule method = new MethodSection(root, fixed, notation).rule(name);
     new MappingCheck(root, named, method, places).check();
     return new Mapping(
         name,

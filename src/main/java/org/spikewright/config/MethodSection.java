@@ -30,9 +30,10 @@ final class MethodSection {
     this.notation = notation.with(NumberGrammar.POINT);
   }
 
-  MethodRule rule() {
+  MethodRule rule(String name) {
     Optional<Section> method = root.section("method", MappingKeys.KEYS.get("method"));
     return new MethodRule(
+        name,
         design(),
         fixed.flatMap(
             section ->

@@ -3,7 +3,7 @@ package org.spikewright.config;
 import java.nio.file.Path;
 import java.time.Duration;
 import java.time.LocalTime;
-import org.spikewright.judgement.Criteria;
+import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.reading.LabCalendar;
 
 /**
@@ -38,7 +38,7 @@ public record Settings(
     Duration settle,
     Duration longestPause,
     Duration waitForFlasks,
-    Criteria criteria,
+    CriteriaBook criteria,
     String sha256,
     String text) {
 

@@ -10,7 +10,7 @@ import java.time.ZoneOffset;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
-import org.spikewright.judgement.Criteria;
+import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.reading.LabCalendar;
 
 /** Reads the configuration file. */
@@ -85,8 +85,8 @@ final class SettingsFile {
         duration(series, "longest_pause", Duration.ofHours(4), Duration.ofSeconds(1)),
         duration(series, "wait_for_flasks", Duration.ofHours(12), Duration.ZERO),
         root.section("criteria", KEYS.get("criteria"))
-            .map(CriteriaSection::criteria)
-            .orElseGet(Criteria::defaults),
+            .map(CriteriaSection::book)
+            .orElseGet(CriteriaBook::defaults),
         text.sha256(),
         text.text());
   }

@@ -13,18 +13,19 @@ import org.spikewright.series.Ungrouped;
 
 /** Holds a series against the criteria and says what is to happen with its result. */
 public final class Judge {
-  private final Criteria criteria;
+  private final CriteriaBook book;
   private final Instant moment;
   private final Duration waitForFlasks;
 
   /**
    * A judge for one revision of a summary.
    *
+   * @param book the limits of each method
    * @param moment the instant the revision stands for
    * @param waitForFlasks how long after its last reading a series short of flasks is waited for
    */
-  public Judge(Criteria criteria, Instant moment, Duration waitForFlasks) {
-    this.criteria = criteria;
+  public Judge(CriteriaBook book, Instant moment, Duration waitForFlasks) {
+    this.book = book;
     this.moment = moment;
     this.waitForFlasks = waitForFlasks;
   }
@@ -42,6 +43,7 @@ public final class Judge {
       return outcome(series, Optional.empty(), flags);
     }
     SeriesResult result = ((SeriesFit.Fitted) fit).result();
+    Criteria criteria = book.of(series.method().name());
     flags.addAll(new LineFlags(result, criteria).all());
     flags.addAll(new ResultFlags(result, criteria).all());
     return outcome(series, Optional.of(result), flags);

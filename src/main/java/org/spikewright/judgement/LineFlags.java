@@ -36,7 +36,9 @@ final class LineFlags {
     odd.ifPresent(
         flask -> family.add(FlagKind.ODD_FLASK, flask.residual().p() * result.line().n()));
     Set<FlagKind> significant =
-        criteria.falseAlarms().on() ? family.significant(criteria.falseAlarms().value()) : Set.of();
+        criteria.of(Criterion.FALSE_ALARMS).on()
+            ? family.significant(criteria.of(Criterion.FALSE_ALARMS).value())
+            : Set.of();
     if (significant.contains(FlagKind.BENT)) {
       bent().ifPresent(flags::add);
     }
@@ -70,15 +72,19 @@ final class LineFlags {
               FlagKind.BENT,
               Weight.REPEAT,
               bend.pOneSided(),
-              criteria.falseAlarms(),
+              criteria.of(Criterion.FALSE_ALARMS),
               "The line bends so much that the bent line does not reach zero signal.",
               "Prepare again with smaller additions or a diluted sample."));
     }
     double bentValue = result.series().toResult().value(bentAxis.getAsDouble());
     double straight = result.value();
     double change = (bentValue - straight) / Math.abs(straight);
-    boolean repeat = criteria.bendToRepeat().on() && over(change, criteria.bendToRepeat());
-    if (!repeat && !(criteria.bendToReview().on() && over(change, criteria.bendToReview()))) {
+    boolean repeat =
+        criteria.of(Criterion.BEND_TO_REPEAT).on()
+            && over(change, criteria.of(Criterion.BEND_TO_REPEAT));
+    if (!repeat
+        && !(criteria.of(Criterion.BEND_TO_REVIEW).on()
+            && over(change, criteria.of(Criterion.BEND_TO_REVIEW)))) {
       return Optional.empty();
     }
     return Optional.of(
@@ -86,7 +92,7 @@ final class LineFlags {
             FlagKind.BENT,
             repeat ? Weight.REPEAT : Weight.REVIEW,
             change,
-            repeat ? criteria.bendToRepeat() : criteria.bendToReview(),
+            repeat ? criteria.of(Criterion.BEND_TO_REPEAT) : criteria.of(Criterion.BEND_TO_REVIEW),
             "The line bends: straight-line result "
                 + n(straight)
                 + ", bent-line "
@@ -114,8 +120,8 @@ final class LineFlags {
         FlagKind.ODD_FLASK,
         Weight.REVIEW,
         OptionalDouble.of(odd.residual().t()),
-        OptionalDouble.of(criteria.falseAlarms().value()),
-        criteria.falseAlarms().source(),
+        OptionalDouble.of(criteria.of(Criterion.FALSE_ALARMS).value()),
+        criteria.of(Criterion.FALSE_ALARMS).source(),
         "Flask "
             + result.flasks().get(odd.index()).label()
             + " lies "
@@ -150,7 +156,7 @@ final class LineFlags {
 
   private Optional<Flag> correlation() {
     OptionalDouble r = result.line().correlation();
-    Limit limit = criteria.leastCorrelation();
+    Limit limit = criteria.of(Criterion.LEAST_CORRELATION);
     if (!limit.on() || r.isEmpty() || r.getAsDouble() >= limit.value()) {
       return Optional.empty();
     }

@@ -111,7 +111,7 @@ final class ResultFlags {
 
   private Limit target() {
     OptionalDouble own = result.series().method().targetUncertainty();
-    Limit general = criteria.targetUncertainty();
+    Limit general = criteria.of(Criterion.TARGET_UNCERTAINTY);
     return own.isPresent()
         ? new Limit(
             own.getAsDouble(), general.on(), Flag.LimitSource.LABORATORY, "the method's target")
@@ -126,7 +126,7 @@ final class ResultFlags {
   }
 
   private Optional<Flag> tooSmall() {
-    Limit limit = criteria.leastTopAddition();
+    Limit limit = criteria.of(Criterion.LEAST_TOP_ADDITION);
     double ratio = topAddition() / found();
     if (!limit.on() || !(found() > 0) || ratio >= limit.value()) {
       return Optional.empty();
@@ -155,8 +155,8 @@ final class ResultFlags {
       return Optional.empty();
     }
     double ratio = topAddition() / reference;
-    Limit review = criteria.largestTopAddition();
-    Limit note = criteria.largeTopAddition();
+    Limit review = criteria.of(Criterion.LARGEST_TOP_ADDITION);
+    Limit note = criteria.of(Criterion.LARGE_TOP_ADDITION);
     boolean isReview = review.on() && ratio > review.value();
     if (!isReview && !(note.on() && ratio > note.value())) {
       return Optional.empty();

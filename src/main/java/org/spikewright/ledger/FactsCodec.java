@@ -12,7 +12,7 @@ import org.spikewright.reading.Addition;
 import org.spikewright.reading.Blanks;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.FlaskFacts;
-import org.spikewright.reading.MethodFacts;
+import org.spikewright.reading.InternalStandard;
 import org.spikewright.reading.Preparation;
 import org.spikewright.reading.Role;
 
@@ -45,10 +45,11 @@ final class FactsCodec {
     preparation(out, facts.preparation());
     Blanks blanks = facts.blanks();
     out.add(blanks.baseline()).add(optional(blanks.method())).add(optional(blanks.solvent()));
-    MethodFacts method = facts.method();
-    out.add(unit(method.resultUnit())).add(method.expectedFlasks());
-    out.add(method.fitReadings() ? "readings" : "");
-    out.add(method.trustedSignal()).add(method.reportingLimit()).add(method.targetUncertainty());
+    MethodCodec.encode(out, facts.method(), unit(facts.method().resultUnit()));
+    InternalStandard standard = facts.internalStandard().orElse(null);
+    out.add(standard == null ? "" : standard.given().name());
+    out.add(standard == null ? "" : optional(standard.mass()));
+    AccuracyCodec.encode(out, facts.accuracies());
     return out.toString();
   }
 
@@ -63,13 +64,16 @@ final class FactsCodec {
         optionalMeasured(in.text()),
         preparation(in),
         new Blanks(in.optionalDouble(), optionalMeasured(in.text()), optionalMeasured(in.text())),
-        new MethodFacts(
-            unit(in.text()),
-            in.number(),
-            !in.text().isEmpty(),
-            in.optionalDouble(),
-            in.optionalDouble(),
-            in.optionalDouble()));
+        MethodCodec.decode(in, FactsCodec::unit),
+        standard(in.text(), in.text()),
+        AccuracyCodec.decode(in));
+  }
+
+  private static Optional<InternalStandard> standard(String given, String mass) {
+    return given.isEmpty()
+        ? Optional.empty()
+        : Optional.of(
+            new InternalStandard(InternalStandard.Given.valueOf(given), optionalMeasured(mass)));
   }
 
   /**

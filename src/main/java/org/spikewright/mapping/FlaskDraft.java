@@ -9,6 +9,7 @@ import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Addition;
 import org.spikewright.reading.Blanks;
+import org.spikewright.reading.Calculation;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.MethodFacts;
@@ -154,12 +155,18 @@ record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit
 
   private MethodFacts methodFacts() {
     return new MethodFacts(
+        method.name(),
         resultUnit,
         method.flasks(),
         method.fitReadings(),
         optional(method.trustedSignal().of(analyte)),
         optional(method.reportingLimit().of(analyte).map(limit -> limit.in(resultUnit))),
-        method.targetUncertainty());
+        method.targetUncertainty(),
+        Optional.empty(),
+        OptionalDouble.empty(),
+        false,
+        Calculation.DEFAULT,
+        Optional.empty());
   }
 
   private Optional<Measured> value(Fact fact) {

@@ -10,6 +10,7 @@ import org.spikewright.reading.Design;
 /**
  * What a mapping says about the method.
  *
+ * @param name the mapping's name
  * @param design how additions are made
  * @param additions one vessel: what an addition volume means
  * @param terms stated: what a concentration refers to
@@ -21,6 +22,7 @@ import org.spikewright.reading.Design;
  * @param targetUncertainty relative expanded uncertainty aimed at
  */
 public record MethodRule(
+    String name,
     Design design,
     Optional<Additions> additions,
     Optional<Addition.Terms> terms,

@@ -17,6 +17,9 @@ import org.spikewright.quantity.Measured;
  * @param preparation what was done before the aliquot
  * @param blanks the blanks that apply
  * @param method what the method says about the series
+ * @param internalStandard the internal standard whose signal divides the analyte's, where there is
+ *     one
+ * @param accuracies how well the quantities are known
  */
 public record FlaskFacts(
     Role role,
@@ -27,4 +30,32 @@ public record FlaskFacts(
     Optional<Measured> startVolume,
     Preparation preparation,
     Blanks blanks,
-    MethodFacts method) {}
+    MethodFacts method,
+    Optional<InternalStandard> internalStandard,
+    Accuracies accuracies) {
+
+  /** Facts without an internal standard and without declared accuracies. */
+  public FlaskFacts(
+      Role role,
+      Design design,
+      Addition addition,
+      Optional<Measured> aliquot,
+      Optional<Measured> finalVolume,
+      Optional<Measured> startVolume,
+      Preparation preparation,
+      Blanks blanks,
+      MethodFacts method) {
+    this(
+        role,
+        design,
+        addition,
+        aliquot,
+        finalVolume,
+        startVolume,
+        preparation,
+        blanks,
+        method,
+        Optional.empty(),
+        Accuracies.NONE);
+  }
+}

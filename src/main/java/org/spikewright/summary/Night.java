@@ -4,7 +4,7 @@ import java.time.Instant;
 import java.time.LocalDate;
 import java.time.ZoneId;
 import java.util.List;
-import org.spikewright.judgement.Criteria;
+import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.Verdict;
 
@@ -24,7 +24,7 @@ import org.spikewright.judgement.Verdict;
  * @param files by arrival
  * @param refused by arrival and place
  * @param settings in order; the limits follow from {@code criteria} and need not be among them
- * @param criteria the limits that hold where a method sets none
+ * @param criteria the limits of judgement
  */
 public record Night(
     LocalDate labDay,
@@ -39,7 +39,7 @@ public record Night(
     List<FileEntry> files,
     Iterable<RefusedRow> refused,
     List<Setting> settings,
-    Criteria criteria) {
+    CriteriaBook criteria) {
 
   /** Up to so many series, the Series sheet holds every one. */
   static final int EVERY_SERIES = 2000;

@@ -6,6 +6,7 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.stream.IntStream;
+import org.spikewright.judgement.Criterion;
 import org.spikewright.judgement.Verdict;
 import org.spikewright.quantity.Numbers;
 import org.spikewright.reading.Subject;
@@ -98,7 +99,7 @@ final class OverviewSheet {
 
   private void alarms() {
     heading("How far to trust this");
-    double rate = night.criteria().falseAlarms().value();
+    double rate = night.criteria().general().of(Criterion.FALSE_ALARMS).value();
     double expected = rate * night.seriesCount();
     row(CellPlan.text("false alarms expected"), CellPlan.number(expected, "0.0"));
     row(CellPlan.text("statistical flags raised"), CellPlan.count(counts.tested()));

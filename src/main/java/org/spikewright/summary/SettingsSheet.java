@@ -2,7 +2,9 @@ package org.spikewright.summary;
 
 import java.util.ArrayList;
 import java.util.List;
-import org.spikewright.judgement.Criteria;
+import java.util.TreeMap;
+import org.spikewright.judgement.CriteriaBook;
+import org.spikewright.judgement.Criterion;
 import org.spikewright.judgement.Limit;
 import org.spikewright.quantity.Numbers;
 
@@ -75,22 +77,28 @@ final class SettingsSheet {
         SheetPlan.Layout.table("SettingsTable"));
   }
 
-  private static List<Setting> limits(Criteria criteria) {
-    return List.of(
-        limit("False alarms per straight series", criteria.falseAlarms()),
-        limit("Bend, relative change: review above", criteria.bendToReview()),
-        limit("Bend, relative change: repeat above", criteria.bendToRepeat()),
-        limit("Correlation: note below", criteria.leastCorrelation()),
-        limit("Top addition over native: too small below", criteria.leastTopAddition()),
-        limit("Top addition over native: note above", criteria.largeTopAddition()),
-        limit("Top addition over native: review above", criteria.largestTopAddition()),
-        limit("Relative uncertainty to meet", criteria.targetUncertainty()));
+  private static List<Setting> limits(CriteriaBook book) {
+    List<Setting> limits = new ArrayList<>();
+    book.general()
+        .limits()
+        .forEach((criterion, limit) -> limits.add(limit("Limit", criterion, limit)));
+    new TreeMap<>(book.methods())
+        .forEach(
+            (method, own) ->
+                own.limits()
+                    .forEach(
+                        (criterion, limit) -> {
+                          if (!limit.equals(book.general().of(criterion))) {
+                            limits.add(limit("Limit, " + method, criterion, limit));
+                          }
+                        }));
+    return limits;
   }
 
-  private static Setting limit(String name, Limit limit) {
+  private static Setting limit(String group, Criterion criterion, Limit limit) {
     return new Setting(
-        "Limit",
-        name,
+        group,
+        criterion.words(),
         Numbers.plain(limit.value()) + (limit.on() ? "" : " (off)"),
         limit.source().words() + ": " + limit.reason());
   }

@@ -35,12 +35,34 @@ final class Words {
       case SLOPE_NOT_ESTABLISHED -> "the signal does not clearly rise with the addition";
       case BENT -> "the line bends, and the bend moves the result";
       case ODD_FLASK -> "one flask lies off the line through the others";
+      case ODD_LEVEL -> "all flasks of one level of addition lie off the line";
+      case NOISY -> "the flasks scatter more than those of the night's other series";
+      case SUSPECTED_SLIP -> "a simple slip at the bench would explain the points";
+      case ODD_SLOPE -> "the sensitivity differs from the night's other series";
+      case SHARED_BEND -> "the night's lines bend together";
+      case LEVEL_OFF -> "one level of addition is off all over the night";
+      case NIGHT_DRIFT -> "the signals drift over the night";
+      case ELECTRODE_SLOPE -> "the electrode's slope is far from theory";
+      case BEND_ALLOWANCE -> "the data leave a larger bend open than the method allows";
       case UNCERTAIN -> "the uncertainty misses its target";
       case LOW_CORRELATION -> "the correlation is low (it does not see bending)";
       case NO_UNSPIKED_FLASK -> "no flask without addition";
       case FEW_FLASKS -> "fewer flasks than the method expects";
       case ADDITIONS_TOO_SMALL -> "the additions are small beside what is there";
       case ADDITIONS_TOO_LARGE -> "the additions are large beside what is there";
+      case UNEVEN_ADDITIONS -> "the additions leave a wide gap, or repeat";
+      case OVER_RANGE_USED -> "a reading above the instrument's range was used";
+      case OUTSIDE_WORKING_RANGE -> "the result lies outside the method's working range";
+      case SCATTERED_READINGS -> "the readings of one flask scatter";
+      case BLANK_MISSING -> "the method asks for a blank and there is none";
+      case BLANK_HIGH -> "the blank is large beside the result";
+      case CHECK_READING_OFF -> "a check reading moved";
+      case CONTROL_OUT -> "a control sample of the batch is out of its limits";
+      case RECOVERY_OUT -> "a recovery of the batch is out of its limits";
+      case DUPLICATES_APART -> "duplicates of the batch lie apart";
+      case SERIES_DISAGREE -> "series of one sample disagree";
+      case INCOMPLETE -> "flasks are missing and no longer waited for";
+      case SIMILAR_ID -> "two sample IDs differ only in case or blanks";
       case OVER_RANGE -> "a reading above the instrument's range";
       case LEFT_OUT -> "a reading below range, or missing, was left out";
       case BELOW_DETECTION -> "not detected";
@@ -58,6 +80,9 @@ final class Words {
 
   /** Whether a flag is one of the statistical tests that share the false-alarm rate. */
   static boolean isTested(FlagKind kind) {
-    return kind == FlagKind.BENT || kind == FlagKind.ODD_FLASK;
+    return switch (kind) {
+      case BENT, ODD_FLASK, NOISY, SUSPECTED_SLIP, ODD_SLOPE -> true;
+      default -> false;
+    };
   }
 }

@@ -32,7 +32,7 @@ class JudgeTest {
   }
 
   private static Outcome judge(List<Recorded> readings, Instant moment) {
-    return new Judge(Criteria.defaults(), moment, Duration.ofHours(12)).judge(series(readings));
+    return new Judge(CriteriaBook.defaults(), moment, Duration.ofHours(12)).judge(series(readings));
   }
 
   private static List<FlagKind> kinds(Outcome outcome) {
@@ -203,12 +203,18 @@ class JudgeTest {
     MethodFacts m = f.method();
     MethodFacts method =
         new MethodFacts(
+            m.name(),
             m.resultUnit(),
             m.expectedFlasks(),
             m.fitReadings(),
             m.trustedSignal(),
             reportingLimit,
-            m.targetUncertainty());
+            m.targetUncertainty(),
+            m.workingRange(),
+            m.bendAllowance(),
+            m.blankDue(),
+            m.calculation(),
+            m.electrode());
     FlaskFacts facts =
         new FlaskFacts(
             f.role(),
@@ -267,7 +273,7 @@ class JudgeTest {
       }
       for (Gathered gathered : Bench.gather(statedSeries(x, y))) {
         Outcome outcome =
-            new Judge(Criteria.defaults(), NEXT_DAY, Duration.ofHours(12)).judge(gathered);
+            new Judge(CriteriaBook.defaults(), NEXT_DAY, Duration.ofHours(12)).judge(gathered);
         assertThat(outcome.verdict()).as("seed %d", seed).isNotNull();
         outcome.result().ifPresent(JudgeTest::assertFinite);
         assertThat(outcome.result().isPresent() || outcome.verdict() == Verdict.REPEAT)

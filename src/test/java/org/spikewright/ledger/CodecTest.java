@@ -15,10 +15,13 @@ import org.spikewright.quantity.Dimension;
 import org.spikewright.quantity.Measured;
 import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
+import org.spikewright.reading.Accuracies;
 import org.spikewright.reading.Addition;
 import org.spikewright.reading.Blanks;
+import org.spikewright.reading.Calculation;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.InternalStandard;
 import org.spikewright.reading.MethodFacts;
 import org.spikewright.reading.Preparation;
 import org.spikewright.reading.Role;
@@ -152,13 +155,54 @@ class CodecTest {
             optional().map(Measured::quantity),
             optionalNumber()),
         new Blanks(optionalNumber(), optional(), optional()),
-        new MethodFacts(
-            unit(),
-            random.nextInt(9),
-            random.nextBoolean(),
-            optionalNumber(),
-            optionalNumber(),
-            optionalNumber()));
+        method(),
+        random.nextBoolean()
+            ? Optional.empty()
+            : Optional.of(new InternalStandard(pick(InternalStandard.Given.values()), optional())),
+        random.nextBoolean()
+            ? Accuracies.NONE
+            : new Accuracies(
+                accuracy(),
+                accuracy(),
+                accuracy(),
+                accuracy(),
+                accuracy(),
+                accuracy(),
+                accuracy(),
+                accuracy(),
+                accuracy()));
+  }
+
+  private Optional<Accuracies.Accuracy> accuracy() {
+    return random.nextBoolean()
+        ? Optional.empty()
+        : Optional.of(new Accuracies.Accuracy(number(), number(), pick(WORDS)));
+  }
+
+  private MethodFacts method() {
+    return new MethodFacts(
+        pick(WORDS),
+        unit(),
+        random.nextInt(9),
+        random.nextBoolean(),
+        optionalNumber(),
+        optionalNumber(),
+        optionalNumber(),
+        random.nextBoolean()
+            ? Optional.empty()
+            : Optional.of(new MethodFacts.WorkingRange(number(), number())),
+        optionalNumber(),
+        random.nextBoolean(),
+        new Calculation(
+            pick(Calculation.Interval.values()),
+            pick(Calculation.Weights.values()),
+            pick(Calculation.Bend.values()),
+            random.nextBoolean()),
+        random.nextBoolean()
+            ? Optional.empty()
+            : Optional.of(
+                new MethodFacts.Electrode(
+                    random.nextInt(9) - 4, optionalNumber(), optionalNumber())));
   }
 
   private ResultRow result() {

@@ -13,7 +13,7 @@ import java.util.TreeMap;
 import org.spikewright.config.Loaded;
 import org.spikewright.config.MappingFile;
 import org.spikewright.decode.FileDecoder;
-import org.spikewright.judgement.Criteria;
+import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.FlagKind;
 import org.spikewright.judgement.Judge;
@@ -98,7 +98,7 @@ public final class PublishedCase {
     Gathering gathering =
         new Gathering(
             new GatheringRules(new LabCalendar(ZONE, LocalTime.of(6, 0)), Duration.ofHours(4)));
-    Judge judge = new Judge(Criteria.defaults(), MOMENT, Duration.ofHours(12));
+    Judge judge = new Judge(CriteriaBook.defaults(), MOMENT, Duration.ofHours(12));
     List<Outcome> outcomes = new ArrayList<>();
     bySubject.forEach(
         (subject, readings) -> {

@@ -11,7 +11,7 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
-import org.spikewright.judgement.Criteria;
+import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.Verdict;
@@ -63,7 +63,8 @@ public final class Nights {
 
   private static final GatheringRules RULES =
       new GatheringRules(new LabCalendar(ZONE, LocalTime.of(6, 0)), Duration.ofHours(4));
-  private static final Judge JUDGE = new Judge(Criteria.defaults(), MOMENT, Duration.ofHours(12));
+  private static final Judge JUDGE =
+      new Judge(CriteriaBook.defaults(), MOMENT, Duration.ofHours(12));
 
   private Nights() {}
 
@@ -125,7 +126,7 @@ public final class Nights {
         files,
         refused,
         settings(),
-        Criteria.defaults());
+        CriteriaBook.defaults());
   }
 
   private static int urgency(Verdict verdict) {
