@@ -19,6 +19,9 @@ import org.spikewright.reading.Role;
  * @param preparation what was done before the aliquot
  * @param method what the method says
  * @param axisUnit the unit of every flask's {@code x}
+ * @param toSensitivity factor that turns the slope of the line (signal per axis unit) into the
+ *     sensitivity: signal per concentration in the measured solution, in base units of the axis
+ *     unit's dimension (g/L, mol/L, g/g, mol/g), so that series in different units compare
  * @param toResult how a concentration on the axis becomes the result
  * @param flasks ordered by addition, then label; at least one
  * @param notes remarks from the gathering
@@ -33,6 +36,7 @@ public record AdditionSeries(
     Preparation preparation,
     MethodFacts method,
     Unit axisUnit,
+    double toSensitivity,
     ToResult toResult,
     List<Flask> flasks,
     List<SeriesNote> notes,
@@ -60,6 +64,7 @@ public record AdditionSeries(
                 preparation,
                 method,
                 axisUnit,
+                toSensitivity,
                 toResult,
                 second,
                 List.of(),

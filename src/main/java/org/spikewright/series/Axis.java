@@ -22,8 +22,11 @@ import org.spikewright.reading.FlaskFacts;
  * @param x additions, in the order of the flasks
  * @param factor volume factors, in the same order; exactly 1 where all volumes are equal
  * @param dilution flask volume over aliquot where additions are stated in flask terms; otherwise 1
+ * @param measured by how much larger a concentration is on the axis than in the measured solution:
+ *     mean final volume over mean aliquot, in one vessel the start volume over the aliquot; 1 where
+ *     additions are stated in flask terms, or where the volumes are not known
  */
-record Axis(Unit unit, double[] x, double[] factor, double dilution) {
+record Axis(Unit unit, double[] x, double[] factor, double dilution, double measured) {
 
   private static final Unit LITRE = Unit.of("L");
 
@@ -40,7 +43,25 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
   private static Axis madeUp(List<FlaskFacts> flasks) {
     Unit unit = unit(flasks.get(0));
     double[] x = each(flasks, facts -> spike(facts, unit, aliquot(facts)));
-    return new Axis(unit, x, madeUpFactors(flasks), 1);
+    return new Axis(unit, x, madeUpFactors(flasks), 1, madeUpRatio(flasks));
+  }
+
+  /** Mean final volume over mean aliquot; 1 where one of them is not known. */
+  private static double madeUpRatio(List<FlaskFacts> flasks) {
+    double taken = 0;
+    double total = 0;
+    for (FlaskFacts facts : flasks) {
+      if (facts.aliquot().isEmpty() || facts.finalVolume().isEmpty()) {
+        return 1;
+      }
+      taken += base(facts.aliquot().get());
+      total += base(facts.finalVolume().get());
+    }
+    return total / taken;
+  }
+
+  private static double base(Measured measured) {
+    return measured.quantity().value() * measured.quantity().unit().perBase();
   }
 
   private static double[] madeUpFactors(List<FlaskFacts> flasks) {
@@ -70,7 +91,7 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
     double[] x = each(flasks, facts -> spike(facts, unit, aliquot));
     double[] factor =
         each(flasks, facts -> 1 + facts.addition().amount().in(start.unit()) / start.value());
-    return new Axis(unit, x, factor, 1);
+    return new Axis(unit, x, factor, 1, start.in(aliquot.unit()) / aliquot.value());
   }
 
   private static Axis stated(List<FlaskFacts> flasks) {
@@ -83,7 +104,7 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
         inFlask
             ? volume(first.finalVolume()).in(aliquot(first).unit()) / aliquot(first).value()
             : 1;
-    return new Axis(unit, x, ones, dilution);
+    return new Axis(unit, x, ones, dilution, inFlask ? 1 : madeUpRatio(flasks));
   }
 
   /**

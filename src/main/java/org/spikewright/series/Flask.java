@@ -1,7 +1,10 @@
 package org.spikewright.series;
 
+import java.math.BigDecimal;
+import java.math.MathContext;
 import java.util.Arrays;
 import java.util.List;
+import org.spikewright.quantity.Quantity;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
@@ -30,6 +33,9 @@ public record Flask(
     double meanSignal,
     double replicateSd,
     int numbers) {
+
+  /** Beyond these, units that were converted may leave their trace. */
+  private static final MathContext LEVEL_DIGITS = new MathContext(9);
 
   /** A flask with the mean of its readings. */
   static Flask of(FlaskDraft draft, double x, double volumeFactor) {
@@ -90,6 +96,18 @@ public record Flask(
   /** The signal that the line is fitted to. */
   public double y() {
     return meanSignal * volumeFactor;
+  }
+
+  /**
+   * The amount delivered, which tells one addition level from another whatever unit it was written
+   * in: in base units (L, g, or those of a stated concentration), to 9 significant digits. In one
+   * vessel it is the total so far.
+   */
+  public double delivered() {
+    Quantity amount = facts.addition().amount();
+    return new BigDecimal(amount.value() * amount.unit().perBase())
+        .round(LEVEL_DIGITS)
+        .doubleValue();
   }
 
   /** Whether nothing was added to it. */

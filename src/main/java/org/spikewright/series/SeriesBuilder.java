@@ -43,6 +43,7 @@ final class SeriesBuilder {
         facts.preparation(),
         facts.method(),
         axis.unit(),
+        axis.measured() / axis.unit().perBase(),
         ToResult.of(facts, axis),
         List.copyOf(flasks),
         notes(),
