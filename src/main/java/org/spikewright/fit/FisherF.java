@@ -21,11 +21,16 @@ final class FisherF {
     if (!(f > 0)) {
       return 1;
     }
+    if (f == Double.POSITIVE_INFINITY) {
+      return 0;
+    }
     if (below > MANY) {
       return chiSquareUpper(above * f, above);
     }
     double share = below / (below + above * f);
-    return Beta.regularizedBeta(share, below / 2, above / 2);
+    return share < 0.5
+        ? Beta.regularizedBeta(share, below / 2, above / 2)
+        : 1 - Beta.regularizedBeta(above * f / (below + above * f), above / 2, below / 2);
   }
 
   /** Probability of a chi-square of this or more. */
