@@ -54,7 +54,7 @@ final class DesignFlags {
         "Deliver the remaining flasks; after that time the series is judged as it is.");
   }
 
-  static List<Flag> of(AdditionSeries series) {
+  static List<Flag> of(AdditionSeries series, Criteria criteria) {
     List<Flag> flags = new ArrayList<>();
     if (series.usableFlasks().stream().noneMatch(Flask::isUnspiked)) {
       flags.add(
@@ -65,6 +65,7 @@ final class DesignFlags {
               "Measure an unspiked flask of this sample."));
     }
     fewFlasks(series, flags);
+    UnevenAdditions.flag(series, criteria.of(Criterion.UNEVEN_ADDITIONS)).ifPresent(flags::add);
     if (series.method().fitReadings()) {
       flags.add(
           Flags.plain(

@@ -2,12 +2,14 @@ package org.spikewright.summary;
 
 import java.util.ArrayDeque;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Queue;
+import java.util.Set;
 import java.util.stream.Collectors;
 import org.spikewright.fit.DeletedResidual;
 import org.spikewright.judgement.Flag;
@@ -50,7 +52,7 @@ record FlaskLine(
     }
     Map<String, Queue<Integer>> points = new HashMap<>();
     outcome.result().ifPresent(result -> index(result, points));
-    int odd = oddPoint(outcome);
+    Set<Integer> odd = oddPoints(outcome);
     List<FlaskLine> lines = new ArrayList<>();
     for (Flask flask : series.flasks()) {
       Queue<Integer> own = points.getOrDefault(flask.label(), new ArrayDeque<>());
@@ -60,7 +62,7 @@ record FlaskLine(
       // Where the laboratory counts readings as flasks, one flask has several points.
       while (!own.isEmpty()) {
         int point = own.remove();
-        lines.add(used(outcome.result().orElseThrow(), point, point == odd));
+        lines.add(used(outcome.result().orElseThrow(), point, odd.contains(point)));
       }
       if (!flask.secondRun().isEmpty()) {
         lines.add(secondRun(flask.second()));
@@ -115,22 +117,18 @@ record FlaskLine(
     return states.isEmpty() ? "no reading" : "no reading is a number: " + states;
   }
 
-  /** The point with the least probable deleted residual, where the series has an odd flask. */
-  private static int oddPoint(Outcome outcome) {
-    boolean flagged = outcome.flags().stream().map(Flag::kind).anyMatch(FlagKind.ODD_FLASK::equals);
-    if (!flagged || outcome.result().isEmpty()) {
-      return -1;
-    }
-    List<Optional<DeletedResidual>> residuals = outcome.result().get().residuals();
-    int odd = -1;
-    double least = Double.POSITIVE_INFINITY;
-    for (int i = 0; i < residuals.size(); i++) {
-      if (residuals.get(i).isPresent() && residuals.get(i).get().p() < least) {
-        least = residuals.get(i).get().p();
-        odd = i;
-      }
-    }
-    return odd;
+  /** The points that an odd-flask or odd-level flag is about. */
+  private static Set<Integer> oddPoints(Outcome outcome) {
+    boolean flagged =
+        outcome.flags().stream()
+            .map(Flag::kind)
+            .anyMatch(kind -> kind == FlagKind.ODD_FLASK || kind == FlagKind.ODD_LEVEL);
+    return flagged
+        ? outcome.result().flatMap(SeriesResult::judgedOdd).stream()
+            .flatMapToInt(odd -> Arrays.stream(odd.flasks()))
+            .boxed()
+            .collect(Collectors.toSet())
+        : Set.of();
   }
 
   static OptionalDouble finite(double value) {

@@ -7,6 +7,7 @@ import java.util.OptionalInt;
 import java.util.SortedSet;
 import java.util.TreeSet;
 import java.util.function.Function;
+import org.spikewright.fit.Budget;
 import org.spikewright.fit.StraightLine;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.Outcome;
@@ -28,7 +29,7 @@ import org.spikewright.series.Ungrouped;
  * @param value the result, in {@code unit}
  * @param unit the unit of the result; empty when there is no series
  * @param reported the text to report; empty when nothing can be reported
- * @param standardUncertainty combined; empty until a budget exists
+ * @param standardUncertainty combined; empty where the fit has no uncertainty
  * @param expandedUncertainty likewise
  * @param coverageFactor likewise
  * @param lower95 lower end of the reported fit interval, in {@code unit}; empty when unbounded
@@ -50,6 +51,7 @@ import org.spikewright.series.Ungrouped;
  * @param r correlation coefficient
  * @param design in a word
  * @param sourceFiles the files its readings came from, sorted
+ * @param evidence what it rests on beside its own line
  */
 public record ResultRow(
     SeriesKey key,
@@ -79,15 +81,16 @@ public record ResultRow(
     OptionalInt residualDf,
     OptionalDouble r,
     String design,
-    List<String> sourceFiles) {
+    List<String> sourceFiles,
+    RowEvidence evidence) {
 
   /** The row of what the night says about a series. */
   public static ResultRow of(Outcome outcome) {
     Optional<SeriesResult> result = outcome.result();
     Optional<StraightLine> line = result.map(SeriesResult::line);
-    OptionalDouble lower = number(result, SeriesResult::lower95);
-    OptionalDouble upper = number(result, SeriesResult::upper95);
-    OptionalDouble none = OptionalDouble.empty();
+    OptionalDouble lower = number(result, SeriesResult::reportedLower95);
+    OptionalDouble upper = number(result, SeriesResult::reportedUpper95);
+    Optional<Budget> budget = result.flatMap(SeriesResult::budget);
     Origin origin = Origin.of(outcome.gathered());
     return new ResultRow(
         outcome.gathered().key(),
@@ -96,15 +99,15 @@ public record ResultRow(
         number(result, found -> OptionalDouble.of(found.value())),
         origin.unit,
         outcome.reported(),
-        none,
-        none,
-        none,
+        number(budget, made -> OptionalDouble.of(made.standardUncertainty())),
+        number(budget, made -> OptionalDouble.of(made.expandedUncertainty())),
+        number(budget, made -> OptionalDouble.of(made.coverageFactor())),
         lower,
         upper,
         number(result, SeriesResult::standardError),
-        lower,
-        upper,
-        lower.isPresent() || upper.isPresent() ? "own" : "",
+        number(result, SeriesResult::lower95),
+        number(result, SeriesResult::upper95),
+        result.map(ResultRow::basis).orElse(""),
         number(result.flatMap(SeriesResult::detection), d -> OptionalDouble.of(d.detectionLimit())),
         outcome.verdict(),
         outcome.flags().stream().map(flag -> flag.kind().shortName()).toList(),
@@ -117,7 +120,15 @@ public record ResultRow(
         line.map(found -> OptionalInt.of(found.residualDf())).orElse(OptionalInt.empty()),
         number(line, StraightLine::correlation),
         origin.design,
-        origin.files());
+        origin.files(),
+        result.map(RowEvidence::of).orElse(RowEvidence.EMPTY));
+  }
+
+  private static String basis(SeriesResult result) {
+    if (result.reportedPool().isPresent()) {
+      return "pool";
+    }
+    return result.standardError().isPresent() ? "own" : "";
   }
 
   /** What is known of readings whether they form a series or not. */

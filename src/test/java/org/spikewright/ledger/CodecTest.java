@@ -29,6 +29,7 @@ import org.spikewright.reading.SampleId;
 import org.spikewright.reading.Subject;
 import org.spikewright.series.SeriesKey;
 import org.spikewright.summary.ResultRow;
+import org.spikewright.summary.RowEvidence;
 
 class CodecTest {
   private static final String[] WORDS = {
@@ -235,7 +236,20 @@ class CodecTest {
         random.nextBoolean() ? OptionalInt.empty() : OptionalInt.of(random.nextInt()),
         optionalNumber(),
         pick(WORDS),
-        words());
+        words(),
+        new RowEvidence(
+            pick(WORDS),
+            random.nextInt(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            words()));
   }
 
   private List<String> words() {
