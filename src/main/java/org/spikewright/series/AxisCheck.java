@@ -155,9 +155,19 @@ final class AxisCheck {
             () ->
                 spiked.grows()
                     ? Optional.empty()
-                    : spiked.differing(
-                        "stock",
-                        f -> f.addition().portions().stream().map(OfStock::stock).toList()));
+                    : Optional.of(
+                        new Misfit(
+                            "more than one stock: " + spiked.stockWords(),
+                            "one stock, or additions = \"each\": a total does not tell what each"
+                                + " stock brought")));
+  }
+
+  private String stockWords() {
+    return flasks.stream()
+        .flatMap(flask -> flask.facts().addition().portions().stream())
+        .map(portion -> portion.stock().toString())
+        .distinct()
+        .collect(Collectors.joining(", "));
   }
 
   private boolean grows() {
