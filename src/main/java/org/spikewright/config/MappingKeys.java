@@ -14,10 +14,23 @@ final class MappingKeys {
 
   /** Facts that hold for one row only and cannot be fixed; the instrument has a key of its own. */
   private static final List<Fact> NEVER_FIXED =
-      List.of(Fact.SIGNAL, Fact.MEASURED_AT, Fact.FLASK, Fact.INSTRUMENT, Fact.RESULT_UNIT);
+      List.of(
+          Fact.SIGNAL,
+          Fact.INTERNAL_STANDARD,
+          Fact.MEASURED_AT,
+          Fact.FLASK,
+          Fact.INSTRUMENT,
+          Fact.RESULT_UNIT);
 
   static final List<String> METHOD_IN_FIXED =
-      List.of("design", "additions", "addition_terms", "flasks", "role");
+      List.of(
+          "design",
+          "additions",
+          "addition_terms",
+          "flasks",
+          "role",
+          "signal_unit",
+          "internal_standard_given");
 
   /** By section; the file itself is the section with the empty name. */
   static final Map<String, List<String>> KEYS =
@@ -60,7 +73,14 @@ final class MappingKeys {
           Map.entry("result", List.of("unit")),
           Map.entry(
               "method",
-              List.of("trusted_signal", "reporting_limit", "target_uncertainty", "unit")));
+              List.of(
+                  "trusted_signal",
+                  "reporting_limit",
+                  "target_uncertainty",
+                  "unit",
+                  "charge",
+                  "slope",
+                  "temperature")));
 
   /** The facts that {@code [fixed]} may hold. */
   static List<Fact> fixable() {
@@ -69,7 +89,7 @@ final class MappingKeys {
 
   /** The facts that a label or a file name may hold. */
   static List<Fact> inText() {
-    return Arrays.stream(Fact.values()).filter(fact -> fact != Fact.SIGNAL).toList();
+    return Arrays.stream(Fact.values()).filter(fact -> fact.kind() != Kind.SIGNAL).toList();
   }
 
   /** The keys of a column or a group, by what the fact is. */

@@ -48,7 +48,8 @@ final class MethodSection {
         method.flatMap(section -> section.oneOf("unit", POINTS)).orElse(false),
         method.map(this::trustedSignal).orElse(PerAnalyte.none()),
         method.map(this::reportingLimit).orElse(PerAnalyte.none()),
-        method.map(MethodSection::targetUncertainty).orElse(OptionalDouble.empty()));
+        method.map(MethodSection::targetUncertainty).orElse(OptionalDouble.empty()),
+        SignalSection.rule(fixed, method, notation));
   }
 
   private Design design() {

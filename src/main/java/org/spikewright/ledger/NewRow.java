@@ -4,6 +4,7 @@ import java.sql.PreparedStatement;
 import java.sql.SQLException;
 import java.sql.Types;
 import java.util.Comparator;
+import java.util.OptionalDouble;
 import org.spikewright.reading.Signal;
 
 /**
@@ -38,8 +39,8 @@ record NewRow(
 
   static final String INSERT =
       "INSERT INTO reading (subject, read_at, batch, preparation, flask, replicate, nth,"
-          + " signal, state, text, facts, origin, line_no)"
-          + " VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?) ON CONFLICT DO NOTHING";
+          + " signal, state, text, facts, origin, line_no, standard)"
+          + " VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?) ON CONFLICT DO NOTHING";
 
   boolean timed() {
     return batch == Ids.NONE;
@@ -63,6 +64,17 @@ record NewRow(
     insert.setLong(11, facts);
     insert.setLong(12, origin);
     insert.setLong(13, line);
+    OptionalDouble standard = standard(signal);
+    if (standard.isPresent()) {
+      insert.setDouble(14, standard.getAsDouble());
+    } else {
+      insert.setNull(14, Types.DOUBLE);
+    }
+  }
+
+  /** The internal standard's signal, where there is one. */
+  static OptionalDouble standard(Signal signal) {
+    return signal instanceof Signal.Value number ? number.standard() : OptionalDouble.empty();
   }
 
   /** 0 for a number. */
@@ -77,9 +89,9 @@ record NewRow(
     return 0;
   }
 
-  static Signal signal(int state, double value, String text) {
+  static Signal signal(int state, double value, String text, OptionalDouble standard) {
     return switch (state) {
-      case 0 -> new Signal.Value(value, text);
+      case 0 -> new Signal.Value(value, text, standard);
       case 1 -> new Signal.NoNumber(Signal.State.OVER_RANGE, text);
       case 2 -> new Signal.NoNumber(Signal.State.BELOW_RANGE, text);
       case 3 -> new Signal.NoNumber(Signal.State.MISSING, text);

@@ -10,6 +10,7 @@ import java.util.HashSet;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import java.util.OptionalLong;
 import java.util.Set;
 import java.util.stream.Stream;
@@ -26,7 +27,7 @@ final class ReadingQueries {
   private static final int REMEMBERED = 65_536;
   private static final String ROWS =
       "SELECT read_at, batch, preparation, flask, replicate, nth, signal, state, text, facts,"
-          + " origin, line_no FROM reading WHERE subject = ? ";
+          + " origin, line_no, standard FROM reading WHERE subject = ? ";
   private static final String KEY_ORDER =
       " ORDER BY read_at, batch, preparation, flask, replicate, nth";
 
@@ -69,7 +70,8 @@ final class ReadingQueries {
       String text,
       long facts,
       Origin origin,
-      long line) {
+      long line,
+      OptionalDouble standard) {
 
     boolean sameReading(Stored other) {
       return at == other.at
@@ -285,7 +287,8 @@ final class ReadingQueries {
         Sql.text(row, 9),
         row.getLong(10),
         origin(row.getLong(11)),
-        row.getLong(12));
+        row.getLong(12),
+        Sql.optionalDouble(row, 13));
   }
 
   private Recorded recorded(Subject subject, Stored row) {
@@ -301,7 +304,7 @@ final class ReadingQueries {
             row.batch() == Ids.NONE
                 ? Optional.of(Instant.ofEpochMilli(row.at()))
                 : Optional.empty(),
-            NewRow.signal(row.state(), row.signal(), row.text()),
+            NewRow.signal(row.state(), row.signal(), row.text(), row.standard()),
             words.facts(row.facts()),
             new Position(origin.source(), row.line(), origin.column()));
     return new Recorded(reading, origin.arrival(), origin.arrivedAt(), row.nth());

@@ -5,6 +5,7 @@ import java.util.ArrayList;
 import java.util.BitSet;
 import java.util.List;
 import java.util.Map;
+import java.util.OptionalDouble;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Signal;
 import org.spikewright.table.Position;
@@ -52,7 +53,14 @@ final class ReadingWriter {
 
   /** The newest version of a reading that is there already. */
   private record Newest(
-      int nth, double signal, int state, long facts, long batch, boolean delimits, long arrival) {}
+      int nth,
+      double signal,
+      int state,
+      OptionalDouble standard,
+      long facts,
+      long batch,
+      boolean delimits,
+      long arrival) {}
 
   ReadingWriter(Sql sql, Ids ids, DayNotes notes, long arrival) {
     this.sql = sql;
@@ -146,7 +154,8 @@ final class ReadingWriter {
 
   private Newest newest(NewRow row) {
     return sql.first(
-            "SELECT r.nth, r.signal, r.state, r.facts, o.batch, o.delimits, o.arrival"
+            "SELECT r.nth, r.signal, r.state, r.facts, o.batch, o.delimits, o.arrival,"
+                + " r.standard"
                 + " FROM reading r JOIN origin o ON o.id = r.origin"
                 + " WHERE r.subject = ? AND r.read_at = ? AND r.batch = ? AND r.preparation = ?"
                 + " AND r.flask = ? AND r.replicate = ? ORDER BY r.nth DESC LIMIT 1",
@@ -155,6 +164,7 @@ final class ReadingWriter {
                     found.getInt(1),
                     found.getDouble(2),
                     found.getInt(3),
+                    Sql.optionalDouble(found, 8),
                     found.getLong(4),
                     found.getLong(5),
                     found.getInt(6) != 0,
@@ -200,6 +210,7 @@ final class ReadingWriter {
     long delimitedBy = row.timed() && newest.delimits() ? newest.batch() : Ids.NONE;
     return newest.signal() == signal
         && newest.state() == NewRow.state(row.signal())
+        && newest.standard().equals(NewRow.standard(row.signal()))
         && newest.facts() == row.facts()
         && delimitedBy == row.delimitedBy();
   }

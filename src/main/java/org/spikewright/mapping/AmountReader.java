@@ -26,7 +26,7 @@ public final class AmountReader {
   /** Reads a cell. A cell that the file stores as a number needs a declared unit. */
   public Understood<Measured> read(Fact fact, Cell cell, Optional<Unit> declared) {
     Optional<Unit> unit =
-        declared.isEmpty() && fact == Fact.BASELINE ? Optional.of(Unit.ONE) : declared;
+        declared.isEmpty() && fact.isInSignalUnits() ? Optional.of(Unit.ONE) : declared;
     if (cell instanceof Cell.Number number) {
       return unit.isPresent()
           ? checked(fact, number.raw(), number.value(), unit.get(), OptionalDouble.empty())

@@ -18,22 +18,34 @@ public enum Fact {
   PREPARATION("preparation"),
   RESULT_UNIT("result_unit"),
   SIGNAL("signal", Kind.SIGNAL, Bound.ANY, "", Dimension.NUMBER),
+  INTERNAL_STANDARD("internal_standard", Kind.SIGNAL, Bound.ANY, "", Dimension.NUMBER),
   MEASURED_AT("measured_at", Kind.TIME, Bound.ANY, ""),
   ADDITION_VOLUME("addition_volume", Kind.AMOUNT, Bound.NOT_NEGATIVE, "0.5 mL", Dimension.VOLUME),
+  ADDITION_MASS("addition_mass", Kind.AMOUNT, Bound.NOT_NEGATIVE, "0.5 g", Dimension.MASS),
   ADDITION("addition", Kind.AMOUNT, Bound.NOT_NEGATIVE, "5 µg/L", Concentration.CONCENTRATIONS),
   ALIQUOT_VOLUME("aliquot_volume", Kind.AMOUNT, Bound.ABOVE_ZERO, "20 mL", Dimension.VOLUME),
+  ALIQUOT_MASS("aliquot_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "20 g", Dimension.MASS),
   FINAL_VOLUME("final_volume", Kind.AMOUNT, Bound.ABOVE_ZERO, "100 mL", Dimension.VOLUME),
+  FINAL_MASS("final_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "100 g", Dimension.MASS),
   START_VOLUME("start_volume", Kind.AMOUNT, Bound.ABOVE_ZERO, "20 mL", Dimension.VOLUME),
-  STOCK("stock", Kind.AMOUNT, Bound.ABOVE_ZERO, "10 mg/L", Concentration.PER_VOLUME),
+  STOCK("stock", Kind.AMOUNT, Bound.ABOVE_ZERO, "10 mg/L", Concentration.CONCENTRATIONS),
   DILUTION("dilution", Kind.DILUTION, Bound.AT_LEAST_ONE, "", Dimension.NUMBER),
   TEST_PORTION(
       "test_portion", Kind.AMOUNT, Bound.ABOVE_ZERO, "0.5 g", Dimension.MASS, Dimension.VOLUME),
   DIGEST_VOLUME("digest_volume", Kind.AMOUNT, Bound.ABOVE_ZERO, "50 mL", Dimension.VOLUME),
+  DIGEST_MASS("digest_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "50 g", Dimension.MASS),
   DRY_MASS("dry_mass", Kind.AMOUNT, Bound.FRACTION, "85 %", Dimension.NUMBER),
   BASELINE("baseline", Kind.AMOUNT, Bound.ANY, "0.003", Dimension.NUMBER),
   METHOD_BLANK("method_blank", Kind.AMOUNT, Bound.ANY, "0.1 µg/L", Concentration.CONCENTRATIONS),
+  METHOD_BLANK_DILUTION(
+      "method_blank_dilution", Kind.DILUTION, Bound.AT_LEAST_ONE, "", Dimension.NUMBER),
   SOLVENT_BLANK(
-      "solvent_blank", Kind.AMOUNT, Bound.NOT_NEGATIVE, "1 µg/L", Concentration.PER_VOLUME);
+      "solvent_blank", Kind.AMOUNT, Bound.NOT_NEGATIVE, "1 µg/L", Concentration.CONCENTRATIONS),
+  INTERNAL_STANDARD_BASELINE(
+      "internal_standard_baseline", Kind.AMOUNT, Bound.ANY, "0.003", Dimension.NUMBER),
+  INTERNAL_STANDARD_MASS(
+      "internal_standard_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "0.1 g", Dimension.MASS),
+  MOLAR_MASS("molar_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "207.2 g/mol", Dimension.MASS_PER_AMOUNT);
 
   /** How a fact is read. */
   public enum Kind {
@@ -74,7 +86,6 @@ public enum Fact {
 
   /** Lists that the constants above need before they exist. */
   private static final class Concentration {
-    static final Dimension[] PER_VOLUME = {Dimension.MASS_PER_VOLUME, Dimension.AMOUNT_PER_VOLUME};
     static final Dimension[] CONCENTRATIONS = {
       Dimension.MASS_PER_VOLUME,
       Dimension.AMOUNT_PER_VOLUME,
@@ -124,9 +135,23 @@ public enum Fact {
   /** Whether a tolerance declared for it is kept; where not, none may be declared. */
   boolean keepsTolerance() {
     return switch (this) {
-      case ALIQUOT_VOLUME, FINAL_VOLUME, START_VOLUME, STOCK, METHOD_BLANK, SOLVENT_BLANK -> true;
+      case ALIQUOT_VOLUME,
+          ALIQUOT_MASS,
+          FINAL_VOLUME,
+          FINAL_MASS,
+          START_VOLUME,
+          STOCK,
+          METHOD_BLANK,
+          SOLVENT_BLANK,
+          INTERNAL_STANDARD_MASS ->
+          true;
       default -> false;
     };
+  }
+
+  /** Whether it is in signal units, which bare numbers need not name. */
+  boolean isInSignalUnits() {
+    return this == BASELINE || this == INTERNAL_STANDARD_BASELINE;
   }
 
   /** Whether a value is possible; {@code value} in the base unit, which bounds of 0 do not need. */

@@ -10,9 +10,9 @@ import org.spikewright.quantity.Measured;
  * @param role what the row was measured for
  * @param design how the additions were made
  * @param addition what was added
- * @param aliquot the volume of sample solution in the flask
+ * @param aliquot the volume of sample solution in the flask; its mass where it was weighed
  * @param finalVolume the volume measured: the mark, or in one vessel the volume at this reading;
- *     empty when it follows from the other facts
+ *     the total mass where it was weighed; empty when it follows from the other facts
  * @param startVolume one vessel: the volume before the first addition
  * @param preparation what was done before the aliquot
  * @param blanks the blanks that apply
@@ -57,5 +57,21 @@ public record FlaskFacts(
         method,
         Optional.empty(),
         Accuracies.NONE);
+  }
+
+  /** The same with another addition. */
+  public FlaskFacts with(Addition other) {
+    return new FlaskFacts(
+        role,
+        design,
+        other,
+        aliquot,
+        finalVolume,
+        startVolume,
+        preparation,
+        blanks,
+        method,
+        internalStandard,
+        accuracies);
   }
 }

@@ -1,5 +1,7 @@
 package org.spikewright.reading;
 
+import java.util.OptionalDouble;
+
 /** What the instrument said. */
 public sealed interface Signal {
   /** As it stood in the cell. */
@@ -10,8 +12,15 @@ public sealed interface Signal {
    *
    * @param value finite, in the instrument's unit
    * @param text as it stood in the cell
+   * @param standard the internal standard's signal of the same reading, above its baseline; empty
+   *     where there is none
    */
-  record Value(double value, String text) implements Signal {}
+  record Value(double value, String text, OptionalDouble standard) implements Signal {
+    /** A number without an internal standard. */
+    public Value(double value, String text) {
+      this(value, text, OptionalDouble.empty());
+    }
+  }
 
   /** A declared word instead of a number. */
   record NoNumber(State state, String text) implements Signal {}

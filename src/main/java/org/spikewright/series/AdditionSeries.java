@@ -3,6 +3,7 @@ package org.spikewright.series;
 import java.time.Instant;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.MethodFacts;
@@ -82,6 +83,21 @@ public record AdditionSeries(
             .map(flask -> flask.readings().get(0).reading().flask())
             .distinct()
             .count();
+  }
+
+  /**
+   * The matrix factor: the sensitivity in this matrix over that of the calibration by which the
+   * instrument read concentrations back; 1 where the matrix changes nothing.
+   *
+   * @param slope of the line, in read-back concentration per axis unit
+   * @return empty where signals are no concentrations
+   */
+  public OptionalDouble matrixFactor(double slope) {
+    Optional<Unit> readBack =
+        method.signalUnit().filter(unit -> unit.dimension() == axisUnit.dimension());
+    return readBack.isPresent()
+        ? OptionalDouble.of(slope * toSensitivity * readBack.get().perBase())
+        : OptionalDouble.empty();
   }
 
   /** The number of readings, of all flasks, that count. */

@@ -4,8 +4,10 @@ import java.math.BigDecimal;
 import java.math.MathContext;
 import java.util.Arrays;
 import java.util.List;
+import java.util.OptionalDouble;
 import org.spikewright.quantity.Quantity;
 import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.InternalStandard;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
 
@@ -18,8 +20,9 @@ import org.spikewright.reading.Signal;
  * @param volumeFactor the factor by which a signal is multiplied to allow for the flask's volume
  * @param readings the readings that count, ordered by replicate and time
  * @param secondRun readings of a second run of this flask, never averaged with the first
- * @param meanSignal mean of the readings that are numbers, after the baseline, before the volume
- *     factor; NaN when no reading is a number
+ * @param meanSignal mean of the readings that are numbers, after the baseline and divided by the
+ *     internal standard where there is one, before the volume factor; NaN when no reading is a
+ *     number
  * @param replicateSd standard deviation of those readings; NaN with fewer than two
  * @param numbers how many readings are numbers
  */
@@ -39,12 +42,11 @@ public record Flask(
 
   /** A flask with the mean of its readings. */
   static Flask of(FlaskDraft draft, double x, double volumeFactor) {
-    double baseline = draft.facts().blanks().baseline().orElse(0);
     double[] signals = new double[draft.readings().size()];
     int numbers = 0;
     for (Recorded recorded : draft.readings()) {
       if (recorded.reading().signal() instanceof Signal.Value signal) {
-        signals[numbers++] = signal.value() - baseline;
+        signals[numbers++] = beforeTheLine(signal, draft.facts());
       }
     }
     signals = Arrays.copyOf(signals, numbers);
@@ -59,6 +61,17 @@ public record Flask(
         mean,
         standardDeviation(signals, mean),
         numbers);
+  }
+
+  /** The baseline first, then the internal standard, whose own baseline comes off it. */
+  private static double beforeTheLine(Signal.Value signal, FlaskFacts facts) {
+    double net = signal.value() - facts.blanks().baseline().orElse(0);
+    if (signal.standard().isEmpty()) {
+      return net;
+    }
+    OptionalDouble baseline =
+        facts.internalStandard().map(InternalStandard::baseline).orElse(OptionalDouble.empty());
+    return net / (signal.standard().getAsDouble() - baseline.orElse(0));
   }
 
   private static double mean(double[] values) {
@@ -90,7 +103,14 @@ public record Flask(
 
   /** Mean of the readings as the instrument showed them, the baseline included. */
   public double meanAsRead() {
-    return meanSignal + facts.blanks().baseline().orElse(0);
+    if (facts.internalStandard().isEmpty()) {
+      return meanSignal + facts.blanks().baseline().orElse(0);
+    }
+    double sum = 0;
+    for (Recorded recorded : readings) {
+      sum += recorded.reading().signal() instanceof Signal.Value signal ? signal.value() : 0;
+    }
+    return sum / numbers;
   }
 
   /** The signal that the line is fitted to. */

@@ -8,13 +8,16 @@ import java.nio.file.Path;
 import java.time.ZoneId;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 import org.spikewright.mapping.Mapping;
 import org.spikewright.mapping.Tally;
 import org.spikewright.mapping.Trial;
+import org.spikewright.reading.MethodFacts;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Role;
+import org.spikewright.reading.Signal;
 import org.spikewright.table.Cell;
 import org.spikewright.table.Row;
 import org.spikewright.table.Source;
@@ -34,7 +37,7 @@ class ExamplesTest {
   void allLoad() {
     MappingFolder folder = MappingFolder.load(MAPPINGS, LISBON);
     assertThat(folder.faults()).isEmpty();
-    assertThat(folder.good()).hasSize(6);
+    assertThat(folder.good()).hasSize(9);
   }
 
   @Test
@@ -217,6 +220,66 @@ class ExamplesTest {
         .isEqualTo("diluted 10-fold, 0.5012 g, in 50 mL, dry fraction 0.85");
     assertThat(trial.readings.get(0).facts().blanks().method().get())
         .hasToString("0.4 µg/L ± 0.1 µg/L");
+  }
+
+  @Test
+  void weighed() {
+    Trial trial =
+        Trial.text(
+            mapping("weighed.toml"),
+            "weighed/a.csv",
+            ",",
+            "Sample,Flask,Run,Counts Pb,Counts Tl,Aliquot g,Spike g,Tl solution g",
+            "K-1,1,1,10040,5025,10.003,0,0.1002",
+            "K-1,2,1,20040,SAT,9.998,0.5,0.1001",
+            "K-1,3,1,30040,25,10.001,1.0,0.1");
+    assertThat(trial.tally()).isEqualTo(new Tally(3, 2, 1, 0));
+    Reading first = trial.readings.get(0);
+    assertThat(first.facts().aliquot().get()).hasToString("10.003 g");
+    assertThat(first.facts().addition().amount()).hasToString("0 g");
+    assertThat(first.facts().internalStandard().get().mass().get()).hasToString("0.1002 g");
+    assertThat(first.signal()).isEqualTo(new Signal.Value(10040, "10040", OptionalDouble.of(5025)));
+    assertThat(trial.readings.get(1).signal())
+        .isEqualTo(new Signal.NoNumber(Signal.State.OVER_RANGE, "SAT"));
+    assertThat(trial.rejections.get(0).column()).isEqualTo("Counts Tl");
+    assertThat(trial.rejections.get(0).expected()).contains("above its baseline of 25");
+  }
+
+  @Test
+  void internalStandard() {
+    Trial trial =
+        Trial.text(
+            mapping("internal-standard.toml"),
+            "yttrium/a.csv",
+            ",",
+            "Sample,Element,Intensity,Y 371.029,Time,Spike",
+            "K-1,Cu,1000,5000,2025-01-15 18:30:00,0",
+            "K-1,Cu,1000,,2025-01-15 18:31:00,1",
+            "K-1,Zn,1000,0,2025-01-15 18:31:00,0");
+    assertThat(trial.tally()).isEqualTo(new Tally(3, 1, 2, 0));
+    assertThat(trial.rejections)
+        .extracting(rejection -> rejection.position().column())
+        .containsOnly(4);
+    assertThat(trial.rejections.get(1).expected()).contains("above 0");
+  }
+
+  @Test
+  void electrode() {
+    Trial trial =
+        Trial.text(
+            mapping("electrode.toml"),
+            "electrode/a.csv",
+            ",",
+            "Sample,Step,E / mV,Time,Added / mL",
+            "K-1,0,102.3,2025-01-15 18:30:00,0",
+            "K-1,1,89.1,2025-01-15 18:31:00,0.5",
+            "K-1,2,81.2,2025-01-15 18:32:00,0.5");
+    assertThat(trial.readings)
+        .extracting(reading -> reading.facts().addition().amount().toString())
+        .containsExactly("0 mL", "0.5 mL", "1 mL");
+    MethodFacts method = trial.readings.get(0).facts().method();
+    assertThat(method.electrode().get().charge()).isEqualTo(-1);
+    assertThat(method.signalUnit().get().symbol()).isEqualTo("mV");
   }
 
   @Test

@@ -143,9 +143,7 @@ class CodecTest {
     return new FlaskFacts(
         pick(Role.values()),
         pick(Design.values()),
-        random.nextBoolean()
-            ? new Addition.OfStock(quantity(), measured())
-            : new Addition.Stated(quantity(), pick(Addition.Terms.values())),
+        addition(),
         optional(),
         optional(),
         optional(),
@@ -159,7 +157,9 @@ class CodecTest {
         method(),
         random.nextBoolean()
             ? Optional.empty()
-            : Optional.of(new InternalStandard(pick(InternalStandard.Given.values()), optional())),
+            : Optional.of(
+                new InternalStandard(
+                    pick(InternalStandard.Given.values()), optional(), optionalNumber())),
         random.nextBoolean()
             ? Accuracies.NONE
             : new Accuracies(
@@ -172,6 +172,18 @@ class CodecTest {
                 accuracy(),
                 accuracy(),
                 accuracy()));
+  }
+
+  private Addition addition() {
+    return switch (random.nextInt(3)) {
+      case 0 -> new Addition.OfStock(quantity(), measured());
+      case 1 ->
+          new Addition.OfStocks(
+              List.of(
+                  new Addition.OfStock(quantity(), measured()),
+                  new Addition.OfStock(quantity(), measured())));
+      default -> new Addition.Stated(quantity(), pick(Addition.Terms.values()));
+    };
   }
 
   private Optional<Accuracies.Accuracy> accuracy() {
@@ -203,7 +215,8 @@ class CodecTest {
             ? Optional.empty()
             : Optional.of(
                 new MethodFacts.Electrode(
-                    random.nextInt(9) - 4, optionalNumber(), optionalNumber())));
+                    random.nextInt(9) - 4, optionalNumber(), optionalNumber())),
+        random.nextBoolean() ? Optional.empty() : Optional.of(unit()));
   }
 
   private ResultRow result() {

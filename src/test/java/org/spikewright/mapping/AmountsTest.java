@@ -154,10 +154,8 @@ class AmountsTest {
       })
   void knowsWhichUnitsLeadToTheResult(String added, String portion, String result, String why) {
     Optional<String> fault =
-        Chain.fault(
-            Unit.of(added).dimension(),
-            unit(portion).map(Unit::dimension),
-            Unit.of(result).dimension());
+        new Chain(unit(portion).map(Unit::dimension), false, false)
+            .fault(Unit.of(added).dimension(), Unit.of(result).dimension());
     if (why == null) {
       assertThat(fault).isEmpty();
     } else {
