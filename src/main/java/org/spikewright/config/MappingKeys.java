@@ -60,7 +60,18 @@ final class MappingKeys {
           Map.entry("result", List.of("unit")),
           Map.entry(
               "method",
-              List.of("trusted_signal", "reporting_limit", "target_uncertainty", "unit")));
+              List.of(
+                  "trusted_signal",
+                  "reporting_limit",
+                  "target_uncertainty",
+                  "unit",
+                  "interval",
+                  "weights",
+                  "bend",
+                  "correct_drift",
+                  "working_range",
+                  "bend_allowance",
+                  "blank_due")));
 
   /** The facts that {@code [fixed]} may hold. */
   static List<Fact> fixable() {

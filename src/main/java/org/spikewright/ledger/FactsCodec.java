@@ -50,6 +50,7 @@ final class FactsCodec {
     out.add(standard == null ? "" : standard.given().name());
     out.add(standard == null ? "" : optional(standard.mass()));
     AccuracyCodec.encode(out, facts.accuracies());
+    AccuracyCodec.encodeBottle(out, facts.bottle());
     return out.toString();
   }
 
@@ -66,7 +67,8 @@ final class FactsCodec {
         new Blanks(in.optionalDouble(), optionalMeasured(in.text()), optionalMeasured(in.text())),
         MethodCodec.decode(in, FactsCodec::unit),
         standard(in.text(), in.text()),
-        AccuracyCodec.decode(in));
+        AccuracyCodec.decode(in),
+        AccuracyCodec.bottle(in));
   }
 
   private static Optional<InternalStandard> standard(String given, String mass) {

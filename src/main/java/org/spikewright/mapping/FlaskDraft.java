@@ -7,9 +7,10 @@ import org.spikewright.mapping.Rejection.Reason;
 import org.spikewright.quantity.Measured;
 import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
+import org.spikewright.reading.Accuracies;
 import org.spikewright.reading.Addition;
 import org.spikewright.reading.Blanks;
-import org.spikewright.reading.Calculation;
+import org.spikewright.reading.Bottle;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.MethodFacts;
@@ -23,8 +24,16 @@ import org.spikewright.reading.Role;
  * @param values by fact; what the design needs is there
  * @param resultUnit the client's unit
  * @param analyte whose facts these are
+ * @param accuracies how well the quantities are known
+ * @param bottle the named stock, where it has a name
  */
-record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit, String analyte) {
+record FlaskDraft(
+    MethodRule method,
+    Map<Fact, Measured> values,
+    Unit resultUnit,
+    String analyte,
+    Accuracies accuracies,
+    Optional<Bottle> bottle) {
   /** Marks are round numbers; sums of them may differ by this share. */
   private static final double ROUNDING = 1e-9;
 
@@ -92,7 +101,8 @@ record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit
     }
     return unlike(Fact.METHOD_BLANK, added)
         .or(() -> unlike(Fact.SOLVENT_BLANK, added))
-        .or(this::reportingLimit);
+        .or(this::reportingLimit)
+        .or(this::workingRange);
   }
 
   private Optional<Trouble> unlike(Fact fact, Quantity added) {
@@ -123,6 +133,21 @@ record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit
                     resultUnit.dimension().words() + ", like the result's " + resultUnit));
   }
 
+  private Optional<Trouble> workingRange() {
+    return method
+        .workingRange()
+        .of(analyte)
+        .filter(range -> range.lower().unit().dimension() != resultUnit.dimension())
+        .map(
+            range ->
+                new Trouble(
+                    Reason.UNIT_DOES_NOT_FIT,
+                    -1,
+                    "working_range",
+                    "'" + range + "'",
+                    resultUnit.dimension().words() + ", like the result's " + resultUnit));
+  }
+
   private Quantity added() {
     Fact fact = method.design() == Design.STATED ? Fact.ADDITION : Fact.STOCK;
     return values.get(fact).quantity();
@@ -144,7 +169,10 @@ record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit
             value(Fact.DIGEST_VOLUME).map(Measured::quantity),
             number(Fact.DRY_MASS)),
         new Blanks(number(Fact.BASELINE), value(Fact.METHOD_BLANK), value(Fact.SOLVENT_BLANK)),
-        methodFacts());
+        methodFacts(),
+        Optional.empty(),
+        accuracies,
+        bottle);
   }
 
   private Addition addition() {
@@ -162,10 +190,10 @@ record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit
         optional(method.trustedSignal().of(analyte)),
         optional(method.reportingLimit().of(analyte).map(limit -> limit.in(resultUnit))),
         method.targetUncertainty(),
-        Optional.empty(),
-        OptionalDouble.empty(),
-        false,
-        Calculation.DEFAULT,
+        method.workingRange().of(analyte).map(range -> range.in(resultUnit)),
+        method.bendAllowance(),
+        method.blankDue(),
+        method.calculation(),
         Optional.empty());
   }
 

@@ -319,6 +319,9 @@ final class SheetMapper {
         own.startVolume(),
         own.preparation(),
         own.blanks(),
-        own.method());
+        own.method(),
+        own.internalStandard(),
+        own.accuracies(),
+        own.bottle());
   }
 }
