@@ -11,6 +11,7 @@ import org.spikewright.mapping.Fact;
 import org.spikewright.mapping.Notation;
 import org.spikewright.mapping.Understood;
 import org.spikewright.quantity.Measured;
+import org.spikewright.quantity.Numbers;
 import org.spikewright.quantity.PlusMinus;
 import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
@@ -74,6 +75,8 @@ final class GlasswareFile {
       unit = range(points);
     } else if (section.has("points")) {
       unit = points(points);
+    } else {
+      errorsAt(section, 1, kind == Kind.BALANCE ? Unit.of("g") : Unit.of("mL"), true);
     }
     PlusMinus means = ShelfNames.means(section);
     String standard =
@@ -176,7 +179,7 @@ final class GlasswareFile {
     double top = highest.get().quantity().value();
     // A fault of the errors is told once; what differs between the two ends is only their size.
     Optional<Point> upper = errorsAt(section, top, unit, false);
-    double bottom = lowest.get().in(unit);
+    double bottom = in(lowest.get(), unit);
     upper.flatMap(any -> errorsAt(section, bottom, unit, false)).ifPresent(points::add);
     upper.ifPresent(points::add);
     return Optional.of(unit);
@@ -197,7 +200,7 @@ final class GlasswareFile {
           point.text("at", expected).flatMap(text -> amount(point, "at", text, expected));
       if (at.isPresent()) {
         Unit own = unit.orElse(at.get().quantity().unit());
-        errorsAt(point, at.get().in(own), own, false).ifPresent(points::add);
+        errorsAt(point, in(at.get(), own), own, false).ifPresent(points::add);
         unit = Optional.of(own);
       }
     }
@@ -210,12 +213,13 @@ final class GlasswareFile {
         "an error such as "
             + example("\"1.6 µL\"", "\"0.2 mg\"")
             + ", or a share such as \"0.8 %\"";
-    if (!where.has("systematic") && !declared) {
+    boolean missing = !where.has("systematic") && !declared;
+    if (missing) {
       where.missing("systematic", expected);
     }
     OptionalDouble systematic = error(where, "systematic", expected, new Quantity(size, unit));
     OptionalDouble random = error(where, "random", expected, new Quantity(size, unit));
-    return systematic.isPresent() && random.isPresent()
+    return !missing && systematic.isPresent() && random.isPresent()
         ? Optional.of(new Point(size, systematic.getAsDouble(), random.getAsDouble()))
         : Optional.empty();
   }
@@ -236,8 +240,13 @@ final class GlasswareFile {
     }
     Optional<Measured> absolute = amount(where, key, text.get(), expected);
     return absolute.isPresent()
-        ? OptionalDouble.of(absolute.get().in(of.unit()))
+        ? OptionalDouble.of(in(absolute.get(), of.unit()))
         : OptionalDouble.empty();
+  }
+
+  /** In another unit, without the last digits that the conversion brings: 1 mL is 1000 µL. */
+  private static double in(Measured value, Unit unit) {
+    return Double.parseDouble(Numbers.rounded(value.in(unit), 12));
   }
 
   /** A volume, or a mass for a balance, above 0. */
