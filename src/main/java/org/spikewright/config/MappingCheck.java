@@ -5,6 +5,7 @@ import java.util.Optional;
 import org.spikewright.mapping.Chain;
 import org.spikewright.mapping.Fact;
 import org.spikewright.mapping.MethodRule;
+import org.spikewright.mapping.PerAnalyte;
 import org.spikewright.mapping.Places;
 import org.spikewright.quantity.Dimension;
 import org.spikewright.quantity.Measured;
@@ -71,6 +72,7 @@ final class MappingCheck {
     }
     readBack(added);
     reportingLimit();
+    workingRange();
   }
 
   private Chain chain() {
@@ -153,6 +155,27 @@ final class MappingCheck {
         faults.add(
             root.at("method", "reporting_limit"),
             "reporting_limit of " + limit + " beside a result in " + result,
+            result.dimension().words());
+      }
+    }
+  }
+
+  private void workingRange() {
+    PerAnalyte<MethodRule.Range> ranges = method.workingRange();
+    ranges.all().ifPresent(range -> rangeFits(range, method.resultUnit().values().toList()));
+    ranges
+        .each()
+        .forEach(
+            (analyte, range) ->
+                rangeFits(range, method.resultUnit().of(analyte).stream().toList()));
+  }
+
+  private void rangeFits(MethodRule.Range range, List<Unit> results) {
+    for (Unit result : results) {
+      if (range.lower().unit().dimension() != result.dimension()) {
+        faults.add(
+            root.at("method", "working_range"),
+            "working_range of " + range + " beside a result in " + result,
             result.dimension().words());
       }
     }

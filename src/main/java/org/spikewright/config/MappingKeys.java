@@ -80,7 +80,14 @@ final class MappingKeys {
                   "unit",
                   "charge",
                   "slope",
-                  "temperature")));
+                  "temperature",
+                  "interval",
+                  "weights",
+                  "bend",
+                  "correct_drift",
+                  "working_range",
+                  "bend_allowance",
+                  "blank_due")));
 
   /** The facts that {@code [fixed]} may hold. */
   static List<Fact> fixable() {

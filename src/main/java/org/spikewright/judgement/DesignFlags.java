@@ -143,6 +143,12 @@ final class DesignFlags {
               Weight.NOTE,
               "Reading below range or missing, left out: " + note.words() + ".",
               "Check whether the flask should be read again.");
+      case EXPIRED_STOCK ->
+          Flags.plain(
+              FlagKind.EXPIRED_STOCK,
+              Weight.NOTE,
+              "Spiked with an expired stock: " + note.words() + ".",
+              "Check the stock against a fresh one, or renew its entry in the table of stocks.");
     };
   }
 

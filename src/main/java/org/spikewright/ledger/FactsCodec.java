@@ -54,6 +54,7 @@ final class FactsCodec {
     out.add(standard == null ? "" : optional(standard.mass()));
     out.add(standard == null ? OptionalDouble.empty() : standard.baseline());
     AccuracyCodec.encode(out, facts.accuracies());
+    AccuracyCodec.encodeBottle(out, facts.bottle());
     return out.toString();
   }
 
@@ -70,7 +71,8 @@ final class FactsCodec {
         new Blanks(in.optionalDouble(), optionalMeasured(in.text()), optionalMeasured(in.text())),
         MethodCodec.decode(in, FactsCodec::unit),
         standard(in.text(), in.text(), in.optionalDouble()),
-        AccuracyCodec.decode(in));
+        AccuracyCodec.decode(in),
+        AccuracyCodec.bottle(in));
   }
 
   private static Optional<InternalStandard> standard(

@@ -97,8 +97,12 @@ public final class AmountReader {
     if (!fact.admits(kept)) {
       return new Understood.Nothing<>(Reason.OUT_OF_BOUNDS, found, fact.expectation());
     }
+    OptionalDouble keptTolerance =
+        fraction && tolerance.isPresent()
+            ? OptionalDouble.of(tolerance.getAsDouble() * unit.to(Unit.ONE))
+            : tolerance;
     return new Understood.Value<>(
-        new Measured(new Quantity(kept, fraction ? Unit.ONE : unit), tolerance));
+        new Measured(new Quantity(kept, fraction ? Unit.ONE : unit), keptTolerance));
   }
 
   private Understood<Measured> noUnit(Fact fact, String found) {

@@ -45,7 +45,14 @@ public enum Fact {
       "internal_standard_baseline", Kind.AMOUNT, Bound.ANY, "0.003", Dimension.NUMBER),
   INTERNAL_STANDARD_MASS(
       "internal_standard_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "0.1 g", Dimension.MASS),
-  MOLAR_MASS("molar_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "207.2 g/mol", Dimension.MASS_PER_AMOUNT);
+  MOLAR_MASS("molar_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "207.2 g/mol", Dimension.MASS_PER_AMOUNT),
+  ALIQUOT_BY("aliquot_by", Kind.TOOL),
+  ADDITION_BY("addition_by", Kind.TOOL),
+  FINAL_VOLUME_BY("final_volume_by", Kind.TOOL),
+  START_VOLUME_BY("start_volume_by", Kind.TOOL),
+  DILUTION_BY("dilution_by", Kind.TOOL),
+  TEST_PORTION_BY("test_portion_by", Kind.TOOL),
+  DIGEST_VOLUME_BY("digest_volume_by", Kind.TOOL);
 
   /** How a fact is read. */
   public enum Kind {
@@ -58,7 +65,9 @@ public enum Fact {
     /** A number with its unit. */
     AMOUNT,
     /** A dilution factor in one of its notations. */
-    DILUTION
+    DILUTION,
+    /** The glassware that a quantity was measured with, by name. */
+    TOOL
   }
 
   /** Which values make sense; every check is written so that NaN fails. */
@@ -101,7 +110,11 @@ public enum Fact {
   private final List<Dimension> dimensions;
 
   Fact(String word) {
-    this(word, Kind.NAME, Bound.ANY, "");
+    this(word, Kind.NAME);
+  }
+
+  Fact(String word, Kind kind) {
+    this(word, kind, Bound.ANY, "");
   }
 
   Fact(String word, Kind kind, Bound bound, String example, Dimension... dimensions) {
@@ -135,17 +148,22 @@ public enum Fact {
   /** Whether a tolerance declared for it is kept; where not, none may be declared. */
   boolean keepsTolerance() {
     return switch (this) {
-      case ALIQUOT_VOLUME,
-          ALIQUOT_MASS,
-          FINAL_VOLUME,
-          FINAL_MASS,
-          START_VOLUME,
-          STOCK,
-          METHOD_BLANK,
-          SOLVENT_BLANK,
-          INTERNAL_STANDARD_MASS ->
-          true;
-      default -> false;
+      case BASELINE, SIGNAL -> false;
+      default -> true;
+    };
+  }
+
+  /** The fact that names the glassware this one was measured with, where there is such a fact. */
+  public Optional<Fact> measuredBy() {
+    return switch (this) {
+      case ALIQUOT_VOLUME -> Optional.of(ALIQUOT_BY);
+      case ADDITION_VOLUME -> Optional.of(ADDITION_BY);
+      case FINAL_VOLUME -> Optional.of(FINAL_VOLUME_BY);
+      case START_VOLUME -> Optional.of(START_VOLUME_BY);
+      case DILUTION -> Optional.of(DILUTION_BY);
+      case TEST_PORTION -> Optional.of(TEST_PORTION_BY);
+      case DIGEST_VOLUME -> Optional.of(DIGEST_VOLUME_BY);
+      default -> Optional.empty();
     };
   }
 
@@ -163,6 +181,11 @@ public enum Fact {
   public String expectation() {
     if (kind == Kind.NAME) {
       return "a name for " + word;
+    }
+    if (kind == Kind.TOOL) {
+      return this == DILUTION_BY
+          ? "names of glassware for taken and made up in, such as 'pipette 1 to flask 10'"
+          : "the name of glassware, or several parted by commas";
     }
     if (kind == Kind.TIME) {
       return "a date and time";

@@ -10,7 +10,7 @@ import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Accuracies;
 import org.spikewright.reading.Addition;
 import org.spikewright.reading.Blanks;
-import org.spikewright.reading.Calculation;
+import org.spikewright.reading.Bottle;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.InternalStandard;
@@ -25,8 +25,16 @@ import org.spikewright.reading.Role;
  * @param values by fact; what the design needs is there
  * @param resultUnit the client's unit
  * @param analyte whose facts these are
+ * @param accuracies how well the quantities are known
+ * @param bottle the named stock, where it has a name
  */
-record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit, String analyte) {
+record FlaskDraft(
+    MethodRule method,
+    Map<Fact, Measured> values,
+    Unit resultUnit,
+    String analyte,
+    Accuracies accuracies,
+    Optional<Bottle> bottle) {
   /** Marks are round numbers; sums of them may differ by this share. */
   private static final double ROUNDING = 1e-9;
 
@@ -101,7 +109,8 @@ record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit
     }
     return unlike(Fact.METHOD_BLANK, added)
         .or(() -> unlike(Fact.SOLVENT_BLANK, added))
-        .or(this::reportingLimit);
+        .or(this::reportingLimit)
+        .or(this::workingRange);
   }
 
   private Chain chain() {
@@ -147,6 +156,21 @@ record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit
     return method.design() == Design.STATED ? Fact.ADDITION : Fact.STOCK;
   }
 
+  private Optional<Trouble> workingRange() {
+    return method
+        .workingRange()
+        .of(analyte)
+        .filter(range -> range.lower().unit().dimension() != resultUnit.dimension())
+        .map(
+            range ->
+                new Trouble(
+                    Reason.UNIT_DOES_NOT_FIT,
+                    -1,
+                    "working_range",
+                    "'" + range + "'",
+                    resultUnit.dimension().words() + ", like the result's " + resultUnit));
+  }
+
   /** The facts, where nothing contradicts. */
   FlaskFacts facts(Role role, Optional<String> preparation) {
     return new FlaskFacts(
@@ -173,7 +197,8 @@ record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit
                         given,
                         value(Fact.INTERNAL_STANDARD_MASS),
                         number(Fact.INTERNAL_STANDARD_BASELINE))),
-        Accuracies.NONE);
+        accuracies,
+        bottle);
   }
 
   private Addition addition() {
@@ -215,10 +240,10 @@ record FlaskDraft(MethodRule method, Map<Fact, Measured> values, Unit resultUnit
         optional(method.trustedSignal().of(analyte)),
         optional(method.reportingLimit().of(analyte).map(limit -> limit.in(resultUnit))),
         method.targetUncertainty(),
-        Optional.empty(),
-        OptionalDouble.empty(),
-        false,
-        Calculation.DEFAULT,
+        method.workingRange().of(analyte).map(range -> range.in(resultUnit)),
+        method.bendAllowance(),
+        method.blankDue(),
+        method.calculation(),
         method.signal().electrode(),
         method.signal().unit());
   }

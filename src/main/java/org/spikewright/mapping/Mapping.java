@@ -3,6 +3,7 @@ package org.spikewright.mapping;
 import java.util.LinkedHashSet;
 import java.util.List;
 import java.util.Set;
+import org.spikewright.reading.Shelf;
 import org.spikewright.table.TableShape;
 
 /**
@@ -20,6 +21,7 @@ import org.spikewright.table.TableShape;
  * @param words signals that are no numbers
  * @param rows which rows are left out, and what the others are
  * @param method what the method says
+ * @param shelf the stocks and the glassware that may be named
  */
 public record Mapping(
     String name,
@@ -33,7 +35,8 @@ public record Mapping(
     Places places,
     SignalWords words,
     RowRules rows,
-    MethodRule method) {
+    MethodRule method,
+    Shelf shelf) {
 
   /**
    * Whether the mapping claims a file.

@@ -4,9 +4,12 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import org.spikewright.quantity.Dimension;
 import org.spikewright.quantity.Measured;
+import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Addition;
+import org.spikewright.reading.Calculation;
 import org.spikewright.reading.Design;
+import org.spikewright.reading.MethodFacts.WorkingRange;
 
 /**
  * What a mapping says about the method.
@@ -21,6 +24,10 @@ import org.spikewright.reading.Design;
  * @param trustedSignal largest signal inside the range
  * @param reportingLimit replaces the detection limit in the report
  * @param targetUncertainty relative expanded uncertainty aimed at
+ * @param workingRange where results of the method are valid
+ * @param bendAllowance largest relative bias by a bend that the data may leave open
+ * @param blankDue whether a method blank must be there
+ * @param calculation how the line is drawn and which interval is reported
  * @param signal what it says about the signals
  */
 public record MethodRule(
@@ -34,7 +41,29 @@ public record MethodRule(
     PerAnalyte<Double> trustedSignal,
     PerAnalyte<Measured> reportingLimit,
     OptionalDouble targetUncertainty,
+    PerAnalyte<Range> workingRange,
+    OptionalDouble bendAllowance,
+    boolean blankDue,
+    Calculation calculation,
     SignalRule signal) {
+
+  /**
+   * A range of results.
+   *
+   * @param lower 0 or more
+   * @param upper above {@code lower}, of the same dimension
+   */
+  public record Range(Quantity lower, Quantity upper) {
+    /** The same in a unit of its dimension. */
+    WorkingRange in(Unit unit) {
+      return new WorkingRange(lower.in(unit), upper.in(unit));
+    }
+
+    @Override
+    public String toString() {
+      return lower + " to " + upper;
+    }
+  }
 
   /** What an addition volume means in one vessel. */
   public enum Additions {

@@ -15,13 +15,16 @@ import org.spikewright.quantity.Measured;
  * @param fixedNames names that hold for every row
  * @param fixedAmounts quantities that hold for every row, or for every row of an analyte; a
  *     dilution is its factor, a dry mass its fraction, both in unit 1
+ * @param fixedStocks the names of fixed stocks that have one; their concentrations stand among the
+ *     fixed amounts
  */
 public record Places(
     Map<Fact, Column> columns,
     List<Label> labels,
     List<FileName> fileName,
     Map<Fact, String> fixedNames,
-    Map<Fact, PerAnalyte<Measured>> fixedAmounts) {
+    Map<Fact, PerAnalyte<Measured>> fixedAmounts,
+    PerAnalyte<String> fixedStocks) {
 
   /** Copies its collections. */
   public Places {

@@ -20,6 +20,7 @@ import org.spikewright.quantity.Measured;
  * @param internalStandard the internal standard whose signal divides the analyte's, where there is
  *     one
  * @param accuracies how well the quantities are known
+ * @param bottle the named stock that the addition is of, where it has a name
  */
 public record FlaskFacts(
     Role role,
@@ -32,7 +33,36 @@ public record FlaskFacts(
     Blanks blanks,
     MethodFacts method,
     Optional<InternalStandard> internalStandard,
-    Accuracies accuracies) {
+    Accuracies accuracies,
+    Optional<Bottle> bottle) {
+
+  /** Facts without a named stock. */
+  public FlaskFacts(
+      Role role,
+      Design design,
+      Addition addition,
+      Optional<Measured> aliquot,
+      Optional<Measured> finalVolume,
+      Optional<Measured> startVolume,
+      Preparation preparation,
+      Blanks blanks,
+      MethodFacts method,
+      Optional<InternalStandard> internalStandard,
+      Accuracies accuracies) {
+    this(
+        role,
+        design,
+        addition,
+        aliquot,
+        finalVolume,
+        startVolume,
+        preparation,
+        blanks,
+        method,
+        internalStandard,
+        accuracies,
+        Optional.empty());
+  }
 
   /** Facts without an internal standard and without declared accuracies. */
   public FlaskFacts(

@@ -80,7 +80,9 @@ final class SeriesBuilder {
   /** Whether there is nothing to remark, as with nearly every series; so it is asked first. */
   private boolean isPlain() {
     for (FlaskDraft draft : drafts) {
-      if (!draft.secondRun().isEmpty() || !draft.facts().aliquot().equals(facts.aliquot())) {
+      if (!draft.secondRun().isEmpty()
+          || !draft.facts().aliquot().equals(facts.aliquot())
+          || isOfExpiredStock(draft.facts())) {
         return false;
       }
       for (Recorded recorded : draft.readings()) {
@@ -123,7 +125,23 @@ final class SeriesBuilder {
     if (aliquots.size() > 1) {
       note(notes, SeriesNote.Kind.UNEQUAL_ALIQUOTS, aliquots.stream());
     }
+    note(
+        notes,
+        SeriesNote.Kind.EXPIRED_STOCK,
+        drafts.stream()
+            .map(FlaskDraft::facts)
+            .filter(this::isOfExpiredStock)
+            .map(spiked -> spiked.bottle().orElseThrow())
+            .map(bottle -> bottle.name() + ", last day " + bottle.expires().orElseThrow())
+            .distinct());
     return List.copyOf(notes);
+  }
+
+  /** By the lab day of the series, which is that of its first reading. */
+  private boolean isOfExpiredStock(FlaskFacts spiked) {
+    return spiked.bottle().isPresent()
+        && !spiked.addition().isNone()
+        && spiked.bottle().get().isExpiredOn(cluster.labDay());
   }
 
   private Stream<String> states(State state) {

@@ -11,7 +11,11 @@ import java.util.Optional;
 import java.util.OptionalDouble;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.ValueSource;
+import org.spikewright.mapping.Fact;
 import org.spikewright.mapping.Mapping;
+import org.spikewright.mapping.Places;
 import org.spikewright.mapping.Tally;
 import org.spikewright.mapping.Trial;
 import org.spikewright.reading.MethodFacts;
@@ -54,6 +58,30 @@ class ExamplesTest {
     for (String key : MappingKeys.METHOD_IN_FIXED) {
       assertThat(text).containsPattern("(?m)^(#: )?" + key + " *=");
     }
+  }
+
+  /** What the reference shows of names in comments, by the tables that are shipped. */
+  @ParameterizedTest(name = "{0}")
+  @ValueSource(strings = {"stock       = \"two metals\"", "stock       = { Cd = \"two metals\""})
+  void theReferenceNamesWhatTheShippedTablesHold(String stock) throws IOException {
+    Loaded<Settings> settings = Settings.load(Path.of("conf", "spikewright.toml"));
+    String text = Files.readString(MAPPINGS.resolve("reference-all-keys.toml"));
+    String named =
+        text.replaceFirst("(?m)^stock          = .*$", "")
+            .replace("#: " + stock, stock)
+            .replace("#: addition_by = \"P100", "addition_by = \"P100")
+            .replace("\"100 mL ± 0.10 mL\"", "\"100 mL\"")
+            .replace("#: final_volume_by = \"flask 100 A", "final_volume_by = \"flask 100 A");
+    assertThat(named).hasSizeLessThan(text.length() - 40);
+    Loaded<Mapping> mapping =
+        MappingFile.read(
+            Path.of("m.toml"), named, LISBON, ((Loaded.Good<Settings>) settings).value().shelf());
+    assertThat(mapping).as(mapping.toString()).isInstanceOf(Loaded.Good.class);
+    Places places = ((Loaded.Good<Mapping>) mapping).value().places();
+    assertThat(places.fixedStocks().of("Cd")).contains("two metals");
+    assertThat(places.fixedNames())
+        .containsEntry(Fact.ADDITION_BY, "P100, P1000")
+        .containsEntry(Fact.FINAL_VOLUME_BY, "flask 100 A");
   }
 
   @Test

@@ -18,6 +18,7 @@ import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Accuracies;
 import org.spikewright.reading.Addition;
 import org.spikewright.reading.Blanks;
+import org.spikewright.reading.Bottle;
 import org.spikewright.reading.Calculation;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.FlaskFacts;
@@ -171,7 +172,16 @@ class CodecTest {
                 accuracy(),
                 accuracy(),
                 accuracy(),
-                accuracy()));
+                accuracy()),
+        random.nextBoolean() ? Optional.empty() : Optional.of(bottle()));
+  }
+
+  private Bottle bottle() {
+    return new Bottle(
+        pick(WORDS),
+        random.nextBoolean()
+            ? Optional.empty()
+            : Optional.of(LocalDate.ofEpochDay(random.nextInt(100_000) - 50_000)));
   }
 
   private Addition addition() {
