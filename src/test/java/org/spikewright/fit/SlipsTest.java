@@ -77,7 +77,10 @@ class SlipsTest {
   }
 
   private static String percent(int[] counts, int of) {
-    return Arrays.toString(Arrays.stream(counts).mapToDouble(c -> 1e4 * c / of / 100).toArray());
+    return Arrays.stream(counts)
+        .mapToObj(count -> String.format(Locale.ROOT, "%.2f %%", 100.0 * count / of))
+        .toList()
+        .toString();
   }
 
   @Tag("simulation")
