@@ -52,7 +52,8 @@ public record Combination(
       double e = (one.value() - mean) / one.standardUncertainty();
       chiSquare += e * e;
     }
-    if (!Double.isFinite(mean) || !(chiSquare < 1e300)) {
+    double u = least / Math.sqrt(weights);
+    if (!Double.isFinite(mean) || !(chiSquare < 1e300) || !(u * Math.sqrt(chiSquare) < 1e300)) {
       return Optional.empty();
     }
     return Optional.of(of(results, least, weights, mean, chiSquare));
