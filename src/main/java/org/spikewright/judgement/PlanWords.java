@@ -31,14 +31,16 @@ public final class PlanWords {
 
   private static String stock(StockUse stock, Prepared plan) {
     String needed =
-        "; " + amount(plan.vessel(), plan.unit(), Numbers.rounded(stock.needed(), 3)) + " in all.";
+        "; "
+            + amount(plan.vessel(), plan.unit(), Numbers.plain(Deliveries.tidy(stock.needed())))
+            + " in all.";
     return stock.dilution() > 1
         ? "Dilute stock "
             + stock.name()
             + " "
             + fold(stock.dilution())
             + " to "
-            + Numbers.rounded(stock.concentration(), 4)
+            + Numbers.plain(Deliveries.tidy(stock.concentration()))
             + " "
             + plan.unit()
             + " and add that"
