@@ -11,6 +11,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import org.spikewright.judgement.CriteriaBook;
+import org.spikewright.judgement.RepeatCaps;
 import org.spikewright.reading.LabCalendar;
 
 /** Reads the configuration file. */
@@ -21,12 +22,13 @@ final class SettingsFile {
    */
   static final Map<String, List<String>> KEYS =
       Map.of(
-          "", List.of("folders", "laboratory", "schedule", "series", "criteria"),
+          "", List.of("folders", "laboratory", "schedule", "series", "criteria", "repeat"),
           "folders", List.of("watch", "mappings", "summaries", "ledger", "leave"),
           "laboratory", List.of("name", "zone", "day_begins"),
           "schedule", List.of("nightly", "look_every", "settle"),
           "series", List.of("longest_pause", "wait_for_flasks"),
-          "criteria", CriteriaSection.KEYS);
+          "criteria", CriteriaSection.KEYS,
+          "repeat", RepeatSection.KEYS);
 
   private final Path file;
   private final Faults faults;
@@ -86,7 +88,11 @@ final class SettingsFile {
         duration(series, "wait_for_flasks", Duration.ofHours(12), Duration.ZERO),
         root.section("criteria", KEYS.get("criteria"))
             .map(CriteriaSection::book)
-            .orElseGet(CriteriaBook::defaults),
+            .orElseGet(CriteriaBook::defaults)
+            .with(
+                root.section("repeat", KEYS.get("repeat"))
+                    .map(RepeatSection::caps)
+                    .orElse(RepeatCaps.DEFAULTS)),
         text.sha256(),
         text.text());
   }

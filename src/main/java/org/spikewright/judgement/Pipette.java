@@ -52,9 +52,9 @@ public record Pipette(String name, double lowest, double highest, double increme
       if (volume.isEmpty()) {
         return Optional.empty();
       }
-      volumes[i] = volume.get().in(MICROLITRE);
+      volumes[i] = Deliveries.tidy(volume.get().in(MICROLITRE));
     }
-    double increment = by ? volumes[2] : volumes[1] / STEPS;
+    double increment = by ? volumes[2] : Deliveries.tidy(volumes[1] / STEPS);
     boolean isRange = volumes[0] > 0 && volumes[1] >= volumes[0];
     return isRange && increment > 0 && increment <= volumes[1]
         ? Optional.of(new Pipette(text.strip(), volumes[0], volumes[1], increment))

@@ -72,7 +72,7 @@ public final class Planner {
       if (plan instanceof Prepared prepared) {
         double uncertainty = prepared.forecast().relativeUncertainty();
         if (uncertainty <= ask.target().orElse(Double.MAX_VALUE)) {
-          return prepared;
+          return ordered(prepared);
         }
         boolean better =
             best == null || uncertainty < best.forecast().relativeUncertainty() * (1 - 1e-9);
@@ -81,7 +81,7 @@ public final class Planner {
         refused = (Refused) plan;
       }
     }
-    return best != null ? best.with(missed(best)) : refused;
+    return best != null ? ordered(best).with(missed(best)) : refused;
   }
 
   /** Layouts by rising number of flasks; without a target only those of the number wanted. */
@@ -173,10 +173,6 @@ public final class Planner {
               + ").",
           "Find the cause of the scatter first; more flasks help a little.");
     }
-    double[] pull = pulls(x, native0);
-    boolean free = !(ask.vessel() instanceof OneVessel);
-    int[] order = free ? MeasuringOrder.of(pull) : IntStream.range(0, x.length).toArray();
-    double effect = 0.01 * MeasuringOrder.effect(pull, order);
     return new Prepared(
         ask.unit(),
         ask.vessel(),
@@ -184,12 +180,23 @@ public final class Planner {
         delivery.stock().map(stock -> use(stock, delivery, portions)),
         native0,
         portions,
-        IntStream.of(order).map(flask -> flask + 1).boxed().toList(),
+        List.of(),
         ask.caps().replicates(),
         x[x.length - 1] / native0,
         forecast,
-        effect,
-        remarks(effect));
+        0,
+        List.of());
+  }
+
+  /** The plan that was chosen, with the order in which its flasks are measured. */
+  private Prepared ordered(Prepared plan) {
+    double[] x = plan.portions().stream().mapToDouble(Portion::x).toArray();
+    double[] pull = pulls(x, plan.nativeConcentration());
+    boolean free = !(ask.vessel() instanceof OneVessel);
+    int[] order = free ? MeasuringOrder.of(pull) : IntStream.range(0, x.length).toArray();
+    double effect = 0.01 * MeasuringOrder.effect(pull, order);
+    return plan.measured(
+        IntStream.of(order).map(flask -> flask + 1).boxed().toList(), effect, remarks(effect));
   }
 
   private List<Portion> portions(Layout layout, double dilution, Delivery delivery) {

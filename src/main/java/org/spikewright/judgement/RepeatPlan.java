@@ -54,6 +54,11 @@ public sealed interface RepeatPlan {
     Prepared with(String remark) {
       List<String> all = new ArrayList<>(remarks);
       all.add(remark);
+      return measured(order, driftEffect, all);
+    }
+
+    /** The same, measured in an order. */
+    Prepared measured(List<Integer> inOrder, double effect, List<String> said) {
       return new Prepared(
           unit,
           vessel,
@@ -61,12 +66,12 @@ public sealed interface RepeatPlan {
           stock,
           nativeConcentration,
           portions,
-          order,
+          inOrder,
           replicates,
           topOverNative,
           forecast,
-          driftEffect,
-          all);
+          effect,
+          said);
     }
   }
 

@@ -215,7 +215,7 @@ record RepeatSizing(
       }
       if (flask.volumeFactor() > 1) {
         double added = flask.facts().addition().amount().in(MICROLITRE);
-        return OptionalDouble.of(added / (flask.volumeFactor() - 1));
+        return OptionalDouble.of(Deliveries.tidy(added / (flask.volumeFactor() - 1)));
       }
     }
     return OptionalDouble.empty();
@@ -224,7 +224,7 @@ record RepeatSizing(
   private static OptionalDouble volume(Optional<Measured> measured) {
     return measured
         .filter(found -> found.quantity().unit().dimension() == Dimension.VOLUME)
-        .map(found -> OptionalDouble.of(found.in(MICROLITRE)))
+        .map(found -> OptionalDouble.of(Deliveries.tidy(found.in(MICROLITRE))))
         .orElse(OptionalDouble.empty());
   }
 
