@@ -13,6 +13,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import org.spikewright.judgement.CriteriaBook;
+import org.spikewright.judgement.RepeatCaps;
 import org.spikewright.reading.LabCalendar;
 import org.spikewright.reading.Shelf;
 
@@ -24,13 +25,14 @@ final class SettingsFile {
    */
   static final Map<String, List<String>> KEYS =
       Map.of(
-          "", List.of("folders", "laboratory", "schedule", "series", "criteria"),
+          "", List.of("folders", "laboratory", "schedule", "series", "criteria", "repeat"),
           "folders",
               List.of("watch", "mappings", "summaries", "ledger", "leave", "stocks", "glassware"),
           "laboratory", List.of("name", "zone", "day_begins"),
           "schedule", List.of("nightly", "look_every", "settle"),
           "series", List.of("longest_pause", "wait_for_flasks"),
-          "criteria", CriteriaSection.KEYS);
+          "criteria", CriteriaSection.KEYS,
+          "repeat", RepeatSection.KEYS);
 
   private final Path file;
   private final Faults faults;
@@ -132,7 +134,11 @@ final class SettingsFile {
         duration(series, "wait_for_flasks", Duration.ofHours(12), Duration.ZERO),
         root.section("criteria", KEYS.get("criteria"))
             .map(CriteriaSection::book)
-            .orElseGet(CriteriaBook::defaults),
+            .orElseGet(CriteriaBook::defaults)
+            .with(
+                root.section("repeat", KEYS.get("repeat"))
+                    .map(RepeatSection::caps)
+                    .orElse(RepeatCaps.DEFAULTS)),
         shelf,
         text.sha256(),
         text.text());
