@@ -14,6 +14,15 @@ import org.apache.commons.math3.distribution.ChiSquaredDistribution;
 final class NoiseFit {
   private static final int ROUNDS = 60;
 
+  /**
+   * So many squares' worth of belief in what the weighting takes for granted: where the series
+   * cannot tell σ_0 from ρ (three flasks of like samples), noise is constant, or where the method
+   * has its lines weighted, proportional.
+   */
+  private static final double LEAN_CONSTANT = 1;
+
+  private static final double LEAN_PROPORTIONAL = 6;
+
   /** A group of clean deviations is brought down once in two hundred. */
   private static final double EDGE = 0.995;
 
@@ -43,19 +52,19 @@ final class NoiseFit {
         }
       }
     }
-    return fit(groups);
+    return fit(groups, Weighting.EQUAL);
   }
 
   private static boolean isUsable(double number) {
     return Math.abs(number) < 1e75;
   }
 
-  static Optional<NoiseFunction> ofFlasks(List<PooledSeries> series) {
+  static Optional<NoiseFunction> ofFlasks(List<PooledSeries> series, Weighting lean) {
     List<Group> groups = new ArrayList<>();
     for (PooledSeries one : series) {
       PooledLine.ordinary(one).ifPresent(line -> groups.add(scatter(line, one.factor())));
     }
-    return fit(groups);
+    return fit(groups, lean);
   }
 
   /**
@@ -80,7 +89,7 @@ final class NoiseFit {
     return new Group(a, b, square, n - 2, 1);
   }
 
-  private static Optional<NoiseFunction> fit(List<Group> groups) {
+  private static Optional<NoiseFunction> fit(List<Group> groups, Weighting lean) {
     if (groups.isEmpty()) {
       return Optional.empty();
     }
@@ -92,7 +101,7 @@ final class NoiseFit {
       now[1] = meanRatio(groups);
     }
     for (int round = 0; round < ROUNDS && now[0] + now[1] > 0; round++) {
-      double[] next = step(groups, now, unit);
+      double[] next = step(groups, now, unit, lean);
       boolean settled =
           Math.abs(next[0] - now[0]) + Math.abs(next[1] - now[1]) < 1e-12 * (now[0] + now[1]);
       now = next;
@@ -139,7 +148,7 @@ final class NoiseFit {
   }
 
   /** One round of reweighted least squares for σ_0²/unit and ρ², neither below 0. */
-  private static double[] step(List<Group> groups, double[] now, double unit) {
+  private static double[] step(List<Group> groups, double[] now, double unit, Weighting lean) {
     double saa = 0;
     double sab = 0;
     double sbb = 0;
@@ -160,7 +169,10 @@ final class NoiseFit {
         sby += group.count() * b * y;
       }
     }
-    return nonNegative(saa, sab, sbb, say, sby);
+    boolean constant = lean == Weighting.EQUAL;
+    double belief = constant ? LEAN_CONSTANT : LEAN_PROPORTIONAL;
+    double pull = belief / ((now[0] + now[1]) * (now[0] + now[1]));
+    return nonNegative(saa + (constant ? 0 : pull), sab, sbb + (constant ? pull : 0), say, sby);
   }
 
   private static double expected(Group group, int i, double[] now, double unit, double least) {

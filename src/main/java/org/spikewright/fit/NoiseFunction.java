@@ -45,10 +45,13 @@ public record NoiseFunction(double constant, double proportional) {
    * The noise of flasks, from their scatter about ordinary lines; robust to a few bad series. It
    * holds the noise of the mean of a flask's readings and that of the preparation.
    *
+   * @param lean what to take for granted where the series cannot tell constant from proportional
+   *     noise, as three flasks of like samples cannot: constant for equal weights, else
+   *     proportional
    * @return empty without a series of three flasks
    */
-  public static Optional<NoiseFunction> ofFlasks(List<PooledSeries> series) {
-    return NoiseFit.ofFlasks(series);
+  public static Optional<NoiseFunction> ofFlasks(List<PooledSeries> series, Weighting lean) {
+    return NoiseFit.ofFlasks(series, lean);
   }
 
   /** Variance at a signal as read. */

@@ -36,6 +36,9 @@ public record OddFlask(
   /** Fewer levels do not tell which of them is off. */
   private static final int LEAST_LEVELS = 4;
 
+  /** Two explanations whose squared t differ by less are alike: a likelihood ratio of e². */
+  private static final double ALIKE = 4;
+
   private record Candidate(Kind kind, int[] flasks, double t, double df, StraightLine without) {
     double p() {
       return StudentT.twoSided(t, df);
@@ -56,7 +59,9 @@ public record OddFlask(
   }
 
   /**
-   * With a lent prior.
+   * With a lent prior: the variance without the flask, (d_0·s_0² + (ν − 1)·s²)/(d_0 + ν − 1), s²
+   * brought down to what the prior finds credible, so that of two flasks that are off (swapped) the
+   * one does not hide the other.
    *
    * @param line the line to test, a shared bend taken out
    * @param addition as above
@@ -69,7 +74,7 @@ public record OddFlask(
       StraightLine line, double[] addition, double floor, VariancePrior prior, double scale) {
     Moderation moderation =
         (variance, df) -> {
-          Variance moderated = prior.moderated(variance / scale, df);
+          Variance moderated = prior.moderated(prior.credible(variance / scale, df), df);
           return new Variance(moderated.value() * scale, moderated.df());
         };
     return new Search(line, addition, floor, moderation).oddest();
@@ -97,18 +102,27 @@ public record OddFlask(
       if (levels.size() >= LEAST_LEVELS && levels.size() < line.n()) {
         levels.forEach(level -> level(level, levels).ifPresent(all::add));
       }
+      return all.stream().min(ORDER).map(odd -> corrected(likelier(odd, all), all.size()));
+    }
+
+    private static OddFlask corrected(Candidate odd, int tests) {
+      double p = Math.min(1, tests * odd.p());
+      return new OddFlask(odd.kind, odd.flasks, odd.t, odd.df, p, tests, odd.without);
+    }
+
+    /**
+     * A delivery goes wrong oftener than flasks to which nothing is delivered: these are named only
+     * when they explain the data clearly better.
+     */
+    private Candidate likelier(Candidate odd, List<Candidate> all) {
+      if (odd.kind == Kind.FLASK || addition[odd.flasks[0]] != 0) {
+        return odd;
+      }
       return all.stream()
+          .filter(other -> other.kind == Kind.LEVEL && addition[other.flasks[0]] != 0)
           .min(ORDER)
-          .map(
-              odd ->
-                  new OddFlask(
-                      odd.kind,
-                      odd.flasks,
-                      odd.t,
-                      odd.df,
-                      Math.min(1, all.size() * odd.p()),
-                      all.size(),
-                      odd.without));
+          .filter(other -> other.t * other.t > odd.t * odd.t - ALIKE)
+          .orElse(odd);
     }
 
     private Variance deleted(StraightLine without) {

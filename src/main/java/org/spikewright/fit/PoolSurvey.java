@@ -10,6 +10,9 @@ final class PoolSurvey {
   /** Below this likeness drift and bend are told apart, and the bend is taken out first. */
   private static final double UNLIKE = 0.8;
 
+  /** Two explanations whose squared t differ by less are alike: a likelihood ratio of e². */
+  private static final double ALIKE = 4;
+
   private final PoolOptions options;
   private final List<PooledSeries> all;
   private final Optional<NoiseFunction> flaskNoise;
@@ -19,7 +22,7 @@ final class PoolSurvey {
   PoolSurvey(List<PooledSeries> tonight, List<PooledSeries> remembered, PoolOptions options) {
     this.options = options;
     all = joined(tonight, remembered);
-    flaskNoise = NoiseFunction.ofFlasks(all);
+    flaskNoise = NoiseFunction.ofFlasks(all, options.weighting());
     this.tonight = lines(tonight, scale(flaskNoise), options.weighting());
     this.remembered = lines(remembered, scale(flaskNoise), options.weighting());
   }
@@ -48,8 +51,10 @@ final class PoolSurvey {
     Optional<SharedBend> bend = SharedBend.of(tonight, forBend, options.side());
     List<PooledLine> straight = straightened(tonight, bend);
     Optional<SharedBend> earlier = SharedBend.of(remembered, forBend, options.side());
+    List<PooledLine> straightBefore = straightened(remembered, earlier);
+    boolean asFitted = straight == tonight && straightBefore == remembered;
     Optional<VariancePrior> tested =
-        PooledPriors.ofLines(joined(straight, straightened(remembered, earlier)));
+        asFitted ? line : PooledPriors.ofLines(joined(straight, straightBefore));
     List<PooledLine> relative = lines(all, NoiseFunction.RELATIVE, Weighting.EQUAL);
     return new PoolEvidence(
         options,
@@ -92,13 +97,14 @@ final class PoolSurvey {
     LevelSearch search = new LevelSearch(tested, options.falseAlarms());
     List<LevelBias> off = new ArrayList<>(search.off(straight));
     if (isFound(bend)) {
-      insteadOfBend(search, off).ifPresent(level -> off.add(0, level));
+      insteadOfBend(search, bend.orElseThrow(), off).ifPresent(level -> off.add(0, level));
     }
     return List.copyOf(off);
   }
 
   /** The top level, where without its flasks no bend is left: both then explain the night. */
-  private Optional<LevelBias> insteadOfBend(LevelSearch search, List<LevelBias> off) {
+  private Optional<LevelBias> insteadOfBend(
+      LevelSearch search, SharedBend bend, List<LevelBias> off) {
     List<LevelBias> all = search.all(tonight);
     if (all.isEmpty()) {
       return Optional.empty();
@@ -107,7 +113,9 @@ final class PoolSurvey {
     List<PooledLine> without = LevelSearch.without(tonight, top.addition());
     Optional<SharedBend> left =
         SharedBend.of(without, PooledPriors.ofLines(without), options.side());
-    boolean explains = left.filter(bend -> bend.p() < options.falseAlarms()).isEmpty();
+    boolean explains =
+        left.filter(more -> more.p() < options.falseAlarms()).isEmpty()
+            && top.t() * top.t() > bend.t() * bend.t() - ALIKE;
     off.removeIf(level -> level.addition() == top.addition() && explains);
     return Optional.of(top)
         .filter(level -> explains && level.p() < options.falseAlarms())

@@ -28,11 +28,13 @@ final class PriorFit {
   private static final double FLOOR = 1e-12;
 
   private final double[] x;
+  private final double[] logs;
   private final int[] df;
 
   private PriorFit(double[] x, int[] df) {
     this.x = x;
     this.df = df;
+    logs = Arrays.stream(x).map(Math::log).toArray();
   }
 
   static Optional<VariancePrior> of(double[] variances, int[] df) {
@@ -66,7 +68,7 @@ final class PriorFit {
     double most = Double.NEGATIVE_INFINITY;
     double s0 = start();
     for (int i = 0; i < LADDER.length; i++) {
-      double[] best = best(1 / LADDER[i], s0);
+      double[] best = best(1 / LADDER[i], s0, 1e-5);
       logs[i] = best[1];
       most = Math.max(most, logs[i]);
       s0 = best[0];
@@ -80,7 +82,7 @@ final class PriorFit {
     }
     inverse /= weight;
     double d0 = inverse > 1e-3 ? 1 / inverse : Double.POSITIVE_INFINITY;
-    return new VariancePrior(d0, best(d0, start())[0], x.length);
+    return new VariancePrior(d0, best(d0, s0, 1e-10)[0], x.length);
   }
 
   /** The width of the ladder about a rung, in a measure in which no d_0 is favoured. */
@@ -105,7 +107,7 @@ final class PriorFit {
   }
 
   /** The likeliest s_0² for a d_0, and the logarithm of its likelihood. */
-  private double[] best(double d0, double start) {
+  private double[] best(double d0, double start, double settled) {
     double[] norm = norm(d0);
     double s0 = start;
     for (int round = 0; round < ROUNDS; round++) {
@@ -118,9 +120,9 @@ final class PriorFit {
         down += clean;
       }
       double next = down > 0 ? Math.max(up / down, FLOOR) : s0;
-      boolean settled = Math.abs(next - s0) < 1e-9 * s0;
+      boolean still = Math.abs(next - s0) < settled * s0;
       s0 = next;
-      if (settled) {
+      if (still) {
         break;
       }
     }
@@ -147,7 +149,7 @@ final class PriorFit {
         d0 == Double.POSITIVE_INFINITY
             ? f * df[j] / 2
             : (df[j] + d0) / 2 * Math.log1p(df[j] * f / d0);
-    return Math.exp(norm[j] + df[j] / 2.0 * Math.log(f) - shape);
+    return Math.exp(norm[j] + df[j] / 2.0 * (logs[j] - Math.log(s0)) - shape);
   }
 
   /** What of the logarithm of the density does not depend on s_0². */

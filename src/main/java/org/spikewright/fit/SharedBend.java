@@ -34,14 +34,20 @@ public record SharedBend(
     double between,
     double betweenP) {
 
-  private static final int STEPS = 4;
+  private static final int STEPS = 20;
+
+  /** A coefficient within the noise is not worth more than the first step. */
+  private static final double WORTH = 2;
 
   static Optional<SharedBend> of(
       List<PooledLine> lines, Optional<VariancePrior> curve, BendTest.Side side) {
     Optional<CommonEffect> first = effect(lines, curve);
     return first.map(
         effect -> {
-          double coefficient = refined(lines, curve, effect.coefficient());
+          double coefficient =
+              Math.abs(effect.t()) > WORTH
+                  ? refined(lines, curve, effect.coefficient())
+                  : effect.coefficient();
           double grown = coefficient / effect.coefficient();
           double ratio = Double.isFinite(grown) && grown > 0 ? grown : 1;
           return new SharedBend(
@@ -76,20 +82,51 @@ public record SharedBend(
     return column;
   }
 
-  /** A strong bend bends the lines on which it was measured: straighten them and look again. */
+  /**
+   * A strong bend bends the lines on which it was measured: the coefficient after which no bend is
+   * left, between 0 and the first one, by false position.
+   */
   private static double refined(
       List<PooledLine> lines, Optional<VariancePrior> curve, double first) {
-    double now = first;
-    for (int step = 0; step < STEPS; step++) {
-      double coefficient = now;
-      List<PooledLine> straightened = straightened(lines, coefficient);
-      double more = effect(straightened, curve).map(CommonEffect::coefficient).orElse(0.0);
-      now += more;
-      if (Math.abs(more) < 1e-6 * Math.abs(first)) {
-        break;
+    double low = 0;
+    double lowLeft = first;
+    double high = Math.signum(first) * Math.min(Math.abs(first), most(lines));
+    double highLeft = left(lines, curve, high);
+    for (int step = 0; step < STEPS && lowLeft * highLeft < 0; step++) {
+      double next = low + (high - low) * lowLeft / (lowLeft - highLeft);
+      double nextLeft = left(lines, curve, next);
+      if (nextLeft * lowLeft > 0) {
+        low = next;
+        lowLeft = nextLeft;
+        highLeft /= 2;
+      } else {
+        high = next;
+        highLeft = nextLeft;
+        lowLeft /= 2;
+      }
+      if (Math.abs(nextLeft) < 1e-6 * Math.abs(first)) {
+        return next;
       }
     }
-    return now;
+    return high;
+  }
+
+  private static double left(
+      List<PooledLine> lines, Optional<VariancePrior> curve, double coefficient) {
+    return effect(straightened(lines, coefficient), curve)
+        .map(CommonEffect::coefficient)
+        .orElse(0.0);
+  }
+
+  /** With more than this the largest signal would lie beyond the parabola's summit. */
+  private static double most(List<PooledLine> lines) {
+    double largest = 0;
+    for (PooledLine pooled : lines) {
+      for (int i = 0; i < pooled.line().n(); i++) {
+        largest = Math.max(largest, Math.abs(pooled.line().y()[i] / pooled.series().factor()[i]));
+      }
+    }
+    return 0.24 / Math.max(largest, 1e-150);
   }
 
   static List<PooledLine> straightened(List<PooledLine> lines, double coefficient) {
@@ -111,7 +148,7 @@ public record SharedBend(
 
   /** Whether it is found at a rate of false alarms, and the series agree in it. */
   public boolean isShared(double rate) {
-    boolean apart = betweenP < 0.01 && between > Math.abs(coefficient) / 2;
+    boolean apart = betweenP < 0.001 && between > Math.abs(coefficient) / 2;
     return p < rate && !apart;
   }
 

@@ -16,6 +16,8 @@ import java.util.Optional;
  */
 public record VariancePrior(double df, double variance, int series) {
 
+  private static final double INCREDIBLE = 0.01;
+
   /**
    * Checks the ranges.
    *
@@ -61,5 +63,26 @@ public record VariancePrior(double df, double variance, int series) {
    */
   public double tail(double own, double ownDf) {
     return FisherF.upper(own / variance, ownDf, df);
+  }
+
+  /**
+   * A variance brought down to what the prior lets one series in a hundred exceed: a scatter beyond
+   * that is no noise but something wrong in the series, and must not hide the flask that is wrong.
+   */
+  double credible(double own, double ownDf) {
+    if (!(tail(own, ownDf) < INCREDIBLE)) {
+      return own;
+    }
+    double low = 0;
+    double high = own;
+    for (int step = 0; step < 60; step++) {
+      double middle = (low + high) / 2;
+      if (tail(middle, ownDf) < INCREDIBLE) {
+        high = middle;
+      } else {
+        low = middle;
+      }
+    }
+    return high;
   }
 }
