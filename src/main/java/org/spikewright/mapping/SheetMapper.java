@@ -257,12 +257,8 @@ final class SheetMapper {
 
   private Understood<Signal> signal(Cell cell) {
     String text = cell.shown();
-    String expected =
-        "a number with "
-            + AmountReader.markInWords(mapping.notation())
-            + ", or a word declared under [words]";
     if (text.length() > LONGEST_SIGNAL) {
-      return new Understood.Nothing<>(Reason.NOT_A_NUMBER, text, expected);
+      return noSignal(Reason.NOT_A_NUMBER, text);
     }
     Optional<Signal.State> state = mapping.words().state(text);
     if (state.isPresent()) {
@@ -272,12 +268,18 @@ final class SheetMapper {
       return new Understood.Value<>(new Signal.Value(number.value(), number.raw()));
     }
     if (!(cell instanceof Cell.Text)) {
-      return new Understood.Nothing<>(Reason.UNUSABLE_CELL, text, expected);
+      return noSignal(Reason.UNUSABLE_CELL, text);
     }
     OptionalDouble value = mapping.notation().numbers().parse(text);
     return value.isPresent()
         ? new Understood.Value<>(new Signal.Value(value.getAsDouble(), text))
-        : new Understood.Nothing<>(Reason.NOT_A_NUMBER, text, expected);
+        : noSignal(Reason.NOT_A_NUMBER, text);
+  }
+
+  private Understood<Signal> noSignal(Reason reason, String text) {
+    String mark = AmountReader.markInWords(mapping.notation());
+    return new Understood.Nothing<>(
+        reason, text, "a number with " + mark + ", or a word declared under [words]");
   }
 
   /** The facts with the vessel's total in place of the step's own addition. */
