@@ -1,8 +1,12 @@
 package org.spikewright.series;
 
 import java.time.Instant;
+import java.util.ArrayList;
+import java.util.Collections;
+import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
+import java.util.Set;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.MethodFacts;
@@ -42,7 +46,13 @@ public record AdditionSeries(
 
   /** The flasks that take part in the fit, in order. */
   public List<Flask> usableFlasks() {
-    return flasks.stream().filter(Flask::isUsable).toList();
+    List<Flask> usable = new ArrayList<>(flasks.size());
+    for (Flask flask : flasks) {
+      if (flask.isUsable()) {
+        usable.add(flask);
+      }
+    }
+    return Collections.unmodifiableList(usable);
   }
 
   /** The flasks that were measured a second time, as a series of their own; empty when none was. */
@@ -72,16 +82,22 @@ public record AdditionSeries(
    * each reading counts as a flask.
    */
   public int preparedFlasks() {
-    return (int)
-        usableFlasks().stream()
-            .map(flask -> flask.readings().get(0).reading().flask())
-            .distinct()
-            .count();
+    Set<String> prepared = new HashSet<>();
+    for (Flask flask : flasks) {
+      if (flask.isUsable()) {
+        prepared.add(flask.readings().get(0).reading().flask());
+      }
+    }
+    return prepared.size();
   }
 
   /** The number of readings, of all flasks, that count. */
   public int readings() {
-    return flasks.stream().mapToInt(flask -> flask.readings().size()).sum();
+    int readings = 0;
+    for (Flask flask : flasks) {
+      readings += flask.readings().size();
+    }
+    return readings;
   }
 
   /** The time of its first reading, where times are mapped. */
