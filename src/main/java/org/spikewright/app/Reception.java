@@ -119,13 +119,14 @@ final class Reception {
     try (Delivery delivery = station.ledger().receive(arriving);
         Handover sink = new Handover(delivery)) {
       RowMapper mapper = mapping.open(file.name(), sink);
+      String reading = "reading " + file.name() + ", row";
       Optional<DecodeFault> fault =
           FileDecoder.read(
               file.path(),
               file.name(),
               mapping.shape(),
               row -> {
-                progress.at("reading " + file.name() + ", row", row.number());
+                progress.at(reading, row.number());
                 return mapper.accept(row) && !stop.isRequested();
               });
       if (stop.isRequested() || changed(file, content)) {

@@ -3,7 +3,6 @@ package org.spikewright.ledger;
 import java.sql.PreparedStatement;
 import java.sql.SQLException;
 import java.sql.Types;
-import java.util.Comparator;
 import java.util.OptionalDouble;
 import org.spikewright.reading.Signal;
 
@@ -28,19 +27,29 @@ record NewRow(
     long line,
     long delimitedBy) {
 
-  /** The order of the primary key: rows that lie together are written together. */
-  static final Comparator<NewRow> KEY_ORDER =
-      Comparator.comparingLong(NewRow::subject)
-          .thenComparingLong(NewRow::at)
-          .thenComparingLong(NewRow::batch)
-          .thenComparingLong(NewRow::preparation)
-          .thenComparingLong(NewRow::flask)
-          .thenComparingLong(NewRow::replicate);
-
   static final String INSERT =
       "INSERT INTO reading (subject, read_at, batch, preparation, flask, replicate, nth,"
           + " signal, state, text, facts, origin, line_no, standard)"
           + " VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?) ON CONFLICT DO NOTHING";
+
+  /** The order of the primary key: rows that lie together are written together. */
+  static int byKey(NewRow one, NewRow other) {
+    if (one.subject != other.subject) {
+      return Long.compare(one.subject, other.subject);
+    }
+    if (one.at != other.at) {
+      return Long.compare(one.at, other.at);
+    }
+    if (one.batch != other.batch) {
+      return Long.compare(one.batch, other.batch);
+    }
+    if (one.preparation != other.preparation) {
+      return Long.compare(one.preparation, other.preparation);
+    }
+    return one.flask != other.flask
+        ? Long.compare(one.flask, other.flask)
+        : Long.compare(one.replicate, other.replicate);
+  }
 
   boolean timed() {
     return batch == Ids.NONE;

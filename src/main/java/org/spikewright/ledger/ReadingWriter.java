@@ -43,11 +43,16 @@ final class ReadingWriter {
   /** A reading, and what stands for its batch and its origin. */
   private record Seen(Reading reading, long batch, long origin) {
     boolean isOf(Reading other) {
-      return reading.batch().equals(other.batch())
-          && reading.position().source().equals(other.position().source())
+      return same(reading.batch(), other.batch())
+          && same(reading.position().source(), other.position().source())
           && reading.position().column() == other.position().column()
           && reading.flaskMapped() == other.flaskMapped()
           && reading.replicateMapped() == other.replicateMapped();
+    }
+
+    /** Mostly one object, whose content then need not be compared. */
+    private static boolean same(Object one, Object other) {
+      return one == other || one.equals(other);
     }
   }
 
@@ -100,7 +105,7 @@ final class ReadingWriter {
 
   /** Writes what is waiting, in the order of the key; rows of one identity keep their order. */
   void flush() {
-    waiting.sort(NewRow.KEY_ORDER);
+    waiting.sort(NewRow::byKey);
     int[] added =
         sql.guarded(
             c -> {

@@ -36,7 +36,7 @@ public final class RowMapper implements RowSink {
   /** Takes the next row; wants no more once the file cannot be mapped. */
   @Override
   public boolean accept(Row row) {
-    if (fault.isEmpty() && !source.equals(Optional.of(row.source()))) {
+    if (fault.isEmpty() && !isOfThisTable(row)) {
       begin(row.source());
     }
     if (fault.isPresent()) {
@@ -50,6 +50,12 @@ public final class RowMapper implements RowSink {
       map(sheet.get(), row);
     }
     return true;
+  }
+
+  /** The rows of a table mostly share one object, so that its names are not compared. */
+  private boolean isOfThisTable(Row row) {
+    return source.isPresent()
+        && (source.get() == row.source() || source.get().equals(row.source()));
   }
 
   private void begin(Source next) {

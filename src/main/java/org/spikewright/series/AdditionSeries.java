@@ -1,9 +1,13 @@
 package org.spikewright.series;
 
 import java.time.Instant;
+import java.util.ArrayList;
+import java.util.Collections;
+import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import java.util.Set;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.MethodFacts;
@@ -47,7 +51,13 @@ public record AdditionSeries(
 
   /** The flasks that take part in the fit, in order. */
   public List<Flask> usableFlasks() {
-    return flasks.stream().filter(Flask::isUsable).toList();
+    List<Flask> usable = new ArrayList<>(flasks.size());
+    for (Flask flask : flasks) {
+      if (flask.isUsable()) {
+        usable.add(flask);
+      }
+    }
+    return Collections.unmodifiableList(usable);
   }
 
   /** The flasks that were measured a second time, as a series of their own; empty when none was. */
@@ -78,11 +88,13 @@ public record AdditionSeries(
    * each reading counts as a flask.
    */
   public int preparedFlasks() {
-    return (int)
-        usableFlasks().stream()
-            .map(flask -> flask.readings().get(0).reading().flask())
-            .distinct()
-            .count();
+    Set<String> prepared = new HashSet<>();
+    for (Flask flask : flasks) {
+      if (flask.isUsable()) {
+        prepared.add(flask.readings().get(0).reading().flask());
+      }
+    }
+    return prepared.size();
   }
 
   /**
@@ -102,7 +114,11 @@ public record AdditionSeries(
 
   /** The number of readings, of all flasks, that count. */
   public int readings() {
-    return flasks.stream().mapToInt(flask -> flask.readings().size()).sum();
+    int readings = 0;
+    for (Flask flask : flasks) {
+      readings += flask.readings().size();
+    }
+    return readings;
   }
 
   /** The time of its first reading, where times are mapped. */

@@ -13,6 +13,9 @@ import org.spikewright.reading.Signal.State;
 
 /** Builds a series from flasks whose facts fit together. */
 final class SeriesBuilder {
+  private static final Comparator<Flask> BY_ADDITION =
+      Comparator.comparingDouble(Flask::x).thenComparing(Flask::label);
+
   private final SeriesKey key;
   private final Cluster cluster;
   private final List<FlaskDraft> drafts;
@@ -29,12 +32,16 @@ final class SeriesBuilder {
   }
 
   AdditionSeries build() {
-    Axis axis = Axis.of(drafts.stream().map(FlaskDraft::facts).toList());
-    List<Flask> flasks = new ArrayList<>();
+    List<FlaskFacts> each = new ArrayList<>(drafts.size());
+    for (FlaskDraft draft : drafts) {
+      each.add(draft.facts());
+    }
+    Axis axis = Axis.of(each);
+    List<Flask> flasks = new ArrayList<>(drafts.size());
     for (int i = 0; i < drafts.size(); i++) {
       flasks.add(Flask.of(drafts.get(i), axis.x()[i], axis.factor()[i]));
     }
-    flasks.sort(Comparator.comparingDouble(Flask::x).thenComparing(Flask::label));
+    flasks.sort(BY_ADDITION);
     return new AdditionSeries(
         key,
         cluster.batchName(),

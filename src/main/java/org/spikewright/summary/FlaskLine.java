@@ -1,21 +1,21 @@
 package org.spikewright.summary;
 
-import java.util.ArrayDeque;
 import java.util.ArrayList;
 import java.util.Arrays;
-import java.util.HashMap;
+import java.util.LinkedHashSet;
 import java.util.List;
-import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
-import java.util.Queue;
 import java.util.Set;
+import java.util.SortedSet;
+import java.util.TreeSet;
 import java.util.stream.Collectors;
 import org.spikewright.fit.DeletedResidual;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.FlagKind;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.SeriesResult;
+import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.series.Flask;
@@ -50,31 +50,23 @@ record FlaskLine(
     if (!(outcome.gathered() instanceof AdditionSeries series)) {
       return List.of();
     }
-    Map<String, Queue<Integer>> points = new HashMap<>();
-    outcome.result().ifPresent(result -> index(result, points));
+    List<Flask> fitted = outcome.result().map(SeriesResult::flasks).orElse(List.of());
     Set<Integer> odd = oddPoints(outcome);
-    List<FlaskLine> lines = new ArrayList<>();
+    List<FlaskLine> lines = new ArrayList<>(series.flasks().size());
+    int point = 0;
     for (Flask flask : series.flasks()) {
-      Queue<Integer> own = points.getOrDefault(flask.label(), new ArrayDeque<>());
-      if (own.isEmpty()) {
-        lines.add(unused(flask, outcome));
-      }
-      // Where the laboratory counts readings as flasks, one flask has several points.
-      while (!own.isEmpty()) {
-        int point = own.remove();
+      // The line's points are in the order of the flasks, of which it may leave some out.
+      if (point < fitted.size() && fitted.get(point).label().equals(flask.label())) {
         lines.add(used(outcome.result().orElseThrow(), point, odd.contains(point)));
+        point++;
+      } else {
+        lines.add(unused(flask, outcome));
       }
       if (!flask.secondRun().isEmpty()) {
         lines.add(secondRun(flask.second()));
       }
     }
     return lines;
-  }
-
-  private static void index(SeriesResult result, Map<String, Queue<Integer>> points) {
-    for (int i = 0; i < result.flasks().size(); i++) {
-      points.computeIfAbsent(result.flasks().get(i).label(), label -> new ArrayDeque<>()).add(i);
-    }
   }
 
   private static FlaskLine used(SeriesResult result, int i, boolean odd) {
@@ -137,18 +129,19 @@ record FlaskLine(
 
   /** The files the flask's readings came from, sorted. */
   List<String> files() {
-    return flask.readings().stream()
-        .map(recorded -> recorded.reading().position().source().file())
-        .distinct()
-        .sorted()
-        .toList();
+    SortedSet<String> files = new TreeSet<>();
+    for (Recorded recorded : flask.readings()) {
+      files.add(recorded.reading().position().source().file());
+    }
+    return List.copyOf(files);
   }
 
   /** The cells the flask's readings came from, in the order of the readings. */
   List<String> cells() {
-    return flask.readings().stream()
-        .map(recorded -> recorded.reading().position().within())
-        .distinct()
-        .toList();
+    Set<String> cells = new LinkedHashSet<>();
+    for (Recorded recorded : flask.readings()) {
+      cells.add(recorded.reading().position().within());
+    }
+    return List.copyOf(cells);
   }
 }

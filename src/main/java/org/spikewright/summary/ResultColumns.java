@@ -3,6 +3,7 @@ package org.spikewright.summary;
 import java.time.LocalDate;
 import java.util.ArrayList;
 import java.util.Arrays;
+import java.util.Collections;
 import java.util.List;
 import java.util.OptionalDouble;
 import java.util.OptionalInt;
@@ -176,7 +177,13 @@ public final class ResultColumns {
     StringBuilder field = new StringBuilder();
     for (String item : items) {
       field.append(field.isEmpty() ? "" : ";");
-      field.append(item.replace("\\", "\\\\").replace(";", "\\;"));
+      for (int i = 0; i < item.length(); i++) {
+        char c = item.charAt(i);
+        if (c == ';' || c == '\\') {
+          field.append('\\');
+        }
+        field.append(c);
+      }
     }
     return field.toString();
   }
@@ -218,6 +225,6 @@ public final class ResultColumns {
   }
 
   private static void add(List<String> fields, String... more) {
-    fields.addAll(List.of(more));
+    Collections.addAll(fields, more);
   }
 }

@@ -1,5 +1,6 @@
 package org.spikewright.summary;
 
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
@@ -16,6 +17,7 @@ import org.spikewright.judgement.Verdict;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Recorded;
 import org.spikewright.series.AdditionSeries;
+import org.spikewright.series.Flask;
 import org.spikewright.series.Gathered;
 import org.spikewright.series.SeriesKey;
 import org.spikewright.series.Ungrouped;
@@ -142,7 +144,7 @@ public record ResultRow(
             series.role().word(),
             series.toResult().unit().symbol(),
             series.design().word(),
-            series.flasks().stream().flatMap(flask -> flask.readings().stream()).toList());
+            readings(series));
       }
       Ungrouped ungrouped = (Ungrouped) gathered;
       Optional<FlaskFacts> facts =
@@ -153,6 +155,14 @@ public record ResultRow(
           "",
           facts.map(known -> known.design().word()).orElse(""),
           ungrouped.readings());
+    }
+
+    private static List<Recorded> readings(AdditionSeries series) {
+      List<Recorded> readings = new ArrayList<>();
+      for (Flask flask : series.flasks()) {
+        readings.addAll(flask.readings());
+      }
+      return readings;
     }
 
     List<String> files() {

@@ -28,6 +28,11 @@ public record Row(Source source, long number, List<Cell> cells) {
 
   /** Whether every cell is blank. */
   public boolean isBlank() {
-    return cells.stream().allMatch(Cell::isBlank);
+    for (Cell cell : cells) {
+      if (!cell.isBlank()) {
+        return false;
+      }
+    }
+    return true;
   }
 }
