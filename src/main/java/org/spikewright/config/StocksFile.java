@@ -6,12 +6,14 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.stream.Stream;
 import org.spikewright.mapping.AmountReader;
 import org.spikewright.mapping.Fact;
 import org.spikewright.mapping.Notation;
 import org.spikewright.mapping.PerAnalyte;
 import org.spikewright.mapping.Understood;
 import org.spikewright.quantity.Measured;
+import org.spikewright.quantity.NumberGrammar;
 import org.spikewright.quantity.PlusMinus;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Stock;
@@ -40,10 +42,16 @@ final class StocksFile {
     return stocks;
   }
 
-  /** Whether a mapping would take the name for a concentration, or for a bare number. */
+  /** Whether some mapping would take the name for a concentration, or for a bare number. */
   private static boolean isQuantity(String name) {
-    return new AmountReader(Notation.PLAIN).read(Fact.STOCK, name, Optional.of(Unit.of("mg/L")))
-        instanceof Understood.Value<Measured>;
+    Unit unit = Unit.of("mg/L");
+    Map<String, Unit> declared = Map.of("ppm", unit, "ppb", unit, "ppt", unit);
+    return Stream.of(NumberGrammar.POINT, NumberGrammar.COMMA)
+        .map(numbers -> new AmountReader(new Notation(numbers, declared, Optional.empty())))
+        .anyMatch(
+            reader ->
+                reader.read(Fact.STOCK, name, Optional.of(unit))
+                    instanceof Understood.Value<Measured>);
   }
 
   private static Stock stock(String name, Section section) {

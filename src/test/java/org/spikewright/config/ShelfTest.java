@@ -142,6 +142,7 @@ class ShelfTest {
         "2026-06-30 | 2026 | 6,1 | such as 2026-06-30",
         "Pb 10 | 10 mg/L | 1,1 | reads as a concentration",
         "Pb 10 | 10 | 1,1 | reads as a concentration",
+        "Pb 10 | 10 ppm | 1,1 | reads as a concentration",
         "Pb 10 | 'Pb, 10' | 1,1 | without commas",
         "Pb 10 | 1 to 2 | 1,1 | without commas"
       })
