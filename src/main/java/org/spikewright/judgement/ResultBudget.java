@@ -118,7 +118,10 @@ final class ResultBudget {
     if (!(start >= aliquot) || !(aliquot > 0)) {
       return Optional.empty();
     }
-    double other = aliquot < start ? start * share(known.startVolume(), Accuracy::systematic) : 0;
+    double other =
+        aliquot < start && Double.isFinite(start)
+            ? start * share(known.startVolume(), Accuracy::systematic)
+            : 0;
     List<Double> added = flasks.stream().map(Flask::delivered).toList();
     return Optional.of(new OneVessel(start, aliquot, other, added, deliveries()));
   }

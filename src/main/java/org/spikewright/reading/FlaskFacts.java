@@ -102,6 +102,7 @@ public record FlaskFacts(
         blanks,
         method,
         internalStandard,
-        accuracies);
+        accuracies,
+        bottle);
   }
 }
