@@ -42,8 +42,12 @@ public final class Judge {
       flags.add(DesignFlags.unfitted(series, unfitted.reason()));
       return outcome(series, Optional.empty(), flags);
     }
-    SeriesResult result = ((SeriesFit.Fitted) fit).result();
     Criteria criteria = book.of(series.method().name());
+    if (fit instanceof SeriesFit.ByElectrode electrode) {
+      flags.addAll(new ElectrodeFlags(electrode.result(), criteria).all());
+      return outcome(series, Optional.empty(), flags).with(electrode.result());
+    }
+    SeriesResult result = ((SeriesFit.Fitted) fit).result();
     flags.addAll(new LineFlags(result, criteria).all());
     flags.addAll(new ResultFlags(result, criteria).all());
     return outcome(series, Optional.of(result), flags);

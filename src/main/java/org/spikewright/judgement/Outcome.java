@@ -12,10 +12,35 @@ import org.spikewright.series.Gathered;
  * @param flags in the order of {@link FlagKind}
  * @param verdict what is to happen
  * @param reported the text to report; empty when nothing can be reported
+ * @param electrode the numbers of an electrode's series, which has no {@code result}
  */
 public record Outcome(
     Gathered gathered,
     Optional<SeriesResult> result,
     List<Flag> flags,
     Verdict verdict,
-    String reported) {}
+    String reported,
+    Optional<ElectrodeResult> electrode) {
+
+  /** The outcome of a series that is read along a line. */
+  public Outcome(
+      Gathered gathered,
+      Optional<SeriesResult> result,
+      List<Flag> flags,
+      Verdict verdict,
+      String reported) {
+    this(gathered, result, flags, verdict, reported, Optional.empty());
+  }
+
+  /** The same with an electrode's numbers, reported where the verdict lets any be. */
+  Outcome with(ElectrodeResult numbers) {
+    boolean reportable = verdict == Verdict.REPORT || verdict == Verdict.REVIEW;
+    return new Outcome(
+        gathered,
+        result,
+        flags,
+        verdict,
+        reportable ? numbers.reported() : "",
+        Optional.of(numbers));
+  }
+}

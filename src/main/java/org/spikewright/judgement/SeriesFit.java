@@ -12,6 +12,7 @@ import org.spikewright.fit.LineOutcome;
 import org.spikewright.fit.NativeEstimate;
 import org.spikewright.fit.NoLine;
 import org.spikewright.fit.StraightLine;
+import org.spikewright.reading.Design;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.series.Flask;
 import org.spikewright.series.ToResult;
@@ -22,6 +23,9 @@ public sealed interface SeriesFit {
   /** The numbers. */
   record Fitted(SeriesResult result) implements SeriesFit {}
 
+  /** The numbers of potentials, which no line goes through. */
+  record ByElectrode(ElectrodeResult result) implements SeriesFit {}
+
   /**
    * No result.
    *
@@ -31,6 +35,9 @@ public sealed interface SeriesFit {
 
   /** Fits a series: least squares on flask means, carried back to zero signal. */
   static SeriesFit of(AdditionSeries series) {
+    if (series.design() == Design.ELECTRODE) {
+      return ElectrodeFit.of(series);
+    }
     List<Flask> flasks = series.usableFlasks();
     double[] x = flasks.stream().mapToDouble(Flask::x).toArray();
     double[] y = flasks.stream().mapToDouble(Flask::y).toArray();

@@ -10,6 +10,7 @@ import java.util.OptionalDouble;
 import java.util.Queue;
 import java.util.stream.Collectors;
 import org.spikewright.fit.DeletedResidual;
+import org.spikewright.judgement.ElectrodeResult;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.FlagKind;
 import org.spikewright.judgement.Outcome;
@@ -55,7 +56,12 @@ record FlaskLine(
     for (Flask flask : series.flasks()) {
       Queue<Integer> own = points.getOrDefault(flask.label(), new ArrayDeque<>());
       if (own.isEmpty()) {
-        lines.add(unused(flask, outcome));
+        lines.add(
+            outcome
+                .electrode()
+                .filter(electrode -> electrode.flasks().contains(flask))
+                .map(electrode -> beside(electrode, flask))
+                .orElseGet(() -> unused(flask, outcome)));
       }
       // Where the laboratory counts readings as flasks, one flask has several points.
       while (!own.isEmpty()) {
@@ -88,6 +94,20 @@ record FlaskLine(
         OptionalDouble.of(result.line().residual(i)),
         deleted.isPresent() ? finite(deleted.get().t()) : OptionalDouble.empty(),
         odd ? ODD : "");
+  }
+
+  /** A state of the vessel beside the electrode's curve. */
+  private static FlaskLine beside(ElectrodeResult electrode, Flask flask) {
+    double fitted = electrode.at(flask);
+    return new FlaskLine(
+        flask,
+        true,
+        OptionalDouble.of(flask.x()),
+        OptionalDouble.of(flask.y()),
+        finite(fitted),
+        finite(flask.y() - fitted),
+        OptionalDouble.empty(),
+        "");
   }
 
   private static FlaskLine unused(Flask flask, Outcome outcome) {
