@@ -45,6 +45,11 @@ public sealed interface KnownAdditions {
       int df)
       implements KnownAdditions {
 
+    /** The t that makes a 95 % interval of a standard error; empty without degrees of freedom. */
+    public OptionalDouble t() {
+      return df > 0 ? OptionalDouble.of(StudentT.quantile(0.975, df)) : OptionalDouble.empty();
+    }
+
     /** The slope over the theoretical one; empty without a temperature. */
     public OptionalDouble slopeToTheory() {
       return theoreticalSlope.isPresent()

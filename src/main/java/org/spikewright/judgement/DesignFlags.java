@@ -154,8 +154,13 @@ final class DesignFlags {
 
   /** What the second run alone would give. */
   private static String secondResult(AdditionSeries series) {
-    return series.secondRun().map(SeriesFit::of).orElseThrow() instanceof SeriesFit.Fitted second
-        ? "would give " + Flags.n(second.result().value()) + " " + series.toResult().unit().symbol()
+    SeriesFit second = series.secondRun().map(SeriesFit::of).orElseThrow();
+    String unit = " " + series.toResult().unit().symbol();
+    if (second instanceof SeriesFit.ByElectrode electrode) {
+      return "would give " + Flags.n(electrode.result().value()) + unit;
+    }
+    return second instanceof SeriesFit.Fitted line
+        ? "would give " + Flags.n(line.result().value()) + unit
         : "gives none by itself";
   }
 }

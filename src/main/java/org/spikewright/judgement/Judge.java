@@ -53,6 +53,10 @@ public final class Judge {
       flags.add(DesignFlags.unfitted(series, unfitted.reason()));
       return outcome(series, Optional.empty(), flags);
     }
+    if (fit instanceof SeriesFit.ByElectrode electrode) {
+      flags.addAll(new ElectrodeFlags(electrode.result(), criteria).all());
+      return outcome(series, Optional.empty(), flags).with(electrode.result());
+    }
     PoolView pool = around.pool(series);
     SeriesResult result = Moderating.of(((SeriesFit.Fitted) fit).result(), pool);
     flags.addAll(new LineFlags(result, criteria).all());
@@ -83,7 +87,8 @@ public final class Judge {
         verdict == Verdict.REPEAT || verdict == Verdict.WAITING
             ? ""
             : result.map(ReportedText::of).orElse("");
-    return new Outcome(gathered, result, List.copyOf(flags), verdict, reported, until);
+    return new Outcome(
+        gathered, result, List.copyOf(flags), verdict, reported, until, Optional.empty());
   }
 
   private static Verdict verdict(List<Flag> flags) {

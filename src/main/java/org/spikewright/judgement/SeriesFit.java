@@ -14,6 +14,7 @@ import org.spikewright.fit.NoLine;
 import org.spikewright.fit.OddFlask;
 import org.spikewright.fit.PooledSeries;
 import org.spikewright.fit.StraightLine;
+import org.spikewright.reading.Design;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.series.Flask;
 import org.spikewright.series.ToResult;
@@ -24,6 +25,9 @@ public sealed interface SeriesFit {
   /** The numbers. */
   record Fitted(SeriesResult result) implements SeriesFit {}
 
+  /** The numbers of potentials, which no line goes through. */
+  record ByElectrode(ElectrodeResult result) implements SeriesFit {}
+
   /**
    * No result.
    *
@@ -33,6 +37,9 @@ public sealed interface SeriesFit {
 
   /** Fits a series: least squares on flask means, carried back to zero signal. */
   static SeriesFit of(AdditionSeries series) {
+    if (series.design() == Design.ELECTRODE) {
+      return ElectrodeFit.of(series);
+    }
     List<Flask> flasks = series.usableFlasks();
     double[] x = flasks.stream().mapToDouble(Flask::x).toArray();
     double[] y = flasks.stream().mapToDouble(Flask::y).toArray();

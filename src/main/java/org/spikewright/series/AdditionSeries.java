@@ -8,8 +8,10 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Set;
+import org.spikewright.quantity.Measured;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Design;
+import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.MethodFacts;
 import org.spikewright.reading.Preparation;
 import org.spikewright.reading.Role;
@@ -48,6 +50,32 @@ public record AdditionSeries(
     Instant lastReadingAt,
     boolean timed)
     implements Gathered {
+
+  /**
+   * The volumes of one vessel, in L.
+   *
+   * @param aliquot V_x
+   * @param start V_0, before the first addition
+   */
+  public record Vessel(double aliquot, double start) {
+    /** The volume added to the vessel up to a state of it, in L. */
+    public static double added(Flask flask) {
+      return Axis.inBase(Measured.exactly(flask.facts().addition().amount()));
+    }
+  }
+
+  /** The volumes of the vessel; empty in designs with a flask for each addition. */
+  public Optional<Vessel> vessel() {
+    if (!design.isVessel()) {
+      return Optional.empty();
+    }
+    List<FlaskFacts> facts = flasks.stream().map(Flask::facts).toList();
+    return Axis.startVolume(facts)
+        .map(Measured::exactly)
+        .map(
+            start ->
+                new Vessel(Axis.inBase(facts.get(0).aliquot().orElse(start)), Axis.inBase(start)));
+  }
 
   /** The flasks that take part in the fit, in order. */
   public List<Flask> usableFlasks() {

@@ -11,6 +11,7 @@ import java.util.SortedSet;
 import java.util.TreeSet;
 import java.util.stream.Collectors;
 import org.spikewright.fit.DeletedResidual;
+import org.spikewright.judgement.ElectrodeResult;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.FlagKind;
 import org.spikewright.judgement.Outcome;
@@ -60,7 +61,12 @@ record FlaskLine(
         lines.add(used(outcome.result().orElseThrow(), point, odd.contains(point)));
         point++;
       } else {
-        lines.add(unused(flask, outcome));
+        lines.add(
+            outcome
+                .electrode()
+                .filter(electrode -> electrode.flasks().contains(flask))
+                .map(electrode -> beside(electrode, flask))
+                .orElseGet(() -> unused(flask, outcome)));
       }
       if (!flask.secondRun().isEmpty()) {
         lines.add(secondRun(flask.second()));
@@ -82,6 +88,20 @@ record FlaskLine(
         OptionalDouble.of(result.line().residual(i)),
         deleted.isPresent() ? finite(deleted.get().t()) : OptionalDouble.empty(),
         odd ? ODD : "");
+  }
+
+  /** A state of the vessel beside the electrode's curve. */
+  private static FlaskLine beside(ElectrodeResult electrode, Flask flask) {
+    double fitted = electrode.at(flask);
+    return new FlaskLine(
+        flask,
+        true,
+        OptionalDouble.of(flask.x()),
+        OptionalDouble.of(flask.y()),
+        finite(fitted),
+        finite(flask.y() - fitted),
+        OptionalDouble.empty(),
+        "");
   }
 
   private static FlaskLine unused(Flask flask, Outcome outcome) {

@@ -10,6 +10,7 @@ import java.util.TreeSet;
 import java.util.function.Function;
 import org.spikewright.fit.Budget;
 import org.spikewright.fit.StraightLine;
+import org.spikewright.judgement.ElectrodeResult;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.SeriesResult;
@@ -46,7 +47,7 @@ import org.spikewright.series.Ungrouped;
  * @param sentences one for each flag, in the same order
  * @param flasks how many the line was fitted to
  * @param readings how many count
- * @param slope signal per axis unit
+ * @param slope signal per axis unit; of an electrode signal per decade
  * @param signalIntercept signal
  * @param residualSd signal
  * @param residualDf degrees of freedom
@@ -90,47 +91,83 @@ public record ResultRow(
   public static ResultRow of(Outcome outcome) {
     Optional<SeriesResult> result = outcome.result();
     Optional<StraightLine> line = result.map(SeriesResult::line);
-    OptionalDouble lower = number(result, SeriesResult::reportedLower95);
-    OptionalDouble upper = number(result, SeriesResult::reportedUpper95);
+    Optional<ElectrodeResult> electrode = outcome.electrode();
     Optional<Budget> budget = result.flatMap(SeriesResult::budget);
     Origin origin = Origin.of(outcome.gathered());
     return new ResultRow(
         outcome.gathered().key(),
         origin.batch,
         origin.role,
-        number(result, found -> OptionalDouble.of(found.value())),
+        either(
+            result,
+            r -> OptionalDouble.of(r.value()),
+            electrode,
+            e -> OptionalDouble.of(e.value())),
         origin.unit,
         outcome.reported(),
         number(budget, made -> OptionalDouble.of(made.standardUncertainty())),
         number(budget, made -> OptionalDouble.of(made.expandedUncertainty())),
         number(budget, made -> OptionalDouble.of(made.coverageFactor())),
-        lower,
-        upper,
-        number(result, SeriesResult::standardError),
-        number(result, SeriesResult::lower95),
-        number(result, SeriesResult::upper95),
-        result.map(ResultRow::basis).orElse(""),
+        either(result, SeriesResult::reportedLower95, electrode, ElectrodeResult::lower95),
+        either(result, SeriesResult::reportedUpper95, electrode, ElectrodeResult::upper95),
+        either(result, SeriesResult::standardError, electrode, ElectrodeResult::standardError),
+        either(result, SeriesResult::lower95, electrode, ElectrodeResult::lower95),
+        either(result, SeriesResult::upper95, electrode, ElectrodeResult::upper95),
+        basis(result, electrode),
         number(result.flatMap(SeriesResult::detection), d -> OptionalDouble.of(d.detectionLimit())),
         outcome.verdict(),
         outcome.flags().stream().map(flag -> flag.kind().shortName()).toList(),
         outcome.flags().stream().map(Flag::sentence).toList(),
-        result.map(found -> found.flasks().size()).orElse(0),
+        result
+            .map(SeriesResult::flasks)
+            .or(() -> electrode.map(ElectrodeResult::flasks))
+            .map(List::size)
+            .orElse(0),
         origin.readings.size(),
-        number(line, found -> OptionalDouble.of(found.slope())),
+        either(
+            line,
+            l -> OptionalDouble.of(l.slope()),
+            electrode,
+            e -> OptionalDouble.of(e.inSignalUnits(e.fit().slope()))),
         number(line, found -> OptionalDouble.of(found.signalIntercept())),
-        number(line, StraightLine::residualSd),
-        line.map(found -> OptionalInt.of(found.residualDf())).orElse(OptionalInt.empty()),
+        either(line, StraightLine::residualSd, electrode, ResultRow::scatter),
+        line.map(StraightLine::residualDf)
+            .or(() -> electrode.map(found -> found.fit().df()))
+            .map(OptionalInt::of)
+            .orElse(OptionalInt.empty()),
         number(line, StraightLine::correlation),
         origin.design,
         origin.files(),
         result.map(RowEvidence::of).orElse(RowEvidence.EMPTY));
   }
 
-  private static String basis(SeriesResult result) {
-    if (result.reportedPool().isPresent()) {
+  private static String basis(Optional<SeriesResult> result, Optional<ElectrodeResult> electrode) {
+    if (result.flatMap(SeriesResult::reportedPool).isPresent()) {
       return "pool";
     }
-    return result.standardError().isPresent() ? "own" : "";
+    boolean own =
+        result.map(SeriesResult::standardError).filter(OptionalDouble::isPresent).isPresent()
+            || electrode
+                .map(ElectrodeResult::standardError)
+                .filter(OptionalDouble::isPresent)
+                .isPresent();
+    return own ? "own" : "";
+  }
+
+  private static OptionalDouble scatter(ElectrodeResult electrode) {
+    OptionalDouble millivolts = electrode.fit().residualSd();
+    return millivolts.isPresent()
+        ? OptionalDouble.of(electrode.inSignalUnits(millivolts.getAsDouble()))
+        : millivolts;
+  }
+
+  /** The number of the line's result, or of the electrode's where that is the one there is. */
+  private static <A, B> OptionalDouble either(
+      Optional<A> line,
+      Function<A, OptionalDouble> ofLine,
+      Optional<B> electrode,
+      Function<B, OptionalDouble> ofElectrode) {
+    return electrode.isPresent() ? number(electrode, ofElectrode) : number(line, ofLine);
   }
 
   /** What is known of readings whether they form a series or not. */
