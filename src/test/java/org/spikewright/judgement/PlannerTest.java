@@ -323,14 +323,16 @@ class PlannerTest {
     Map<String, Integer> seen = new TreeMap<>();
     for (int round = 0; round < 2500; round++) {
       RepeatAsk ask = random(random);
-      String place = "seed " + seed + " round " + round + " " + ask;
+      String place = "seed " + seed + " round " + round;
       RepeatPlan plan = Planner.plan(ask);
       if (plan instanceof Prepared prepared) {
         keepsToCaps(place, ask, prepared);
         isEven(place, ask, prepared);
         isNotRising(place, ask, prepared);
         seen.merge("plan", 1, Integer::sum);
-        assertThat(Planner.plan(ask)).as(place).isEqualTo(plan);
+        if (round % 10 == 0) {
+          assertThat(Planner.plan(ask)).as(place).isEqualTo(plan);
+        }
       } else {
         Refused refused = (Refused) plan;
         assertThat(refused.found()).as(place).isNotBlank().doesNotContain("NaN", "Infinity");
