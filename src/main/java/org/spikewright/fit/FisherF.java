@@ -25,9 +25,12 @@ final class FisherF {
     if (df2 > MANY) {
       return Gamma.regularizedGammaQ(df1 / 2, df1 * f / 2);
     }
-    double rest = df2 / (df2 + df1 * f);
-    return rest < 0.5
-        ? Beta.regularizedBeta(rest, df2 / 2, df1 / 2)
-        : 1 - Beta.regularizedBeta(df1 * f / (df2 + df1 * f), df1 / 2, df2 / 2);
+    double a = df2 / 2;
+    double b = df1 / 2;
+    double x = df2 / (df2 + df1 * f);
+    // On its own side of the mean the library's fraction keeps the digits of a small tail.
+    return x <= (a + 1) / (a + b + 2)
+        ? Beta.regularizedBeta(x, a, b)
+        : 1 - Beta.regularizedBeta(df1 * f / (df2 + df1 * f), b, a);
   }
 }
