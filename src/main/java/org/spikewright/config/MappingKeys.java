@@ -14,7 +14,13 @@ final class MappingKeys {
 
   /** Facts that hold for one row only and cannot be fixed; the instrument has a key of its own. */
   private static final List<Fact> NEVER_FIXED =
-      List.of(Fact.SIGNAL, Fact.MEASURED_AT, Fact.FLASK, Fact.INSTRUMENT, Fact.RESULT_UNIT);
+      List.of(
+          Fact.SIGNAL,
+          Fact.MEASURED_AT,
+          Fact.FLASK,
+          Fact.INSTRUMENT,
+          Fact.RESULT_UNIT,
+          Fact.CALIBRATION_CONCENTRATION);
 
   static final List<String> METHOD_IN_FIXED =
       List.of("design", "additions", "addition_terms", "flasks", "role");

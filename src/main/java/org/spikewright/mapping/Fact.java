@@ -30,6 +30,12 @@ public enum Fact {
       "test_portion", Kind.AMOUNT, Bound.ABOVE_ZERO, "0.5 g", Dimension.MASS, Dimension.VOLUME),
   DIGEST_VOLUME("digest_volume", Kind.AMOUNT, Bound.ABOVE_ZERO, "50 mL", Dimension.VOLUME),
   DRY_MASS("dry_mass", Kind.AMOUNT, Bound.FRACTION, "85 %", Dimension.NUMBER),
+  CALIBRATION_CONCENTRATION(
+      "calibration_concentration",
+      Kind.AMOUNT,
+      Bound.NOT_NEGATIVE,
+      "5 µg/L",
+      Concentration.CONCENTRATIONS),
   BASELINE("baseline", Kind.AMOUNT, Bound.ANY, "0.003", Dimension.NUMBER),
   METHOD_BLANK("method_blank", Kind.AMOUNT, Bound.ANY, "0.1 µg/L", Concentration.CONCENTRATIONS),
   SOLVENT_BLANK(

@@ -10,6 +10,7 @@ import java.util.Optional;
 import java.util.function.Predicate;
 import org.spikewright.mapping.Rejection.Reason;
 import org.spikewright.quantity.Measured;
+import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Role;
@@ -64,7 +65,7 @@ final class FactsReader {
   }
 
   private static boolean isOfFlask(Fact fact) {
-    return fact.kind() == Fact.Kind.AMOUNT
+    return fact.kind() == Fact.Kind.AMOUNT && fact != Fact.CALIBRATION_CONCENTRATION
         || fact.kind() == Fact.Kind.DILUTION
         || fact == Fact.PREPARATION
         || fact == Fact.RESULT_UNIT;
@@ -151,6 +152,16 @@ final class FactsReader {
       troubles.add(lookup.missing(fact, fact.expectation() + whose, true));
     }
     return value;
+  }
+
+  /** A quantity of the lookup's row that is none of a flask's facts. */
+  Optional<Quantity> quantity(Fact fact, List<Trouble> troubles) {
+    Optional<Given> given = lookup.find(fact);
+    if (given.isEmpty()) {
+      troubles.add(lookup.missing(fact, fact.expectation(), false));
+      return Optional.empty();
+    }
+    return understood(fact, given.get(), troubles).map(Measured::quantity);
   }
 
   private Optional<Measured> understood(Fact fact, Given given, List<Trouble> troubles) {

@@ -14,7 +14,7 @@ final class RowFilter {
     /** To be mapped. */
     record Measured(Role role) implements Kind {}
 
-    /** Left out by the mapping's own words, or of a role that holds no additions. */
+    /** Left out by the mapping's own words. */
     record LeftOut() implements Kind {}
 
     /** Not to be told. */
@@ -93,8 +93,7 @@ final class RowFilter {
               Said.quoted(text),
               "one of " + words(roles)));
     }
-    boolean holdsAdditions = role.get() != Role.CALIBRATION && role.get() != Role.DRIFT_CHECK;
-    return holdsAdditions ? new Kind.Measured(role.get()) : LEFT_OUT;
+    return new Kind.Measured(role.get());
   }
 
   private static String words(RowRules.Roles roles) {

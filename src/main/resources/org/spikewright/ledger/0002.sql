@@ -1,0 +1,1 @@
+-- Kept free: the numbers of scripts must follow one another.
