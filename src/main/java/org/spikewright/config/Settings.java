@@ -3,6 +3,7 @@ package org.spikewright.config;
 import java.nio.file.Path;
 import java.time.Duration;
 import java.time.LocalTime;
+import org.spikewright.analysis.ControlBook;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.reading.LabCalendar;
 
@@ -22,6 +23,7 @@ import org.spikewright.reading.LabCalendar;
  * @param longestPause longest pause between readings of one series
  * @param waitForFlasks how long a series short of its flasks is waited for
  * @param criteria the limits of judgement
+ * @param controls what the laboratory knows of its controls, from {@code controls.toml} beside it
  * @param sha256 of the file's bytes, in hexadecimal
  * @param text the file's text
  */
@@ -39,6 +41,7 @@ public record Settings(
     Duration longestPause,
     Duration waitForFlasks,
     CriteriaBook criteria,
+    ControlBook controls,
     String sha256,
     String text) {
 

@@ -1,5 +1,6 @@
 package org.spikewright.config;
 
+import java.nio.file.Files;
 import java.nio.file.InvalidPathException;
 import java.nio.file.Path;
 import java.time.DateTimeException;
@@ -7,9 +8,11 @@ import java.time.Duration;
 import java.time.LocalTime;
 import java.time.ZoneId;
 import java.time.ZoneOffset;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import org.spikewright.analysis.ControlBook;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.reading.LabCalendar;
 
@@ -41,25 +44,51 @@ final class SettingsFile {
   static Loaded<Settings> load(Path file) {
     Faults faults = new Faults(file.toString());
     Optional<TomlText> text = TomlText.read(file, faults);
-    return text.isPresent()
-        ? read(file, text.get(), faults)
-        : new Loaded.Faulty<>(file, faults.inOrder());
+    Path controls = file.resolveSibling(ControlsText.NAME);
+    Faults ofControls = new Faults(controls.toString());
+    Optional<TomlText> controlsText =
+        Files.exists(controls) ? TomlText.read(controls, ofControls) : Optional.empty();
+    if (text.isEmpty()) {
+      return faulty(file, faults, ofControls);
+    }
+    ControlsText both = ControlsText.join(text.get(), controlsText);
+    return read(file, both, faults, ofControls);
   }
 
   static Loaded<Settings> read(Path file, String text) {
-    return read(file, TomlText.of(text), new Faults(file.toString()));
+    Faults ofControls = new Faults(file.resolveSibling(ControlsText.NAME).toString());
+    return read(file, ControlsText.part(text), new Faults(file.toString()), ofControls);
   }
 
-  private static Loaded<Settings> read(Path file, TomlText text, Faults faults) {
-    Section root = Section.of(text.parse(faults), "", At.START, KEYS.get(""), faults);
-    Settings settings = new SettingsFile(file, root, faults).settings(text);
-    return faults.isEmpty()
+  private static Loaded<Settings> read(
+      Path file, ControlsText text, Faults faults, Faults ofControls) {
+    Section root = Section.of(text.settings().parse(faults), "", At.START, KEYS.get(""), faults);
+    ControlBook controls =
+        text.controls()
+            .map(
+                own ->
+                    Section.of(
+                        own.parse(ofControls),
+                        "",
+                        At.START,
+                        ControlsSection.KEYS.get(""),
+                        ofControls))
+            .map(ControlsSection::book)
+            .orElse(ControlBook.EMPTY);
+    Settings settings = new SettingsFile(file, root, faults).settings(text.whole(), controls);
+    return faults.isEmpty() && ofControls.isEmpty()
         ? new Loaded.Good<>(settings)
-        : new Loaded.Faulty<>(file, faults.inOrder());
+        : faulty(file, faults, ofControls);
+  }
+
+  private static Loaded<Settings> faulty(Path file, Faults faults, Faults ofControls) {
+    List<ConfigFault> all = new ArrayList<>(faults.inOrder());
+    all.addAll(ofControls.inOrder());
+    return new Loaded.Faulty<>(file, all);
   }
 
   /** The settings; where a fault was found, some of its values only stand in. */
-  private Settings settings(TomlText text) {
+  private Settings settings(TomlText text, ControlBook controls) {
     Optional<Section> folders = root.section("folders", KEYS.get("folders"));
     Path watch = path(folders, "watch");
     Path mappings = path(folders, "mappings");
@@ -87,6 +116,7 @@ final class SettingsFile {
         root.section("criteria", KEYS.get("criteria"))
             .map(CriteriaSection::book)
             .orElseGet(CriteriaBook::defaults),
+        controls,
         text.sha256(),
         text.text());
   }
