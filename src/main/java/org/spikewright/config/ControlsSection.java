@@ -101,7 +101,7 @@ final class ControlsSection {
     String key = kind.equals(Optional.of(Kind.SPIKED_CONTROL)) ? "added" : "reference";
     boolean known = kind.map(Kind::hasReference).orElse(false);
     PerAnalyte<Certified> reference = known ? references(key) : PerAnalyte.none();
-    Limits limits = limits();
+    Limits limits = limits(kind);
     if (kind.isEmpty() || sample.isEmpty()) {
       return Optional.empty();
     }
@@ -182,9 +182,10 @@ final class ControlsSection {
                                 : OptionalDouble.empty())));
   }
 
-  private Limits limits() {
+  private Limits limits(Optional<Kind> kind) {
     OptionalDouble z = number("z", Double.NaN, new Range(0.1, 100));
-    if (section.has("z") && !section.has("sd")) {
+    boolean counts = kind.map(ONLY_WITH.get("z")::contains).orElse(false);
+    if (counts && section.has("z") && !section.has("sd")) {
       section.missing("sd", CONCENTRATION + ": the standard deviation that z counts in");
     }
     return new Limits(

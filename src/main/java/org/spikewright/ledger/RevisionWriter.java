@@ -8,6 +8,7 @@ import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalLong;
+import org.spikewright.analysis.ControlPoint;
 import org.spikewright.series.SeriesKey;
 import org.spikewright.summary.ResultRow;
 
@@ -25,6 +26,7 @@ public final class RevisionWriter implements AutoCloseable {
   private final long settings;
   private final Batched places;
   private final List<Shown> shown = new ArrayList<>();
+  private List<ControlPoint> controls = List.of();
   private boolean open = true;
 
   private record Shown(SeriesKey key, long version) {}
@@ -79,6 +81,21 @@ public final class RevisionWriter implements AutoCloseable {
             ? newest.get().id()
             : add(series, newest.map(Newest::nth).orElse(0) + 1, inputsSha256, row, content);
     shown.add(new Shown(row.key(), version));
+  }
+
+  /**
+   * Takes what the controls of the day came to; it is recorded where the revision is.
+   *
+   * @param points in order; of this lab day
+   */
+  public void controls(List<ControlPoint> points) {
+    requireOpen();
+    for (ControlPoint point : points) {
+      if (!point.labDay().equals(start.labDay())) {
+        throw new IllegalArgumentException("a control of another lab day: " + point);
+      }
+    }
+    controls = List.copyOf(points);
   }
 
   /**
@@ -163,6 +180,7 @@ public final class RevisionWriter implements AutoCloseable {
       places.add(day(), revision(), place + 1, shown.get(place).version());
     }
     places.flush();
+    new ControlPoints(sql).add(ids, start.labDay(), revision(), controls);
   }
 
   private Object[] identity(SeriesKey key) {
