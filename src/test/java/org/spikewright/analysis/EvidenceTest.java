@@ -10,7 +10,6 @@ import java.util.OptionalDouble;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
-import org.spikewright.analysis.ControlBench.Sample;
 import org.spikewright.analysis.ControlResult.Verdict;
 import org.spikewright.analysis.ControlRule.Certified;
 import org.spikewright.analysis.ControlRule.Kind;
@@ -26,6 +25,8 @@ import org.spikewright.reading.CheckReading;
 import org.spikewright.reading.Role;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.testkit.Bench;
+import org.spikewright.testkit.ControlBench;
+import org.spikewright.testkit.ControlBench.Sample;
 
 class EvidenceTest {
 

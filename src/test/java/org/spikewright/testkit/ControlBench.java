@@ -1,4 +1,4 @@
-package org.spikewright.analysis;
+package org.spikewright.testkit;
 
 import java.time.Duration;
 import java.time.Instant;
@@ -7,9 +7,16 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import org.spikewright.analysis.BatchEvidence;
+import org.spikewright.analysis.ControlBook;
+import org.spikewright.analysis.ControlHistory;
+import org.spikewright.analysis.ControlKey;
+import org.spikewright.analysis.ControlPoint;
+import org.spikewright.analysis.ControlRule;
 import org.spikewright.analysis.ControlRule.Certified;
 import org.spikewright.analysis.ControlRule.Kind;
 import org.spikewright.analysis.ControlRule.Limits;
+import org.spikewright.analysis.Evidence;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.judgement.SeriesFit;
 import org.spikewright.judgement.SeriesResult;
@@ -38,11 +45,11 @@ import org.spikewright.series.Gathering;
 import org.spikewright.series.GatheringRules;
 import org.spikewright.table.Position;
 import org.spikewright.table.Source;
-import org.spikewright.testkit.Bench;
 
 /** Series with results that are known beforehand: stated additions, results in mg/L. */
-final class ControlBench {
-  static final Unit MG_PER_L = Unit.of("mg/L");
+public final class ControlBench {
+  /** The unit of every result. */
+  public static final Unit MG_PER_L = Unit.of("mg/L");
 
   /** Flask errors in units of the signal; their mean and slope over the additions are 0. */
   private static final double[] ERRORS = {0.01, -0.02, 0, 0.02, -0.01};
@@ -52,46 +59,55 @@ final class ControlBench {
   private ControlBench() {}
 
   /** A series to be made. */
-  record Sample(
+  public record Sample(
       String id, Role role, String line, String batch, double value, double dilution, long minute) {
-    static Sample of(String id, double value) {
+    /** A sample in run1 with this result in mg/L. */
+    public static Sample of(String id, double value) {
       return new Sample(id, Role.SAMPLE, "", "run1", value, 1, 0);
     }
 
-    Sample role(Role other) {
+    /** The same of another role. */
+    public Sample role(Role other) {
       return new Sample(id, other, line, batch, value, dilution, minute);
     }
 
-    Sample line(String other) {
+    /** The same at another line. */
+    public Sample line(String other) {
       return new Sample(id, role, other, batch, value, dilution, minute);
     }
 
-    Sample batch(String other) {
+    /** The same in another batch. */
+    public Sample batch(String other) {
       return new Sample(id, role, line, other, value, dilution, minute);
     }
 
-    Sample dilution(double other) {
+    /** The same, diluted before the aliquot. */
+    public Sample dilution(double other) {
       return new Sample(id, role, line, batch, value, other, minute);
     }
 
-    Sample at(long other) {
+    /** The same, measured so many minutes after the start. */
+    public Sample at(long other) {
       return new Sample(id, role, line, batch, value, dilution, other);
     }
 
-    Subject subject() {
+    /** Whose series it is. */
+    public Subject subject() {
       return new Subject("furnace", new SampleId(id), "Cd", line);
     }
 
     /** Five flasks at 0 to 4 mg/L; slope 1, so that the result is the value. */
-    AdditionSeries series() {
+    public AdditionSeries series() {
       return series(ERRORS, Blanks.NONE, false);
     }
 
-    AdditionSeries exact() {
+    /** The same without flask errors. */
+    public AdditionSeries exact() {
       return series(EXACT, Blanks.NONE, false);
     }
 
-    AdditionSeries with(Blanks blanks, boolean blankDue) {
+    /** The same with blanks, or with a blank that is due. */
+    public AdditionSeries with(Blanks blanks, boolean blankDue) {
       return series(ERRORS, blanks, blankDue);
     }
 
@@ -152,19 +168,23 @@ final class ControlBench {
     }
   }
 
-  static Instant time(long minute) {
+  /** So many minutes after the start. */
+  public static Instant time(long minute) {
     return Bench.START.plus(Duration.ofMinutes(minute));
   }
 
-  static Position position(long row) {
+  /** A cell of the one file. */
+  public static Position position(long row) {
     return new Position(new Source("run1.csv", Optional.empty()), row, 5);
   }
 
-  static SeriesResult result(AdditionSeries series) {
+  /** The fit of a series. */
+  public static SeriesResult result(AdditionSeries series) {
     return ((SeriesFit.Fitted) SeriesFit.of(series)).result();
   }
 
-  static CheckReading check(String name, long minute, double signal) {
+  /** A reading of a drift check. */
+  public static CheckReading check(String name, long minute, double signal) {
     return new CheckReading(
         new Subject("furnace", new SampleId(name), "Cd", ""),
         new Batch("run1.csv", false),
@@ -174,7 +194,8 @@ final class ControlBench {
         position(100 + minute));
   }
 
-  static CalibrationPoint calibration(double concentration, double signal) {
+  /** A reading of a calibration solution, in mg/L. */
+  public static CalibrationPoint calibration(double concentration, double signal) {
     return new CalibrationPoint(
         new Subject("furnace", new SampleId("Std " + concentration), "Cd", ""),
         new Batch("run1", true),
@@ -185,7 +206,9 @@ final class ControlBench {
         new Quantity(concentration, MG_PER_L));
   }
 
-  static ControlRule rule(String sample, Kind kind, double reference, double u, Limits limits) {
+  /** A rule with a known value in mg/L. */
+  public static ControlRule rule(
+      String sample, Kind kind, double reference, double u, Limits limits) {
     return new ControlRule(
         sample,
         kind,
@@ -200,7 +223,8 @@ final class ControlBench {
         limits);
   }
 
-  static ControlRule beside(String suffix, Kind kind, PerAnalyte<Certified> added) {
+  /** A rule for samples whose ID ends in a suffix. */
+  public static ControlRule beside(String suffix, Kind kind, PerAnalyte<Certified> added) {
     return new ControlRule(
         "*" + suffix,
         kind,
@@ -212,7 +236,8 @@ final class ControlBench {
         Limits.NONE);
   }
 
-  static ControlHistory history(ControlKey key, double... values) {
+  /** A history of values in mg/L, a lab day each. */
+  public static ControlHistory history(ControlKey key, double... values) {
     List<ControlPoint> points = new ArrayList<>();
     for (int i = 0; i < values.length; i++) {
       points.add(
@@ -228,11 +253,13 @@ final class ControlBench {
     return new ControlHistory(Map.of(key, points));
   }
 
-  static Evidence evidence(List<ControlRule> rules, List<AdditionSeries> night) {
+  /** What series say about each other. */
+  public static Evidence evidence(List<ControlRule> rules, List<AdditionSeries> night) {
     return evidence(rules, night, List.of(), ControlHistory.NONE);
   }
 
-  static Evidence evidence(
+  /** The same with what was measured beside them and earlier. */
+  public static Evidence evidence(
       List<ControlRule> rules,
       List<AdditionSeries> night,
       List<BatchReading> beside,
