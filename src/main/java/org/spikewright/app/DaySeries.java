@@ -6,9 +6,12 @@ import java.util.Deque;
 import java.util.Iterator;
 import java.util.List;
 import java.util.NoSuchElementException;
+import java.util.Optional;
 import java.util.Set;
 import org.spikewright.ledger.LedgerView;
+import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Subject;
+import org.spikewright.series.Drifts;
 import org.spikewright.series.Gathered;
 import org.spikewright.series.Gathering;
 
@@ -22,6 +25,7 @@ final class DaySeries implements Iterable<Gathered> {
   private final LocalDate day;
   private final long upTo;
   private final List<Subject> subjects;
+  private Optional<Drifts> drifts = Optional.empty();
 
   /**
    * The series of a day.
@@ -47,6 +51,14 @@ final class DaySeries implements Iterable<Gathered> {
     return new DaySeries(ledger, gathering, day, upTo, some);
   }
 
+  /** Read once, when the first series is asked for: most days have no drift checks. */
+  private List<Recorded> readings(Subject subject) {
+    if (drifts.isEmpty()) {
+      drifts = Optional.of(new Drifts(ledger.besideSamples(day, upTo)));
+    }
+    return drifts.get().corrected(ledger.readings(subject, day, upTo));
+  }
+
   @Override
   public Iterator<Gathered> iterator() {
     Iterator<Subject> next = subjects.iterator();
@@ -56,7 +68,7 @@ final class DaySeries implements Iterable<Gathered> {
       public boolean hasNext() {
         while (ready.isEmpty() && next.hasNext()) {
           Subject subject = next.next();
-          gathering.gather(subject, ledger.readings(subject, day, upTo)).stream()
+          gathering.gather(subject, readings(subject)).stream()
               .filter(gathered -> gathered.key().labDay().equals(day))
               .forEach(ready::add);
         }

@@ -25,13 +25,21 @@ record ControlCharts(List<List<CellPlan>> rows, List<ChartPlan> charts) {
   /** How many points a chart shows. */
   private static final int POINTS = 40;
 
+  /** Action limits in standard deviations. */
+  private static final double ACTION = 3;
+
   private static final int HEIGHT = 17;
   private static final int SPLIT = 8;
   private static final int RIGHT = 17;
 
   /** A control with its latest points, this night's at the end. */
   private record Charted(
-      ControlKey key, String unit, List<ControlPoint> points, Optional<ControlLimits> limits) {}
+      ControlKey key, String unit, List<ControlPoint> points, Optional<ControlLimits> limits) {
+    /** What differences are taken from: an axis about 0 shows them, however large the values. */
+    double centre() {
+      return limits.map(ControlLimits::centre).orElse(points.get(0).value());
+    }
+  }
 
   /**
    * The charts; those of controls that are out first.
@@ -61,10 +69,10 @@ record ControlCharts(List<List<CellPlan>> rows, List<ChartPlan> charts) {
                 ColumnPlan.text("Lab day", 1),
                 ColumnPlan.number("No.", 1),
                 ColumnPlan.number("Value", 1),
-                ColumnPlan.number("Centre", 1),
+                ColumnPlan.number("Difference", 1),
                 ColumnPlan.number("Lower action", 1),
                 ColumnPlan.number("Upper action", 1),
-                ColumnPlan.number("Known", 1))));
+                ColumnPlan.number("Known value", 1))));
     List<ChartPlan> charts = new ArrayList<>();
     for (int i = 0; i < shown.size(); i++) {
       int first = above + rows.size() + 1;
@@ -79,7 +87,10 @@ record ControlCharts(List<List<CellPlan>> rows, List<ChartPlan> charts) {
   }
 
   private static String sentence(int all) {
-    String latest = "The latest " + POINTS + " points of each; the last one is this night's.";
+    String latest =
+        "Differences from the mean of the history, with its action limits: the latest "
+            + POINTS
+            + " points of each, this night's at the end.";
     return all > MOST
         ? latest + " Shown are " + MOST + " of " + all + " controls, those that are out first."
         : latest;
@@ -134,7 +145,11 @@ record ControlCharts(List<List<CellPlan>> rows, List<ChartPlan> charts) {
     }
 
     void add(ControlPoint point) {
-      String format = Formats.significant(point.value(), 4);
+      String format =
+          charted
+              .limits()
+              .map(limits -> Formats.significant(limits.sd(), 2))
+              .orElse(Formats.significant(point.value(), 4));
       rows.add(
           List.of(
               CellPlan.text(point.key().name()),
@@ -142,10 +157,16 @@ record ControlCharts(List<List<CellPlan>> rows, List<ChartPlan> charts) {
               new CellPlan.Day(point.labDay()),
               CellPlan.count(++number),
               CellPlan.number(point.value(), format),
-              limit(charted.limits().map(ControlLimits::centre), format),
-              limit(charted.limits().map(ControlLimits::lowerAction), format),
-              limit(charted.limits().map(ControlLimits::upperAction), format),
-              CellPlan.number(point.reference(), format)));
+              CellPlan.number(point.value() - charted.centre(), format),
+              limit(charted.limits().map(limits -> -ACTION * limits.sd()), format),
+              limit(charted.limits().map(limits -> ACTION * limits.sd()), format),
+              CellPlan.number(known(point, charted.centre()), format)));
+    }
+
+    private static OptionalDouble known(ControlPoint point, double centre) {
+      return point.reference().isPresent()
+          ? OptionalDouble.of(point.reference().getAsDouble() - centre)
+          : point.reference();
     }
 
     private static CellPlan limit(Optional<Double> value, String format) {
@@ -166,16 +187,18 @@ record ControlCharts(List<List<CellPlan>> rows, List<ChartPlan> charts) {
         .limits()
         .ifPresent(
             limits -> {
-              traces.add(level("mean of the history", x, 'F', first, limits.centre(), n));
-              traces.add(level("lower action limit", x, 'G', first, limits.lowerAction(), n));
-              traces.add(level("upper action limit", x, 'H', first, limits.upperAction(), n));
+              traces.add(level("lower action limit", x, 'G', first, -ACTION * limits.sd(), n));
+              traces.add(level("upper action limit", x, 'H', first, ACTION * limits.sd(), n));
             });
     traces.add(
         new ChartPlan.Trace(
             "result",
             ChartPlan.Stroke.POINTS,
             x,
-            cells('E', first, charted.points().stream().map(ControlPoint::value).toList()),
+            cells(
+                'F',
+                first,
+                charted.points().stream().map(point -> point.value() - charted.centre()).toList()),
             List.of()));
     OptionalDouble known = charted.points().get(n - 1).reference();
     if (known.isPresent()) {
@@ -184,7 +207,7 @@ record ControlCharts(List<List<CellPlan>> rows, List<ChartPlan> charts) {
               "known value",
               ChartPlan.Stroke.CROSSES,
               cells('D', first + n - 1, List.of((double) n)),
-              cells('I', first + n - 1, List.of(known.getAsDouble())),
+              cells('I', first + n - 1, List.of(known.getAsDouble() - charted.centre())),
               List.of()));
     }
     String provisional =
@@ -194,7 +217,9 @@ record ControlCharts(List<List<CellPlan>> rows, List<ChartPlan> charts) {
         key.name() + ", " + what + ", " + key.instrument() + provisional,
         box,
         "point",
-        charted.unit().equals("1") ? "recovery" : charted.unit(),
+        "difference from "
+            + (charted.limits().isPresent() ? "the mean, " : "the first, ")
+            + (charted.unit().equals("1") ? "recovery" : charted.unit()),
         traces);
   }
 

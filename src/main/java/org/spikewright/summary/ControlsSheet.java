@@ -397,7 +397,7 @@ final class ControlsSheet {
             titles.at(
                 entry.getKey(),
                 new CellPlan.Text(
-                    entry.getValue(), isNumber(entry.getKey()) ? Look.HEADER_RIGHT : Look.HEADER));
+                    entry.getValue(), isNumber(entry) ? Look.HEADER_RIGHT : Look.HEADER));
     Map.of(
             At.SAMPLE, "Sample",
             At.ANALYTE, "Analyte",
@@ -417,8 +417,9 @@ final class ControlsSheet {
     rows.add(List.of());
   }
 
-  private static boolean isNumber(At at) {
-    return switch (at) {
+  private static boolean isNumber(Map.Entry<At, String> title) {
+    return switch (title.getKey()) {
+      case KIND -> !title.getValue().equals("Kind");
       case FOUND, U, KNOWN, RATIO, Z, EN, LOWER, UPPER -> true;
       default -> false;
     };
