@@ -276,7 +276,9 @@ class RowMapperTest {
               assertThat(point.subject().sample().text()).isEqualTo("Std 1");
             });
     assertThat(trial.besideSamples.get(1)).isInstanceOf(CheckReading.class);
-    assertThat(trial.rejections).extracting(Rejection::column).containsExactly("calibration_concentration", "Abs");
+    assertThat(trial.rejections)
+        .extracting(Rejection::column)
+        .containsExactly("calibration_concentration", "Abs");
   }
 
   @Test
