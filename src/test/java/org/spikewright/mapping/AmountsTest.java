@@ -62,7 +62,7 @@ class AmountsTest {
         "dry_mass,0,%,OUT_OF_BOUNDS",
         "dry_mass,101,%,OUT_OF_BOUNDS",
         "dry_mass,85,1,OUT_OF_BOUNDS",
-        "stock,1 mg/kg,-,UNIT_DOES_NOT_FIT"
+        "stock,1 mL,-,UNIT_DOES_NOT_FIT"
       })
   void refusesWhatIsNotOne(String word, String text, String unit, Reason reason) {
     Understood<Measured> found = reader.read(Fact.of(word).get(), new Cell.Text(text), unit(unit));
