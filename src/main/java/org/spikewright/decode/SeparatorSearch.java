@@ -2,13 +2,13 @@ package org.spikewright.decode;
 
 import java.io.IOException;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.Comparator;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
 import java.util.Set;
 import java.util.stream.Collectors;
-import org.apache.commons.csv.CSVRecord;
 
 /** Works out a text file's separator: the one under which one row holds all header words. */
 final class SeparatorSearch {
@@ -52,8 +52,8 @@ final class SeparatorSearch {
   private Trial tried(TextFile file, char separator, char quote) throws IOException {
     Trial best = new Trial(separator, 0, words, List.of(), Optional.empty());
     try (CsvRecords records = new CsvRecords(file, separator, quote)) {
-      for (int row = 0; row < Limits.HEADER_ROWS && !best.fits() && records.hasNext(); row++) {
-        List<String> fields = fields(records.next());
+      for (int row = 0; row < Limits.HEADER_ROWS && !best.fits() && records.next(); row++) {
+        List<String> fields = fields(records.record());
         List<String> missing = missingFrom(fields);
         if (missing.size() < best.missing().size()) {
           best = new Trial(separator, records.line(), missing, fields, Optional.empty());
@@ -65,8 +65,8 @@ final class SeparatorSearch {
     }
   }
 
-  private static List<String> fields(CSVRecord csv) {
-    return csv.stream().map(String::strip).toList();
+  private static List<String> fields(String[] record) {
+    return Arrays.stream(record).map(String::strip).toList();
   }
 
   private List<String> missingFrom(List<String> fields) {
