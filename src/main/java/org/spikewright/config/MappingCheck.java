@@ -5,6 +5,7 @@ import java.util.Optional;
 import org.spikewright.mapping.Chain;
 import org.spikewright.mapping.Fact;
 import org.spikewright.mapping.MethodRule;
+import org.spikewright.mapping.PerAnalyte;
 import org.spikewright.mapping.Places;
 import org.spikewright.quantity.Dimension;
 import org.spikewright.quantity.Measured;
@@ -35,12 +36,34 @@ final class MappingCheck {
     if (fixedHas("design")) {
       design();
     }
+    means();
     together(Fact.TEST_PORTION, Fact.DIGEST_VOLUME);
     together(Fact.DIGEST_VOLUME, Fact.TEST_PORTION);
     if (named.has(Fact.DRY_MASS) && !named.has(Fact.TEST_PORTION)) {
       refuse(Fact.DRY_MASS, "without test_portion", "test_portion and digest_volume beside it");
     }
     units();
+  }
+
+  private void means() {
+    together(Fact.SIGNAL_SD, Fact.READINGS);
+    together(Fact.READINGS, Fact.SIGNAL_SD);
+    if (named.has(Fact.SIGNAL_SD) && method.fitReadings()) {
+      refuse(
+          Fact.SIGNAL_SD,
+          "beside unit = \"reading\" in [method]",
+          "unit = \"flask\": of readings whose mean alone is known none can be a point");
+    }
+    PerAnalyte<Measured> fixed =
+        places.fixedAmounts().getOrDefault(Fact.READINGS, PerAnalyte.none());
+    boolean odd =
+        fixed.values().anyMatch(n -> n.quantity().value() != Math.rint(n.quantity().value()));
+    if (odd || !fixed.each().isEmpty()) {
+      faults.add(
+          root.at("fixed", Fact.READINGS.word()),
+          "readings in [fixed] that are no whole number, or not one for all",
+          "one whole number, such as readings = 3");
+    }
   }
 
   private void design() {
@@ -206,14 +229,15 @@ final class MappingCheck {
 
   private void require(Fact fact, String why) {
     boolean explained =
-        List.of("[columns]", "[fixed]", "[label]", "[file]").stream()
+        List.of("[columns]", "[fixed]", "[label]", "[layout]", "[block]", "[sheet]", "[file]")
+            .stream()
             .anyMatch(section -> faults.isExplained(section, fact.word()));
     if (!named.has(fact) && !explained) {
       faults.add(
           root.at("columns"),
           "no "
               + fact.word()
-              + " in [columns], [label], [file]"
+              + " in [columns], [layout], [label], [block], [sheet], [file]"
               + (MappingKeys.fixable().contains(fact) ? " or [fixed]" : ""),
           fact.expectation() + "; " + why);
     }

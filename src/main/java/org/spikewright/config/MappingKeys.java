@@ -14,7 +14,13 @@ final class MappingKeys {
 
   /** Facts that hold for one row only and cannot be fixed; the instrument has a key of its own. */
   private static final List<Fact> NEVER_FIXED =
-      List.of(Fact.SIGNAL, Fact.MEASURED_AT, Fact.FLASK, Fact.INSTRUMENT, Fact.RESULT_UNIT);
+      List.of(
+          Fact.SIGNAL,
+          Fact.SIGNAL_SD,
+          Fact.MEASURED_AT,
+          Fact.FLASK,
+          Fact.INSTRUMENT,
+          Fact.RESULT_UNIT);
 
   static final List<String> METHOD_IN_FIXED =
       List.of("design", "additions", "addition_terms", "flasks", "role");
@@ -29,9 +35,12 @@ final class MappingKeys {
                   "instrument",
                   "files",
                   "table",
+                  "layout",
                   "columns",
                   "fixed",
                   "label",
+                  "block",
+                  "sheet",
                   "file",
                   "words",
                   "skip",
@@ -48,11 +57,20 @@ final class MappingKeys {
                   "quote",
                   "encoding",
                   "header",
+                  "header_rows",
+                  "units_row",
+                  "footer",
+                  "tables",
+                  "carry_down",
                   "sheet",
                   "extra_cells")),
+          Map.entry(
+              "layout", and(List.of("kind", "columns", "pattern", "beside"), words(inText()))),
           Map.entry("columns", words(Arrays.asList(Fact.values()))),
           Map.entry("fixed", fixed()),
           Map.entry("label", and(List.of("column", "pattern"), words(inText()))),
+          Map.entry("block", and(List.of("pattern"), words(inText()))),
+          Map.entry("sheet", and(List.of("pattern"), words(inText()))),
           Map.entry("file", and(List.of("pattern"), words(inText()))),
           Map.entry("words", List.of("over_range", "below_range", "missing")),
           Map.entry("roles", roles()),
@@ -69,15 +87,27 @@ final class MappingKeys {
 
   /** The facts that a label or a file name may hold. */
   static List<Fact> inText() {
-    return Arrays.stream(Fact.values()).filter(fact -> fact != Fact.SIGNAL).toList();
+    return Arrays.stream(Fact.values())
+        .filter(fact -> fact != Fact.SIGNAL && fact.kind() != Kind.SPREAD)
+        .toList();
   }
 
   /** The keys of a column or a group, by what the fact is. */
   static List<String> placeKeys(Fact fact, String place) {
-    if (fact.kind() == Kind.AMOUNT) {
+    if (fact.kind() == Kind.AMOUNT || fact == Fact.SIGNAL_SD) {
       return List.of(place, "unit");
     }
     return fact.kind() == Kind.TIME ? List.of(place, "format", "zone") : List.of(place);
+  }
+
+  /** The facts that a column beside another may hold. */
+  static List<Fact> beside() {
+    return Arrays.stream(Fact.values()).filter(fact -> fact != Fact.SIGNAL).toList();
+  }
+
+  /** The words of facts. */
+  static List<String> words(List<Fact> facts) {
+    return facts.stream().map(Fact::word).toList();
   }
 
   /** The key of a role under {@code [roles]}. */
@@ -91,10 +121,6 @@ final class MappingKeys {
 
   private static List<String> fixed() {
     return and(METHOD_IN_FIXED, words(fixable()));
-  }
-
-  private static List<String> words(List<Fact> facts) {
-    return facts.stream().map(Fact::word).toList();
   }
 
   private static List<String> and(List<String> some, List<String> more) {

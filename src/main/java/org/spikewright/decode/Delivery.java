@@ -4,22 +4,35 @@ import java.util.Optional;
 import org.spikewright.table.Cell;
 import org.spikewright.table.Row;
 import org.spikewright.table.RowSink;
+import org.spikewright.table.TableShape.EmptyRows;
+import org.spikewright.table.TextForm;
 
 /**
- * Hands rows on, but for rows in which nothing stands. Remembers where it was, and keeps what the
- * sink throws apart from what the file provokes.
+ * Hands rows on, mostly but for rows in which nothing stands. Remembers where it was, and keeps
+ * what the sink throws apart from what the file provokes.
  */
 final class Delivery implements RowSink {
   private final RowSink sink;
+  private final EmptyRows emptyRows;
   private Optional<Row> last = Optional.empty();
 
-  Delivery(RowSink sink) {
+  Delivery(RowSink sink, EmptyRows emptyRows) {
     this.sink = sink;
+    this.emptyRows = emptyRows;
+  }
+
+  @Override
+  public void begins(TextForm form) {
+    try {
+      sink.begins(form);
+    } catch (RuntimeException | StackOverflowError e) {
+      throw new SinkThrew(e);
+    }
   }
 
   @Override
   public boolean accept(Row row) {
-    if (nothingStandsIn(row)) {
+    if (emptyRows == EmptyRows.PASSED_OVER && nothingStandsIn(row)) {
       return true;
     }
     last = Optional.of(row);

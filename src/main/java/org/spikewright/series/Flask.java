@@ -1,10 +1,12 @@
 package org.spikewright.series;
 
+import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
+import org.spikewright.reading.Spread;
 
 /**
  * One flask of a series (in one vessel: its state after an addition), as the line sees it.
@@ -18,7 +20,7 @@ import org.spikewright.reading.Signal;
  * @param meanSignal mean of the readings that are numbers, after the baseline, before the volume
  *     factor; NaN when no reading is a number
  * @param replicateSd standard deviation of those readings; NaN with fewer than two
- * @param numbers how many readings are numbers
+ * @param numbers how many readings are numbers, those behind a mean counted each
  */
 public record Flask(
     String label,
@@ -31,17 +33,37 @@ public record Flask(
     double replicateSd,
     int numbers) {
 
+  /** A reading by itself does not scatter. */
+  private static final Spread SINGLE = new Spread(0, 1);
+
   /** A flask with the mean of its readings. */
   static Flask of(FlaskDraft draft, double x, double volumeFactor) {
     double baseline = draft.facts().blanks().baseline().orElse(0);
     double[] signals = new double[draft.readings().size()];
+    List<Spread> spreads = new ArrayList<>();
     int numbers = 0;
+    boolean means = false;
     for (Recorded recorded : draft.readings()) {
       if (recorded.reading().signal() instanceof Signal.Value signal) {
         signals[numbers++] = signal.value() - baseline;
+        spreads.add(signal.spread().orElse(SINGLE));
+        means |= signal.spread().isPresent();
       }
     }
     signals = Arrays.copyOf(signals, numbers);
+    if (means) {
+      Together together = Together.of(signals, spreads);
+      return new Flask(
+          draft.label(),
+          draft.facts(),
+          x,
+          volumeFactor,
+          draft.readings(),
+          draft.secondRun(),
+          together.mean(),
+          together.sd(),
+          together.readings());
+    }
     double mean = mean(signals);
     return new Flask(
         draft.label(),
@@ -53,6 +75,27 @@ public record Flask(
         mean,
         standardDeviation(signals, mean),
         numbers);
+  }
+
+  /** The readings behind means of several: what all of them together would have given. */
+  private record Together(double mean, double sd, int readings) {
+    static Together of(double[] means, List<Spread> spreads) {
+      int readings = 0;
+      double sum = 0;
+      for (int i = 0; i < means.length; i++) {
+        readings += spreads.get(i).readings();
+        sum += spreads.get(i).readings() * means[i];
+      }
+      double mean = means.length == 1 ? means[0] : sum / readings;
+      double squares = 0;
+      for (int i = 0; i < means.length; i++) {
+        Spread own = spreads.get(i);
+        squares += (own.readings() - 1) * own.sd() * own.sd();
+        squares += own.readings() * (means[i] - mean) * (means[i] - mean);
+      }
+      double sd = means.length == 1 ? spreads.get(0).sd() : Math.sqrt(squares / (readings - 1));
+      return new Together(mean, sd, readings);
+    }
   }
 
   private static double mean(double[] values) {
