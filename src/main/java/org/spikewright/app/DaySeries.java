@@ -8,15 +8,19 @@ import java.util.List;
 import java.util.NoSuchElementException;
 import java.util.Set;
 import org.spikewright.ledger.LedgerView;
+import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Subject;
 import org.spikewright.series.Gathered;
 import org.spikewright.series.Gathering;
 
 /**
- * The series of one lab day, gathered from the ledger subject by subject, so that no more than one
- * subject's readings are in memory. Walked again it gives the same, whatever arrived meanwhile.
+ * The series of one lab day, gathered from the ledger a few subjects at a time, so that no more
+ * than their readings are in memory. Walked again it gives the same, whatever arrived meanwhile.
  */
 final class DaySeries implements Iterable<Gathered> {
+  /** How many subjects' readings are asked for together. */
+  private static final int TOGETHER = 64;
+
   private final LedgerView ledger;
   private final Gathering gathering;
   private final LocalDate day;
@@ -49,16 +53,16 @@ final class DaySeries implements Iterable<Gathered> {
 
   @Override
   public Iterator<Gathered> iterator() {
-    Iterator<Subject> next = subjects.iterator();
     Deque<Gathered> ready = new ArrayDeque<>();
     return new Iterator<>() {
+      private int next;
+
       @Override
       public boolean hasNext() {
-        while (ready.isEmpty() && next.hasNext()) {
-          Subject subject = next.next();
-          gathering.gather(subject, ledger.readings(subject, day, upTo)).stream()
-              .filter(gathered -> gathered.key().labDay().equals(day))
-              .forEach(ready::add);
+        while (ready.isEmpty() && next < subjects.size()) {
+          int end = Math.min(subjects.size(), next + TOGETHER);
+          gather(subjects.subList(next, end), ready);
+          next = end;
         }
         return !ready.isEmpty();
       }
@@ -71,5 +75,16 @@ final class DaySeries implements Iterable<Gathered> {
         return ready.remove();
       }
     };
+  }
+
+  private void gather(List<Subject> some, Deque<Gathered> ready) {
+    List<List<Recorded>> readings = ledger.readings(some, day, upTo);
+    for (int i = 0; i < some.size(); i++) {
+      for (Gathered gathered : gathering.gather(some.get(i), readings.get(i))) {
+        if (gathered.key().labDay().equals(day)) {
+          ready.add(gathered);
+        }
+      }
+    }
   }
 }

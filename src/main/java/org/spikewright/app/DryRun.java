@@ -10,6 +10,9 @@ import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
 import java.util.TreeMap;
+import org.spikewright.analysis.Analysis;
+import org.spikewright.analysis.Fitted;
+import org.spikewright.analysis.Recall;
 import org.spikewright.config.Settings;
 import org.spikewright.decode.FileDecoder;
 import org.spikewright.judgement.Judge;
@@ -184,13 +187,15 @@ final class DryRun {
             "unit");
     int shown = 0;
     int without = 0;
-    for (Map.Entry<Subject, List<Recorded>> entry : bySubject.entrySet()) {
-      for (Gathered gathered : gathering.gather(entry.getKey(), newest(entry.getValue()))) {
-        Outcome outcome = judge.judge(gathered);
-        without += outcome.result().isEmpty() ? 1 : 0;
-        if (shown++ < SERIES_SHOWN || outcome.result().isEmpty()) {
-          table.add(line(outcome));
-        }
+    List<Gathered> gathered = new ArrayList<>();
+    bySubject.forEach(
+        (subject, found) -> gathered.addAll(gathering.gather(subject, newest(found))));
+    // An export alone: what earlier nights remember is the ledger's, which is not asked.
+    for (Outcome outcome :
+        Analysis.of(Fitted.each(gathered), judge, settings.criteria(), Recall.NOTHING)) {
+      without += outcome.result().isEmpty() ? 1 : 0;
+      if (shown++ < SERIES_SHOWN || outcome.result().isEmpty()) {
+        table.add(line(outcome));
       }
     }
     out.println();

@@ -5,7 +5,9 @@ final class ExitCode {
   /** Done, also when input was refused: the summary says so. */
   static final int DONE = 0;
 
-  /** Input was refused, where the command was asked to say so. */
+  /**
+   * Input was refused, where the command was asked to say so; or what was asked is not possible.
+   */
   static final int REFUSED = 1;
 
   /** The configuration or the command line is at fault. */

@@ -5,6 +5,7 @@ import java.nio.charset.StandardCharsets;
 import java.security.MessageDigest;
 import java.security.NoSuchAlgorithmException;
 import java.util.HexFormat;
+import java.util.List;
 import org.spikewright.reading.Recorded;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.series.Flask;
@@ -29,24 +30,27 @@ final class InputsHash {
     digest.update(settingsSha256.getBytes(StandardCharsets.UTF_8));
     if (gathered instanceof AdditionSeries series) {
       for (Flask flask : series.flasks()) {
-        flask.readings().forEach(recorded -> add(digest, recorded));
-        flask.secondRun().forEach(recorded -> add(digest, recorded));
+        add(digest, flask.readings());
+        add(digest, flask.secondRun());
       }
     } else {
-      ((Ungrouped) gathered).readings().forEach(recorded -> add(digest, recorded));
+      add(digest, ((Ungrouped) gathered).readings());
     }
     return HexFormat.of().formatHex(digest.digest());
   }
 
-  private static void add(MessageDigest digest, Recorded recorded) {
-    Position position = recorded.reading().position();
+  private static void add(MessageDigest digest, List<Recorded> readings) {
     ByteBuffer numbers = ByteBuffer.allocate(2 * Long.BYTES + Integer.BYTES);
-    numbers.putLong(recorded.arrival()).putLong(position.row()).putInt(position.column());
-    digest.update(numbers.array());
-    position
-        .source()
-        .sheet()
-        .ifPresent(sheet -> digest.update(sheet.getBytes(StandardCharsets.UTF_8)));
+    for (Recorded recorded : readings) {
+      Position position = recorded.reading().position();
+      numbers.putLong(0, recorded.arrival());
+      numbers.putLong(Long.BYTES, position.row());
+      numbers.putInt(2 * Long.BYTES, position.column());
+      digest.update(numbers.array());
+      if (position.source().sheet().isPresent()) {
+        digest.update(position.source().sheet().get().getBytes(StandardCharsets.UTF_8));
+      }
+    }
   }
 
   private static MessageDigest sha256() {

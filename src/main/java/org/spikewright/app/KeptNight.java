@@ -3,6 +3,7 @@ package org.spikewright.app;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import org.spikewright.analysis.NightEvidence;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.summary.ResultRow;
@@ -17,10 +18,16 @@ final class KeptNight {
    */
   private static final long BYTES_A_READING = 700;
 
-  private final long mostReadings = Runtime.getRuntime().maxMemory() / 2 / BYTES_A_READING;
+  private final long mostReadings = mostReadings();
   private List<Outcome> outcomes = new ArrayList<>();
   private List<ResultRow> rows = new ArrayList<>();
+  private NightEvidence evidence = NightEvidence.NONE;
   private long readings;
+
+  /** So many readings may stay in memory. */
+  static long mostReadings() {
+    return Runtime.getRuntime().maxMemory() / 2 / BYTES_A_READING;
+  }
 
   void add(Outcome outcome, ResultRow row) {
     readings += 1 + (outcome.gathered() instanceof AdditionSeries series ? series.readings() : 0);
@@ -33,10 +40,19 @@ final class KeptNight {
     }
   }
 
+  void knows(NightEvidence night) {
+    evidence = night;
+  }
+
+  /** What the night knows. */
+  NightEvidence evidence() {
+    return evidence;
+  }
+
   /** What was kept; empty when it was too much. */
   Optional<NightSource> source() {
     return readings <= mostReadings
-        ? Optional.of(NightSource.kept(outcomes, rows))
+        ? Optional.of(NightSource.kept(outcomes, rows, evidence))
         : Optional.empty();
   }
 }

@@ -21,12 +21,13 @@ import picocli.CommandLine.Spec;
       OnceCommand.class,
       TryCommand.class,
       ResultsCommand.class,
+      PlanCommand.class,
       DemoCommand.class
     },
     footer = {
       "",
       "Exit codes: 0 done, also when input was refused (the summary says so); 1 refused input",
-      "(try, once --strict); 2 configuration; 3 fault; 4 another process owns the ledger."
+      "(try, once --strict) or no plan (plan); 2 configuration; 3 fault; 4 another process owns the ledger."
     })
 public final class Main implements Runnable {
   private static final Logger LOG = LoggerFactory.getLogger(Main.class);

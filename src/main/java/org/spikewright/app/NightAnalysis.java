@@ -2,6 +2,9 @@ package org.spikewright.app;
 
 import java.time.Instant;
 import java.time.LocalDate;
+import org.spikewright.analysis.Analysis;
+import org.spikewright.analysis.Fitted;
+import org.spikewright.analysis.Recall;
 import org.spikewright.config.Settings;
 import org.spikewright.judgement.Judge;
 import org.spikewright.ledger.LedgerView;
@@ -22,5 +25,10 @@ final class NightAnalysis {
   /** The judge of a revision. */
   static Judge judge(Settings settings, Instant moment) {
     return new Judge(settings.criteria(), moment, settings.waitForFlasks());
+  }
+
+  /** The analysis of a revision's series. */
+  static Analysis of(Iterable<Fitted> series, Settings settings, Instant moment, Recall recall) {
+    return Analysis.of(series, judge(settings, moment), settings.criteria(), recall);
   }
 }

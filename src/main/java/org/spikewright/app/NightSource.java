@@ -5,6 +5,9 @@ import java.util.HashSet;
 import java.util.List;
 import java.util.Set;
 import org.spikewright.analysis.Analysis;
+import org.spikewright.analysis.Fitted;
+import org.spikewright.analysis.NightEvidence;
+import org.spikewright.analysis.Recall;
 import org.spikewright.config.Settings;
 import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
@@ -22,6 +25,7 @@ import org.spikewright.summary.ResultRow;
  * @param detailed of the series that the workbook shows flask by flask, by key
  * @param byKey the results by key
  * @param worstFirst the results that need a person first
+ * @param evidence what the night knows
  * @param inMemory whether it may be walked by several threads
  */
 record NightSource(
@@ -29,23 +33,34 @@ record NightSource(
     Iterable<Outcome> detailed,
     Iterable<ResultRow> byKey,
     Iterable<ResultRow> worstFirst,
+    NightEvidence evidence,
     boolean inMemory) {
 
   /** From what was judged a moment ago. */
-  static NightSource kept(List<Outcome> outcomes, List<ResultRow> rows) {
+  static NightSource kept(List<Outcome> outcomes, List<ResultRow> rows, NightEvidence evidence) {
     return new NightSource(
         outcomes,
         outcomes.stream().filter(o -> Night.isDetailed(rows.size(), o.verdict())).toList(),
         rows,
         rows.stream().sorted(ResultOrder.BY_SEVERITY.comparator()).toList(),
+        evidence,
         true);
   }
 
-  /** From the ledger, judged again: everything follows from what the revision fixed. */
+  /** From the ledger, looked at and judged again: everything follows from what it fixed. */
   static NightSource from(LedgerView ledger, Settings settings, RevisionRecord revision) {
+    Iterable<Fitted> series = Fitted.each(series(ledger, settings, revision));
+    Recall recall = ledger.recall(revision.labDay(), revision.inProgress());
+    Analysis analysis = NightAnalysis.of(series, settings, revision.moment(), recall);
+    return from(ledger, settings, revision, analysis.evidence());
+  }
+
+  /** From the ledger, judged again with what the night is known to know. */
+  static NightSource from(
+      LedgerView ledger, Settings settings, RevisionRecord revision, NightEvidence evidence) {
     LocalDate day = revision.labDay();
     Judge judge = NightAnalysis.judge(settings, revision.moment());
-    DaySeries series = NightAnalysis.series(ledger, settings, day, revision.arrivalLimit());
+    DaySeries series = series(ledger, settings, revision);
     Iterable<ResultRow> worstFirst =
         ledger.results(day, revision.revision(), ResultOrder.BY_SEVERITY);
     Set<Subject> detailed = new HashSet<>();
@@ -55,10 +70,15 @@ record NightSource(
       }
     }
     return new NightSource(
-        new Analysis(series, judge),
-        new Analysis(series.of(detailed), judge),
+        Analysis.with(Fitted.each(series), judge, evidence),
+        Analysis.with(Fitted.each(series.of(detailed)), judge, evidence),
         ledger.results(day, revision.revision(), ResultOrder.BY_KEY),
         worstFirst,
+        evidence,
         false);
+  }
+
+  private static DaySeries series(LedgerView ledger, Settings settings, RevisionRecord revision) {
+    return NightAnalysis.series(ledger, settings, revision.labDay(), revision.arrivalLimit());
   }
 }

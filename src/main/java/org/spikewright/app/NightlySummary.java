@@ -10,14 +10,14 @@ import java.util.Optional;
 import java.util.stream.Stream;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
+import org.spikewright.analysis.Analysis;
+import org.spikewright.analysis.Recall;
 import org.spikewright.config.Settings;
-import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.ledger.Ledger;
 import org.spikewright.ledger.RevisionRecord;
 import org.spikewright.ledger.RevisionStart;
 import org.spikewright.ledger.RevisionWriter;
-import org.spikewright.series.Gathered;
 import org.spikewright.summary.ResultRow;
 import org.spikewright.workbook.WriteFault;
 
@@ -101,7 +101,7 @@ final class NightlySummary {
     return Optional.of(
         source.isPresent()
             ? files.write(revision.get(), source.get())
-            : files.write(revision.get()));
+            : files.write(revision.get(), kept.evidence()));
   }
 
   /** Judges a lab day's series and records what is new; empty when nothing is, or at a stop. */
@@ -118,25 +118,34 @@ final class NightlySummary {
             settings.sha256(),
             settings.text(),
             Version.NUMBER);
-    Judge judge = NightAnalysis.judge(settings, start.moment());
     DaySeries series = NightAnalysis.series(ledger, settings, day, start.arrivalLimit());
+    Recall recall = ledger.recall(day, inProgress);
     try (RevisionWriter writer = ledger.startRevision(start);
-        Ahead<Gathered> gathered = new Ahead<>(series)) {
-      Optional<Instant> waitingUntil = Optional.empty();
-      long count = 0;
-      while (gathered.hasNext()) {
-        if (stop.isRequested()) {
-          return Optional.empty();
-        }
-        Outcome outcome = judge.judge(gathered.next());
-        ResultRow row = ResultRow.of(outcome);
-        writer.result(row, InputsHash.of(outcome.gathered(), settings.sha256()));
-        kept.add(outcome, row);
-        waitingUntil = earlier(waitingUntil, judge.waitingUntil(outcome.gathered()));
-        progress.at("judging series", ++count);
+        FittedDay fitted =
+            new FittedDay(series, stop, count -> progress.at("fitting series", count))) {
+      Analysis analysis = NightAnalysis.of(fitted, settings, start.moment(), recall);
+      if (recall.stored().isEmpty() && !inProgress) {
+        writer.pools(analysis.evidence(), analysis.toRemember());
       }
-      return writer.commit(waitingUntil);
+      Optional<Instant> waitingUntil = record(analysis, writer, kept);
+      return stop.isRequested() ? Optional.empty() : writer.commit(waitingUntil);
     }
+  }
+
+  /** Records what is judged and returns when the first waiting series has waited long enough. */
+  private Optional<Instant> record(Analysis analysis, RevisionWriter writer, KeptNight kept) {
+    String settings = station.settings().sha256();
+    Optional<Instant> waitingUntil = Optional.empty();
+    long count = 0;
+    for (Outcome outcome : analysis) {
+      ResultRow row = ResultRow.of(outcome);
+      writer.result(row, InputsHash.of(outcome.gathered(), settings));
+      kept.add(outcome, row);
+      waitingUntil = earlier(waitingUntil, outcome.waitingUntil());
+      progress.at("judging series", ++count);
+    }
+    kept.knows(analysis.evidence());
+    return waitingUntil;
   }
 
   private static Optional<Instant> earlier(Optional<Instant> one, Optional<Instant> other) {

@@ -122,6 +122,7 @@ final class Reception {
     try (Delivery delivery = station.ledger().receive(arriving);
         Handover sink = new Handover(delivery)) {
       RowMapper mapper = mapping.open(file.name(), sink);
+      String reading = "reading " + file.name() + ", row";
       Optional<DecodeFault> fault =
           FileDecoder.read(
               file.path(),
@@ -130,7 +131,7 @@ final class Reception {
               new RowSink() {
                 @Override
                 public boolean accept(Row row) {
-                  progress.at("reading " + file.name() + ", row", row.number());
+                  progress.at(reading, row.number());
                   return mapper.accept(row) && !stop.isRequested();
                 }
 

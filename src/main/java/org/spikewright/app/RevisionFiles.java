@@ -6,6 +6,7 @@ import java.util.concurrent.ExecutionException;
 import java.util.concurrent.FutureTask;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
+import org.spikewright.analysis.NightEvidence;
 import org.spikewright.config.Loaded;
 import org.spikewright.config.Settings;
 import org.spikewright.ledger.Ledger;
@@ -37,6 +38,10 @@ final class RevisionFiles {
   /** Writes the files from the ledger: after a crash, or for a night too large to be kept. */
   NightlySummary.Issued write(RevisionRecord revision) throws WriteFault {
     return write(revision, NightSource.from(ledger, settingsOf(revision), revision));
+  }
+
+  NightlySummary.Issued write(RevisionRecord revision, NightEvidence evidence) throws WriteFault {
+    return write(revision, NightSource.from(ledger, settingsOf(revision), revision, evidence));
   }
 
   NightlySummary.Issued write(RevisionRecord revision, NightSource source) throws WriteFault {

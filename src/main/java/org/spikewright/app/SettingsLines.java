@@ -30,10 +30,18 @@ final class SettingsLines {
     lines.add(
         new Setting(
             "Configuration", "Wait for missing flasks", words(settings.waitForFlasks()), FILE));
+    named(lines, "Named stocks", settings.shelf().stocks().size(), "table of stocks");
+    named(lines, "Named glassware", settings.shelf().glassware().size(), "table of glassware");
     for (Mapping mapping : mappings) {
       lines.add(new Setting("Mapping", mapping.name(), mapping.sha256(), "SHA-256 of its text"));
     }
     return lines;
+  }
+
+  private static void named(List<Setting> lines, String what, int count, String where) {
+    if (count > 0) {
+      lines.add(new Setting("Configuration", what, Integer.toString(count), where));
+    }
   }
 
   private static String words(Duration duration) {

@@ -43,7 +43,8 @@ record Station(
   /** Checks everything, then takes the ledger; every problem found is reported, not the first. */
   static Attempt open(Settings settings, Clock clock) {
     List<String> problems = new ArrayList<>();
-    MappingFolder mappings = MappingFolder.load(settings.mappings(), settings.calendar().zone());
+    MappingFolder mappings =
+        MappingFolder.load(settings.mappings(), settings.calendar().zone(), settings.shelf());
     if (!Files.isDirectory(settings.watch())) {
       problems.add(
           "the watched folder "

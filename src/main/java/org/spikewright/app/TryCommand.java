@@ -54,12 +54,14 @@ final class TryCommand implements Callable<Integer> {
     }
     String name = nameInside(settings.watch());
     if (mapping.isPresent()) {
-      Loaded<Mapping> loaded = MappingFile.load(mapping.get(), settings.calendar().zone());
+      Loaded<Mapping> loaded =
+          MappingFile.load(mapping.get(), settings.calendar().zone(), settings.shelf());
       return loaded instanceof Loaded.Good<Mapping> good
           ? dryRun(good.value(), name, settings)
           : faults(((Loaded.Faulty<Mapping>) loaded).faults());
     }
-    MappingFolder folder = MappingFolder.load(settings.mappings(), settings.calendar().zone());
+    MappingFolder folder =
+        MappingFolder.load(settings.mappings(), settings.calendar().zone(), settings.shelf());
     List<Mapping> claimants = folder.good().stream().filter(m -> m.claims(name)).toList();
     if (claimants.size() == 1) {
       return dryRun(claimants.get(0), name, settings);

@@ -11,11 +11,15 @@ import org.spikewright.mapping.Fact;
 import org.spikewright.mapping.Fact.Kind;
 import org.spikewright.mapping.Notation;
 import org.spikewright.mapping.PerAnalyte;
+import org.spikewright.mapping.Rejection;
+import org.spikewright.mapping.Spelling;
+import org.spikewright.mapping.StockReader;
 import org.spikewright.mapping.Understood;
 import org.spikewright.quantity.Measured;
 import org.spikewright.quantity.NumberGrammar;
 import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
+import org.spikewright.reading.Stock;
 import org.tomlj.TomlTable;
 
 /** Reads the facts in {@code [fixed]}, and whatever else is given once or for each analyte. */
@@ -23,18 +27,22 @@ final class FixedSection {
   private final Section section;
   private final Notation notation;
   private final Named named;
+  private final Map<String, Stock> known;
+  private final StockReader stockReader;
 
-  FixedSection(Section section, Notation notation, Named named) {
+  FixedSection(Section section, Notation notation, Named named, Map<String, Stock> stocks) {
     this.section = section;
     // In a mapping numbers have a decimal point, whatever the export uses.
     this.notation = notation.with(NumberGrammar.POINT);
     this.named = named;
+    this.known = stocks;
+    this.stockReader = new StockReader(stocks, this.notation);
   }
 
   Map<Fact, String> names() {
     Map<Fact, String> names = new EnumMap<>(Fact.class);
     for (Fact fact : MappingKeys.fixable()) {
-      if (fact.kind() == Kind.NAME && section.has(fact.word())) {
+      if (isName(fact) && section.has(fact.word())) {
         named.add(fact, section.at(fact.word()));
         section
             .text(fact.word(), fact.expectation())
@@ -47,13 +55,64 @@ final class FixedSection {
   Map<Fact, PerAnalyte<Measured>> amounts() {
     Map<Fact, PerAnalyte<Measured>> amounts = new EnumMap<>(Fact.class);
     for (Fact fact : MappingKeys.fixable()) {
-      if (fact.kind() != Kind.NAME && section.has(fact.word())) {
+      if (!isName(fact) && section.has(fact.word())) {
         named.add(fact, section.at(fact.word()));
         amounts.put(
-            fact, perAnalyte(section, fact.word(), (where, key) -> amount(where, key, fact)));
+            fact,
+            severalIn(fact)
+                .orElseGet(
+                    () ->
+                        perAnalyte(
+                            section, fact.word(), (where, key) -> amount(where, key, fact))));
       }
     }
     return amounts;
+  }
+
+  private static boolean isName(Fact fact) {
+    return fact.kind() == Kind.NAME || fact.kind() == Kind.TOOL;
+  }
+
+  /** The concentrations of one named stock that holds several analytes. */
+  private Optional<PerAnalyte<Measured>> severalIn(Fact fact) {
+    Optional<Stock> stock = fact == Fact.STOCK ? wholeStock() : Optional.empty();
+    return stock
+        .filter(one -> !one.each().isEmpty())
+        .map(
+            one -> {
+              one.each()
+                  .forEach(
+                      (analyte, value) ->
+                          named.unit(
+                              fact,
+                              new Named.Known(
+                                  value.quantity().unit(),
+                                  section.at(fact.word()),
+                                  Optional.of(analyte))));
+              return new PerAnalyte<>(one.all(), one.each());
+            });
+  }
+
+  private Optional<Stock> wholeStock() {
+    return section.value(Fact.STOCK.word()).orElse(null) instanceof String text
+        ? stockReader.named(text)
+        : Optional.empty();
+  }
+
+  /** The names of the stocks that have one. */
+  PerAnalyte<String> stocks() {
+    String key = Fact.STOCK.word();
+    if (section.value(key).orElse(null) instanceof TomlTable) {
+      Section analytes = section.openSection(key).orElseThrow();
+      Map<String, String> each = new HashMap<>();
+      for (String analyte : analytes.keys()) {
+        if (analytes.value(analyte).orElse(null) instanceof String text) {
+          stockReader.named(text).ifPresent(stock -> each.put(analyte.strip(), stock.name()));
+        }
+      }
+      return new PerAnalyte<>(Optional.empty(), each);
+    }
+    return new PerAnalyte<>(wholeStock().map(Stock::name), Map.of());
   }
 
   /** Something given once, or in a table with a key for each analyte. */
@@ -79,7 +138,12 @@ final class FixedSection {
       return Optional.empty();
     }
     if (read.get() instanceof Understood.Nothing<Measured> nothing) {
-      where.fault(key, "'" + nothing.found() + "' for " + where.named(key), nothing.expected());
+      String found = "'" + nothing.found() + "' for " + where.named(key);
+      Optional<String> near =
+          nothing.reason() == Rejection.Reason.NAME_UNKNOWN
+              ? Spelling.nearest(nothing.found(), known.keySet())
+              : Optional.empty();
+      section.faults().add(where.at(key), found, nothing.expected(), near);
       return Optional.empty();
     }
     Measured value = ((Understood.Value<Measured>) read.get()).value();
@@ -97,11 +161,14 @@ final class FixedSection {
             ? Optional.of(plain(number))
             : where.text(key, expected);
     Optional<Unit> unit = pure ? Optional.of(Unit.ONE) : Optional.empty();
+    String analyte = where == section ? "" : key.strip();
     return text.map(
         words ->
-            fact.kind() == Kind.DILUTION
-                ? new DilutionReader(notation).read(words)
-                : new AmountReader(notation).read(fact, words, unit));
+            switch (fact) {
+              case DILUTION -> new DilutionReader(notation).read(words);
+              case STOCK -> stockReader.read(words, unit, analyte);
+              default -> new AmountReader(notation).read(fact, words, unit);
+            });
   }
 
   private static String plain(Number number) {

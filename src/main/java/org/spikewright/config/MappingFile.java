@@ -10,33 +10,51 @@ import org.spikewright.mapping.Mapping;
 import org.spikewright.mapping.MethodRule;
 import org.spikewright.mapping.Notation;
 import org.spikewright.mapping.PathPattern;
+import org.spikewright.mapping.PerAnalyte;
 import org.spikewright.mapping.Places;
 import org.spikewright.mapping.RowRules;
+import org.spikewright.reading.Shelf;
 
 /** Reads one mapping. */
 public final class MappingFile {
   private MappingFile() {}
 
+  /** Reads a mapping file of a laboratory where neither stocks nor glassware have names. */
+  public static Loaded<Mapping> load(Path file, ZoneId defaultZone) {
+    return load(file, defaultZone, Shelf.EMPTY);
+  }
+
   /**
    * Reads a mapping file.
    *
    * @param defaultZone of times without an offset, where the mapping names no zone
+   * @param shelf the stocks and the glassware that it may name
    */
-  public static Loaded<Mapping> load(Path file, ZoneId defaultZone) {
+  public static Loaded<Mapping> load(Path file, ZoneId defaultZone, Shelf shelf) {
     Faults faults = new Faults(shown(file));
     Optional<TomlText> text = TomlText.read(file, faults);
     return text.isPresent()
-        ? read(file, text.get(), defaultZone, faults)
+        ? read(file, text.get(), new Around(defaultZone, shelf), faults)
         : new Loaded.Faulty<>(file, faults.inOrder());
+  }
+
+  /** What a mapping is read against. */
+  private record Around(ZoneId zone, Shelf shelf) {}
+
+  /** As {@link #read(Path, String, ZoneId, Shelf)} where nothing on the shelf has a name. */
+  public static Loaded<Mapping> read(Path file, String text, ZoneId defaultZone) {
+    return read(file, text, defaultZone, Shelf.EMPTY);
   }
 
   /**
    * Reads a mapping's text.
    *
    * @param file where it stands or would stand, for messages
+   * @param shelf the stocks and the glassware that it may name
    */
-  public static Loaded<Mapping> read(Path file, String text, ZoneId defaultZone) {
-    return read(file, TomlText.of(text), defaultZone, new Faults(shown(file)));
+  public static Loaded<Mapping> read(Path file, String text, ZoneId defaultZone, Shelf shelf) {
+    Around around = new Around(defaultZone, shelf);
+    return read(file, TomlText.of(text), around, new Faults(shown(file)));
   }
 
   private static String shown(Path file) {
@@ -44,28 +62,31 @@ public final class MappingFile {
     return name == null ? file.toString() : name.toString();
   }
 
-  private static Loaded<Mapping> read(Path file, TomlText text, ZoneId defaultZone, Faults faults) {
+  private static Loaded<Mapping> read(Path file, TomlText text, Around around, Faults faults) {
     Section root = Section.of(text.parse(faults), "", At.START, MappingKeys.KEYS.get(""), faults);
-    Mapping mapping = mapping(root, text, defaultZone);
+    Mapping mapping = mapping(root, text, around);
     return faults.isEmpty()
         ? new Loaded.Good<>(mapping)
         : new Loaded.Faulty<>(file, faults.inOrder());
   }
 
   /** The mapping; where a fault was found, some of its values only stand in. */
-  private static Mapping mapping(Section root, TomlText text, ZoneId defaultZone) {
+  private static Mapping mapping(Section root, TomlText text, Around around) {
     String name = required(root, "name", "the mapping's name");
     TableSection table = TableSection.read(root.section("table", MappingKeys.KEYS.get("table")));
     Notation notation =
         UnitsSection.read(root.section("units", MappingKeys.KEYS.get("units")), table.numbers());
     Named named = new Named();
     Optional<Section> fixed = root.section("fixed", MappingKeys.KEYS.get("fixed"));
-    PlacesSection reader = new PlacesSection(notation, defaultZone, named);
+    PlacesSection reader = new PlacesSection(notation, around.zone(), named);
     LayoutSection.Layout layout = LayoutSection.read(root, reader, named);
-    Places places = places(root, fixed, reader, notation, named, layout.groups());
+    Optional<FixedSection> fixedReader =
+        fixed.map(section -> new FixedSection(section, notation, named, around.shelf().stocks()));
+    Places places = places(root, fixedReader, reader, layout.groups());
     RowRules rows = RowsSection.rules(root, fixed, table.extraCells());
     MethodRule method = new MethodSection(root, fixed, notation).rule(name);
     new MappingCheck(root, named, method, places).check();
+    new ToolCheck(root, named, places, around.shelf().glassware()).check();
     return new Mapping(
         name,
         root.text("instrument", "the instrument's name").map(String::strip).orElse(name),
@@ -79,7 +100,8 @@ public final class MappingFile {
         places,
         RowsSection.words(root.section("words", MappingKeys.KEYS.get("words"))),
         rows,
-        method);
+        method,
+        around.shelf());
   }
 
   private static String required(Section root, String key, String expected) {
@@ -91,14 +113,10 @@ public final class MappingFile {
 
   private static Places places(
       Section root,
-      Optional<Section> fixed,
+      Optional<FixedSection> fixed,
       PlacesSection reader,
-      Notation notation,
-      Named named,
       Map<Fact, Places.Group> headers) {
     Optional<Section> columns = root.section("columns", MappingKeys.KEYS.get("columns"));
-    Optional<FixedSection> fixedReader =
-        fixed.map(section -> new FixedSection(section, notation, named));
     return new Places(
         columns.map(reader::columns).orElse(Map.of()),
         reader.labels(root.sections("label", MappingKeys.KEYS.get("label"))),
@@ -106,8 +124,9 @@ public final class MappingFile {
         reader.name(root.section("block", MappingKeys.KEYS.get("block"))),
         reader.name(root.section("sheet", MappingKeys.KEYS.get("sheet"))),
         reader.name(root.section("file", MappingKeys.KEYS.get("file"))),
-        fixedReader.map(FixedSection::names).orElse(Map.of()),
-        fixedReader.map(FixedSection::amounts).orElse(Map.of()));
+        fixed.map(FixedSection::names).orElse(Map.of()),
+        fixed.map(FixedSection::amounts).orElse(Map.of()),
+        fixed.map(FixedSection::stocks).orElse(PerAnalyte.none()));
   }
 
   private static List<PathPattern> files(Section root) {

@@ -12,6 +12,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import org.spikewright.mapping.Mapping;
+import org.spikewright.reading.Shelf;
 import org.tomlj.Toml;
 
 /**
@@ -26,13 +27,19 @@ public record MappingFolder(List<Loaded<Mapping>> loaded) {
     loaded = List.copyOf(loaded);
   }
 
+  /** Reads the mappings of a laboratory where neither stocks nor glassware have names. */
+  public static MappingFolder load(Path folder, ZoneId defaultZone) {
+    return load(folder, defaultZone, Shelf.EMPTY);
+  }
+
   /**
    * Reads every mapping of a folder. A name that an earlier file bears makes the later one faulty;
    * a folder that cannot be listed is itself a faulty entry.
    *
    * @param defaultZone of times without an offset, where a mapping names no zone
+   * @param shelf the stocks and the glassware that mappings may name
    */
-  public static MappingFolder load(Path folder, ZoneId defaultZone) {
+  public static MappingFolder load(Path folder, ZoneId defaultZone, Shelf shelf) {
     List<Path> files = new ArrayList<>();
     try (DirectoryStream<Path> entries = Files.newDirectoryStream(folder)) {
       entries.forEach(files::add);
@@ -52,7 +59,7 @@ public record MappingFolder(List<Loaded<Mapping>> loaded) {
         files.stream()
             .filter(MappingFolder::isMapping)
             .sorted(Comparator.comparing(file -> file.getFileName().toString()))
-            .map(file -> unlessTaken(file, MappingFile.load(file, defaultZone), names))
+            .map(file -> unlessTaken(file, MappingFile.load(file, defaultZone, shelf), names))
             .toList();
     return new MappingFolder(loaded);
   }

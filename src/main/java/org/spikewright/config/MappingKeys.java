@@ -17,13 +17,21 @@ final class MappingKeys {
       List.of(
           Fact.SIGNAL,
           Fact.SIGNAL_SD,
+          Fact.INTERNAL_STANDARD,
           Fact.MEASURED_AT,
           Fact.FLASK,
           Fact.INSTRUMENT,
           Fact.RESULT_UNIT);
 
   static final List<String> METHOD_IN_FIXED =
-      List.of("design", "additions", "addition_terms", "flasks", "role");
+      List.of(
+          "design",
+          "additions",
+          "addition_terms",
+          "flasks",
+          "role",
+          "signal_unit",
+          "internal_standard_given");
 
   /** By section; the file itself is the section with the empty name. */
   static final Map<String, List<String>> KEYS =
@@ -78,7 +86,21 @@ final class MappingKeys {
           Map.entry("result", List.of("unit")),
           Map.entry(
               "method",
-              List.of("trusted_signal", "reporting_limit", "target_uncertainty", "unit")));
+              List.of(
+                  "trusted_signal",
+                  "reporting_limit",
+                  "target_uncertainty",
+                  "unit",
+                  "charge",
+                  "slope",
+                  "temperature",
+                  "interval",
+                  "weights",
+                  "bend",
+                  "correct_drift",
+                  "working_range",
+                  "bend_allowance",
+                  "blank_due")));
 
   /** The facts that {@code [fixed]} may hold. */
   static List<Fact> fixable() {
@@ -88,7 +110,7 @@ final class MappingKeys {
   /** The facts that a label or a file name may hold. */
   static List<Fact> inText() {
     return Arrays.stream(Fact.values())
-        .filter(fact -> fact != Fact.SIGNAL && fact.kind() != Kind.SPREAD)
+        .filter(fact -> fact.kind() != Kind.SIGNAL && fact.kind() != Kind.SPREAD)
         .toList();
   }
 

@@ -14,6 +14,7 @@ import org.spikewright.quantity.Measured;
 import org.spikewright.quantity.NumberGrammar;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Addition;
+import org.spikewright.reading.Calculation;
 import org.spikewright.reading.Design;
 
 /** Reads {@code [result]}, {@code [method]} and the design in {@code [fixed]}. */
@@ -48,7 +49,14 @@ final class MethodSection {
         method.flatMap(section -> section.oneOf("unit", POINTS)).orElse(false),
         method.map(this::trustedSignal).orElse(PerAnalyte.none()),
         method.map(this::reportingLimit).orElse(PerAnalyte.none()),
-        method.map(MethodSection::targetUncertainty).orElse(OptionalDouble.empty()));
+        method.map(MethodSection::targetUncertainty).orElse(OptionalDouble.empty()),
+        method
+            .map(section -> new CalculationKeys(section, notation).workingRange())
+            .orElse(PerAnalyte.none()),
+        method.map(CalculationKeys::bendAllowance).orElse(OptionalDouble.empty()),
+        method.flatMap(section -> section.yesOrNo("blank_due")).orElse(false),
+        method.map(CalculationKeys::calculation).orElse(Calculation.DEFAULT),
+        SignalSection.rule(fixed, method, notation));
   }
 
   private Design design() {
@@ -102,7 +110,8 @@ final class MethodSection {
         text.map(words -> new AmountReader(notation).read(Fact.ADDITION, words, Optional.empty()));
     if (read.isPresent()
         && read.get() instanceof Understood.Value<Measured> value
-        && value.value().quantity().value() > 0) {
+        && value.value().quantity().value() > 0
+        && value.value().tolerance().isEmpty()) {
       return Optional.of(value.value());
     }
     text.ifPresent(words -> where.fault(key, "'" + words + "' for " + where.named(key), expected));

@@ -5,6 +5,7 @@ import java.time.Duration;
 import java.time.LocalTime;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.reading.LabCalendar;
+import org.spikewright.reading.Shelf;
 
 /**
  * The configuration of one laboratory.
@@ -22,8 +23,11 @@ import org.spikewright.reading.LabCalendar;
  * @param longestPause longest pause between readings of one series
  * @param waitForFlasks how long a series short of its flasks is waited for
  * @param criteria the limits of judgement
- * @param sha256 of the file's bytes, in hexadecimal
- * @param text the file's text
+ * @param shelf the stocks and the glassware that mappings may name
+ * @param sha256 in hexadecimal, of the file's bytes; with tables of stocks or glassware, of {@code
+ *     text}
+ * @param text the file's text; with tables of stocks or glassware the texts of all, one after the
+ *     other, which {@link #read} takes apart again
  */
 public record Settings(
     Path watch,
@@ -39,16 +43,18 @@ public record Settings(
     Duration longestPause,
     Duration waitForFlasks,
     CriteriaBook criteria,
+    Shelf shelf,
     String sha256,
     String text) {
 
-  /** Reads a configuration file. */
+  /** Reads a configuration file, and the tables of stocks and glassware beside it. */
   public static Loaded<Settings> load(Path file) {
     return SettingsFile.load(file);
   }
 
   /**
-   * Reads a configuration's text.
+   * Reads a configuration's text, and the tables of stocks and glassware where they stand in it. No
+   * file is read.
    *
    * @param file where it stands or would stand; paths are relative to its folder
    */

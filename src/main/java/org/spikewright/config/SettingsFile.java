@@ -1,5 +1,6 @@
 package org.spikewright.config;
 
+import java.nio.file.Files;
 import java.nio.file.InvalidPathException;
 import java.nio.file.Path;
 import java.time.DateTimeException;
@@ -7,11 +8,14 @@ import java.time.Duration;
 import java.time.LocalTime;
 import java.time.ZoneId;
 import java.time.ZoneOffset;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import org.spikewright.judgement.CriteriaBook;
+import org.spikewright.judgement.RepeatCaps;
 import org.spikewright.reading.LabCalendar;
+import org.spikewright.reading.Shelf;
 
 /** Reads the configuration file. */
 final class SettingsFile {
@@ -21,50 +25,94 @@ final class SettingsFile {
    */
   static final Map<String, List<String>> KEYS =
       Map.of(
-          "", List.of("folders", "laboratory", "schedule", "series", "criteria"),
-          "folders", List.of("watch", "mappings", "summaries", "ledger", "leave"),
+          "", List.of("folders", "laboratory", "schedule", "series", "criteria", "repeat"),
+          "folders",
+              List.of("watch", "mappings", "summaries", "ledger", "leave", "stocks", "glassware"),
           "laboratory", List.of("name", "zone", "day_begins"),
           "schedule", List.of("nightly", "look_every", "settle"),
           "series", List.of("longest_pause", "wait_for_flasks"),
-          "criteria", CriteriaSection.KEYS);
+          "criteria", CriteriaSection.KEYS,
+          "repeat", RepeatSection.KEYS);
 
   private final Path file;
   private final Faults faults;
   private final Section root;
+  private final Optional<Section> folders;
 
   private SettingsFile(Path file, Section root, Faults faults) {
     this.file = file;
     this.root = root;
     this.faults = faults;
+    this.folders = root.section("folders", KEYS.get("folders"));
   }
 
   static Loaded<Settings> load(Path file) {
     Faults faults = new Faults(file.toString());
     Optional<TomlText> text = TomlText.read(file, faults);
-    return text.isPresent()
-        ? read(file, text.get(), faults)
-        : new Loaded.Faulty<>(file, faults.inOrder());
+    if (text.isEmpty()) {
+      return new Loaded.Faulty<>(file, faults.inOrder());
+    }
+    SettingsFile reader = of(file, text.get(), faults);
+    ShelfReader shelf = new ShelfReader();
+    Optional<TomlText> stocks = reader.table(ShelfReader.STOCKS, shelf);
+    Optional<TomlText> glassware = reader.table(ShelfReader.GLASSWARE, shelf);
+    return reader.loaded(new SettingsText(text.get(), stocks, glassware), shelf);
   }
 
   static Loaded<Settings> read(Path file, String text) {
-    return read(file, TomlText.of(text), new Faults(file.toString()));
+    SettingsText parts = SettingsText.of(text);
+    SettingsFile reader = of(file, parts.main(), new Faults(file.toString()));
+    reader.tableFile(ShelfReader.STOCKS);
+    reader.tableFile(ShelfReader.GLASSWARE);
+    return reader.loaded(parts, new ShelfReader());
   }
 
-  private static Loaded<Settings> read(Path file, TomlText text, Faults faults) {
+  private static SettingsFile of(Path file, TomlText text, Faults faults) {
+    SettingsText.refuseMarks(text, faults);
     Section root = Section.of(text.parse(faults), "", At.START, KEYS.get(""), faults);
-    Settings settings = new SettingsFile(file, root, faults).settings(text);
-    return faults.isEmpty()
-        ? new Loaded.Good<>(settings)
-        : new Loaded.Faulty<>(file, faults.inOrder());
+    return new SettingsFile(file, root, faults);
+  }
+
+  private Loaded<Settings> loaded(SettingsText text, ShelfReader reader) {
+    Settings settings = settings(text.joined(), reader.read(text));
+    List<ConfigFault> all = new ArrayList<>(faults.inOrder());
+    all.addAll(reader.faults());
+    return all.isEmpty() ? new Loaded.Good<>(settings) : new Loaded.Faulty<>(file, all);
+  }
+
+  /** The table that a key names, which must be there, or the one of its usual name if it is. */
+  private Optional<TomlText> table(String key, ShelfReader reader) {
+    Optional<Path> path = tableFile(key);
+    if (path.isPresent() && !Files.isRegularFile(path.get())) {
+      if (folders.isPresent() && folders.get().has(key)) {
+        String found = key + " '" + folders.get().value(key).orElse("") + "', which is not there";
+        folders.get().fault(key, found, "a file, or no " + key + " in [folders]");
+      }
+      return Optional.empty();
+    }
+    return path.flatMap(there -> reader.text(key, there));
+  }
+
+  /** Where a table lies or would lie; empty after a fault. */
+  private Optional<Path> tableFile(String key) {
+    if (folders.isEmpty() || !folders.get().has(key)) {
+      return Optional.of(base().resolve(key + ".toml"));
+    }
+    String expected = "a file, relative to this file's folder";
+    try {
+      return folders.get().text(key, expected).map(this::resolved);
+    } catch (InvalidPathException e) {
+      folders.get().fault(key, "'" + e.getInput() + "'", expected);
+      return Optional.empty();
+    }
   }
 
   /** The settings; where a fault was found, some of its values only stand in. */
-  private Settings settings(TomlText text) {
-    Optional<Section> folders = root.section("folders", KEYS.get("folders"));
-    Path watch = path(folders, "watch");
-    Path mappings = path(folders, "mappings");
-    Path summaries = path(folders, "summaries");
-    Path ledger = path(folders, "ledger");
+  private Settings settings(TomlText text, Shelf shelf) {
+    Path watch = path("watch");
+    Path mappings = path("mappings");
+    Path summaries = path("summaries");
+    Path ledger = path("ledger");
     for (String key : List.of("mappings", "summaries", "ledger")) {
       folders.ifPresent(section -> refuseInside(section, key, watch));
     }
@@ -86,12 +134,17 @@ final class SettingsFile {
         duration(series, "wait_for_flasks", Duration.ofHours(12), Duration.ZERO),
         root.section("criteria", KEYS.get("criteria"))
             .map(CriteriaSection::book)
-            .orElseGet(CriteriaBook::defaults),
+            .orElseGet(CriteriaBook::defaults)
+            .with(
+                root.section("repeat", KEYS.get("repeat"))
+                    .map(RepeatSection::caps)
+                    .orElse(RepeatCaps.DEFAULTS)),
+        shelf,
         text.sha256(),
         text.text());
   }
 
-  private Path path(Optional<Section> folders, String key) {
+  private Path path(String key) {
     String expected = "a path, relative to this file's folder";
     if (folders.isEmpty() || !folders.get().has(key)) {
       faults.missing(folders.map(Section::at).orElse(At.START), "[folders]", key, expected);

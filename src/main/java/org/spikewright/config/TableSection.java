@@ -129,7 +129,7 @@ record TableSection(
     String expected = "words of [columns], such as [\"sample\"]";
     List<String> possible =
         places.columns().keySet().stream()
-            .filter(fact -> fact != Fact.SIGNAL && fact != Fact.SIGNAL_SD)
+            .filter(TableSection::mayCarryDown)
             .map(Fact::word)
             .sorted()
             .toList();
@@ -138,10 +138,7 @@ record TableSection(
       Optional<Fact> fact = Fact.of(word);
       if (possible.contains(word)) {
         facts.add(fact.get());
-      } else if (fact.isEmpty()
-          || !root.has("columns", word)
-          || fact.get() == Fact.SIGNAL
-          || fact.get() == Fact.SIGNAL_SD) {
+      } else if (fact.isEmpty() || !root.has("columns", word) || !mayCarryDown(fact.get())) {
         section
             .faults()
             .add(
@@ -152,6 +149,11 @@ record TableSection(
       }
     }
     return facts;
+  }
+
+  /** What the instrument said in one row it did not say in the next. */
+  private static boolean mayCarryDown(Fact fact) {
+    return fact.kind() != Fact.Kind.SIGNAL && fact != Fact.SIGNAL_SD;
   }
 
   private static List<SheetRule> sheets(Section section) {

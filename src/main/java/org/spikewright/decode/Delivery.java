@@ -1,7 +1,5 @@
 package org.spikewright.decode;
 
-import java.util.Optional;
-import org.spikewright.table.Cell;
 import org.spikewright.table.Row;
 import org.spikewright.table.RowSink;
 import org.spikewright.table.TableShape.EmptyRows;
@@ -14,7 +12,7 @@ import org.spikewright.table.TextForm;
 final class Delivery implements RowSink {
   private final RowSink sink;
   private final EmptyRows emptyRows;
-  private Optional<Row> last = Optional.empty();
+  private Row last;
 
   Delivery(RowSink sink, EmptyRows emptyRows) {
     this.sink = sink;
@@ -32,10 +30,10 @@ final class Delivery implements RowSink {
 
   @Override
   public boolean accept(Row row) {
-    if (emptyRows == EmptyRows.PASSED_OVER && nothingStandsIn(row)) {
+    if (emptyRows == EmptyRows.PASSED_OVER && row.isBlank()) {
       return true;
     }
-    last = Optional.of(row);
+    last = row;
     try {
       return sink.accept(row);
     } catch (RuntimeException | StackOverflowError e) {
@@ -45,16 +43,7 @@ final class Delivery implements RowSink {
 
   /** Where the file broke, as near as the rows handed on tell: {@code after line 12}. */
   String place() {
-    return last.map(row -> "after " + row.position().within()).orElse("the file");
-  }
-
-  private static boolean nothingStandsIn(Row row) {
-    for (Cell cell : row.cells()) {
-      if (!cell.isBlank()) {
-        return false;
-      }
-    }
-    return true;
+    return last == null ? "the file" : "after " + last.position().within();
   }
 
   /** Carries what the sink threw past the place that catches. */

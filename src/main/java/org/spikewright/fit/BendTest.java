@@ -10,13 +10,26 @@ import java.util.OptionalDouble;
  * <p>Source: Mandel, The Statistical Analysis of Experimental Data (1964); ISO 8466-1.
  *
  * @param t the quadratic coefficient over its standard error; below 0 for saturation
- * @param df degrees of freedom, above 0
+ * @param df degrees of freedom, above 0; infinite when the variance is known
  * @param pOneSided probability of a t this low or lower on a straight line
  * @param pTwoSided probability of a t this far from 0; Mandel's p
- * @param nativeConcentration from the bent line, in axis units; empty when it does not reach zero
+ * @param nativeConcentration from the bent line; empty when it does not reach zero
  */
 public record BendTest(
     double t, double df, double pOneSided, double pTwoSided, OptionalDouble nativeConcentration) {
+
+  /** Which bends are looked for. */
+  public enum Side {
+    /** Saturation alone: the signal falls behind. */
+    SATURATION,
+    /** Any bend. */
+    EITHER
+  }
+
+  /** The probability that belongs to the bends looked for. */
+  public double p(Side side) {
+    return side == Side.SATURATION ? pOneSided : pTwoSided;
+  }
 
   /**
    * The test with the parabola's own residual variance. A scatter below the last digits of the
@@ -27,16 +40,28 @@ public record BendTest(
    * @return empty without degrees of freedom, or when all signals are 0
    */
   public static Optional<BendTest> of(StraightLine line) {
-    return QuadraticFit.of(line).flatMap(BendTest::of);
+    Optional<QuadraticFit> parabola = QuadraticFit.of(line).filter(fit -> fit.residualDf() > 0);
+    return parabola.flatMap(fit -> of(fit, fit.c2StandardError().orElseThrow(), fit.residualDf()));
   }
 
-  private static Optional<BendTest> of(QuadraticFit parabola) {
-    double se = parabola.c2StandardError().orElse(0);
+  /**
+   * The test with a variance from elsewhere, as a pool lends it.
+   *
+   * @param line through three or more distinct x
+   * @param variance of a flask of weight 1 about its parabola, in signal units squared; below the
+   *     last digits of the numbers it counts as those digits
+   * @return empty with two distinct x, or when all signals are 0
+   */
+  public static Optional<BendTest> of(StraightLine line, Variance variance) {
+    double sd = Math.max(variance.sd(), line.rounding());
+    return QuadraticFit.of(line).flatMap(fit -> of(fit, sd * fit.c2PerSd(), variance.df()));
+  }
+
+  private static Optional<BendTest> of(QuadraticFit parabola, double se, double df) {
     double t = parabola.c2() / se;
     if (!(se > 0) || !Double.isFinite(t)) {
       return Optional.empty();
     }
-    int df = parabola.residualDf();
     return Optional.of(
         new BendTest(
             t,

@@ -1,6 +1,7 @@
 package org.spikewright.fit;
 
 import java.util.Optional;
+import java.util.function.Function;
 
 /**
  * How far a point lies from the line through the others: the externally studentised residual.
@@ -8,9 +9,9 @@ import java.util.Optional;
  * <p>Source: Cook and Weisberg, Residuals and Influence in Regression (1982), ch. 2.
  *
  * @param t residual over its standard deviation estimated without the point
- * @param df degrees of freedom, n − 3
+ * @param df degrees of freedom: n − 3, more with a lent variance, then infinite at most
  * @param p two-sided probability for this one point, not corrected for the choice among n
- * @param without the line through the other points
+ * @param without the line through the other points, their weights as in the whole line
  */
 public record DeletedResidual(double t, double df, double p, StraightLine without) {
 
@@ -26,19 +27,40 @@ public record DeletedResidual(double t, double df, double p, StraightLine withou
    *     there, or when all signals are 0 and there is no floor
    */
   public static Optional<DeletedResidual> of(StraightLine line, int i, double floor) {
-    int df = line.n() - 3;
-    if (df < 1) {
+    return of(line, i, floor, DeletedResidual::own);
+  }
+
+  private static Variance own(StraightLine without) {
+    int df = without.residualDf();
+    return new Variance(without.residualSumOfSquares() / df, df);
+  }
+
+  /**
+   * The same with a variance from elsewhere, as a pool lends it.
+   *
+   * @param lent the variance of a flask of weight 1 for the line through the other points, in
+   *     signal units squared
+   * @return empty as above
+   */
+  static Optional<DeletedResidual> of(
+      StraightLine line, int i, double floor, Function<StraightLine, Variance> lent) {
+    if (line.n() < 4) {
       return Optional.empty();
     }
-    LineOutcome others = StraightLine.fit(without(line.x(), i), without(line.y(), i));
+    double[] weights = without(line.weights(), i);
+    LineOutcome others =
+        StraightLine.asWeighted(without(line.x(), i), without(line.y(), i), weights);
     if (!(others instanceof StraightLine without)) {
       return Optional.empty();
     }
-    double own = Math.max(without.residualSd().orElse(0), line.rounding());
+    Variance variance = lent.apply(without);
+    double sd = Math.max(Math.max(floor, variance.sd()), line.rounding());
     double u = line.x()[i] - without.xMean();
     // The same number as residual over s·√(1 − leverage), without the differences of near equals.
-    double spread = Math.sqrt(1 + 1.0 / without.n() + u / without.sxx() * u);
-    double t = (line.y()[i] - without.at(line.x()[i])) / (Math.max(floor, own) * spread);
+    double spread =
+        Math.sqrt(1 / line.weights()[i] + 1.0 / without.weight() + u / without.sxx() * u);
+    double t = (line.y()[i] - without.at(line.x()[i])) / (sd * spread);
+    double df = variance.df();
     return Double.isFinite(t)
         ? Optional.of(new DeletedResidual(t, df, StudentT.twoSided(t, df), without))
         : Optional.empty();

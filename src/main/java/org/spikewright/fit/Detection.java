@@ -29,12 +29,12 @@ public record Detection(double standardErrorAtZero, double criticalValue, double
    *
    * @param line one that has a {@link NativeEstimate} with this standard deviation; the result is
    *     finite then
-   * @param sd standard deviation of one flask, in signal units
+   * @param sd standard deviation of one flask (of weight 1), in signal units
    */
   public static double standardErrorAtZero(StraightLine line, double sd) {
     return sd
         / Math.abs(line.slope())
-        * Math.sqrt(1.0 / line.n() + line.xMean() * line.xMean() / line.sxx());
+        * Math.sqrt(1.0 / line.weight() + line.xMean() * line.xMean() / line.sxx());
   }
 
   /**

@@ -49,10 +49,11 @@ public record NativeEstimate(
    *
    * <p>Standard error by the delta method, (s/b)·√(1/n + ȳ²/(b²·S_xx)): Danzer and Currie, Pure
    * Appl. Chem. 70 (1998) 993. Interval: Fieller, J. R. Stat. Soc. B 16 (1954) 175, for the
-   * quotient ȳ/b, whose parts are uncorrelated, less x̄.
+   * quotient ȳ/b, whose parts are uncorrelated, less x̄. On a weighted line the sum of the weights
+   * stands for n, and means and S_xx are weighted.
    *
    * @param line any line
-   * @param sd standard deviation of one flask, in signal units, 0 or more
+   * @param sd standard deviation of one flask (of weight 1), in signal units, 0 or more
    * @param df its degrees of freedom, above 0, infinite when it is known
    * @return empty when the slope is 0 or so near to it that no number holds the quotient
    * @throws IllegalArgumentException when sd or df is out of range
@@ -64,14 +65,15 @@ public record NativeEstimate(
     double b = line.slope();
     double centre = line.yMean() / b;
     double value = quotient(line);
-    double se = sd / Math.abs(b) * Math.sqrt(1.0 / line.n() + centre * centre / line.sxx());
+    double se = sd / Math.abs(b) * Math.sqrt(1.0 / line.weight() + centre * centre / line.sxx());
     double t = StudentT.quantile(0.975, df);
     double ratio = t * sd / b;
     double g = ratio * ratio / line.sxx();
     OptionalDouble lower = OptionalDouble.empty();
     OptionalDouble upper = OptionalDouble.empty();
     if (g < 1) {
-      double half = Math.abs(ratio) * Math.sqrt((1 - g) / line.n() + centre * centre / line.sxx());
+      double half =
+          Math.abs(ratio) * Math.sqrt((1 - g) / line.weight() + centre * centre / line.sxx());
       // The ends hold the value also where rounding is all that parts them.
       lower = OptionalDouble.of(Math.min(value, (centre - half) / (1 - g) - line.xMean()));
       upper = OptionalDouble.of(Math.max(value, (centre + half) / (1 - g) - line.xMean()));

@@ -17,6 +17,8 @@ import java.util.OptionalDouble;
  *     bend that is only arithmetic
  * @param c1StandardError likewise
  * @param c2StandardError likewise
+ * @param c2PerSd standard error of c2 for each unit of a flask's standard deviation, per axis unit
+ *     squared
  * @param residualSumOfSquares signal squared
  * @param residualDf n − 3
  */
@@ -27,8 +29,12 @@ public record QuadraticFit(
     OptionalDouble c0StandardError,
     OptionalDouble c1StandardError,
     OptionalDouble c2StandardError,
+    double c2PerSd,
     double residualSumOfSquares,
     int residualDf) {
+
+  /** Two distinct x leave the quadratic polynomial at rounding noise; the scaled x are near 1. */
+  private static final double SPREAD = 1e-20;
 
   /**
    * Fits the parabola. Polynomials made orthogonal twice over keep the digits: the certified
@@ -39,19 +45,19 @@ public record QuadraticFit(
    */
   public static Optional<QuadraticFit> of(StraightLine line) {
     Basis basis = Basis.of(line);
-    // Two distinct x leave the quadratic polynomial at rounding noise; the scaled x are near 1.
-    if (!(basis.szz > 1e-20 * line.n())) {
+    if (!(basis.szz > SPREAD * line.n())) {
       return Optional.empty();
     }
     double[] e = new double[line.n()];
     for (int i = 0; i < e.length; i++) {
       e[i] = line.residual(i);
     }
-    double bend = dot(basis.z, e) / basis.szz;
+    double[] w = line.weights();
+    double bend = dot(w, basis.z, e) / basis.szz;
     for (int i = 0; i < e.length; i++) {
       e[i] -= bend * basis.z[i];
     }
-    return Optional.of(basis.natural(line, bend, dot(e, e))).filter(QuadraticFit::isFinite);
+    return Optional.of(basis.natural(line, bend, dot(w, e, e))).filter(QuadraticFit::isFinite);
   }
 
   /**
@@ -75,19 +81,20 @@ public record QuadraticFit(
         u[i] /= unit;
         z[i] = u[i] * u[i];
       }
-      double suu = dot(u, u);
+      double[] w = line.weights();
+      double suu = dot(w, u, u);
       double skew = 0;
       double square = 0;
       for (int round = 0; round < 2; round++) {
-        double alongU = dot(z, u) / suu;
-        double mean = StraightLine.mean(z);
+        double alongU = dot(w, z, u) / suu;
+        double mean = StraightLine.mean(z, w);
         for (int i = 0; i < n; i++) {
           z[i] -= mean + alongU * u[i];
         }
         skew += alongU;
         square += mean;
       }
-      return new Basis(u, z, unit, suu, dot(z, z), skew, square);
+      return new Basis(u, z, unit, suu, dot(w, z, z), skew, square);
     }
 
     QuadraticFit natural(StraightLine line, double bend, double sse) {
@@ -100,18 +107,29 @@ public record QuadraticFit(
           line.signalIntercept() + bend * z0,
           line.slope() + bend * steep0 / unit,
           bend / unit / unit,
-          known(sd * Math.sqrt(1.0 / line.n() + u0 * u0 / suu + z0 * z0 / szz)),
+          known(sd * Math.sqrt(1.0 / line.weight() + u0 * u0 / suu + z0 * z0 / szz)),
           known(sd * Math.sqrt(1 / suu + steep0 * steep0 / szz) / unit),
           known(sd / Math.sqrt(szz) / unit / unit),
+          1 / Math.sqrt(szz) / unit / unit,
           sse,
           df);
     }
+
+    /** The parabola with a given c2 that fits best, as signal at 0 and slope at 0. */
+    double[] bent(StraightLine line, double c2) {
+      double u0 = -line.xMean() / unit;
+      double z0 = u0 * u0 - skew * u0 - square;
+      double bend = c2 * unit * unit;
+      return new double[] {
+        line.signalIntercept() + bend * z0, line.slope() + bend * (2 * u0 - skew) / unit
+      };
+    }
   }
 
-  private static double dot(double[] a, double[] b) {
+  private static double dot(double[] w, double[] a, double[] b) {
     double sum = 0;
     for (int i = 0; i < a.length; i++) {
-      sum += a[i] * b[i];
+      sum += w[i] * a[i] * b[i];
     }
     return sum;
   }
@@ -124,6 +142,7 @@ public record QuadraticFit(
     return Double.isFinite(c0)
         && Double.isFinite(c1)
         && Double.isFinite(c2)
+        && Double.isFinite(c2PerSd)
         && Double.isFinite(c0StandardError.orElse(0))
         && Double.isFinite(c1StandardError.orElse(0))
         && Double.isFinite(c2StandardError.orElse(0));
@@ -134,6 +153,25 @@ public record QuadraticFit(
    * straight line's as the bend vanishes; empty when the parabola does not reach zero signal.
    */
   public OptionalDouble nativeConcentration() {
+    return root(c0, c1, c2);
+  }
+
+  /**
+   * The native concentration from the parabola that has a given bend and else fits best; empty when
+   * it does not reach zero signal, or with fewer than three distinct x.
+   *
+   * @param c2 signal per axis unit squared
+   */
+  static OptionalDouble nativeConcentration(StraightLine line, double c2) {
+    Basis basis = Basis.of(line);
+    if (!(basis.szz > SPREAD * line.n())) {
+      return OptionalDouble.empty();
+    }
+    double[] ends = basis.bent(line, c2);
+    return root(ends[0], ends[1], c2);
+  }
+
+  private static OptionalDouble root(double c0, double c1, double c2) {
     double discriminant = c1 * c1 - 4 * c0 * c2;
     if (!(discriminant >= 0) || !(c1 > 0)) {
       return OptionalDouble.empty();

@@ -1,18 +1,22 @@
 package org.spikewright.fit;
 
+import java.util.Arrays;
 import java.util.Optional;
 import java.util.OptionalDouble;
 
 /**
- * An ordinary least-squares line {@code y = signalIntercept + slope · x} with what is needed to go
- * on from it, so that nobody computes it again. Every number of a line is finite.
+ * A least-squares line {@code y = signalIntercept + slope · x} with what is needed to go on from
+ * it, so that nobody computes it again; ordinary or weighted. Every number of a line is finite.
+ *
+ * <p>Of weights only the ratios count: their mean is made 1, so that the residual variance is that
+ * of a flask of average weight, in signal units squared. An ordinary line has all weights 1.
  *
  * <p>Source: Danzer and Currie, Pure Appl. Chem. 70 (1998) 993; Miller and Miller, Statistics and
  * Chemometrics for Analytical Chemistry, ch. 5.
  *
  * @param n number of points, 2 or more
- * @param xMean mean of x, in axis units
- * @param yMean mean of y, in signal units
+ * @param xMean weighted mean of x, in axis units
+ * @param yMean weighted mean of y, in signal units
  * @param sxx sum of squares of x about its mean, axis units squared, above 0
  * @param syy sum of squares of y about its mean, signal units squared, 0 or more
  * @param slope signal per axis unit; may be 0
@@ -20,6 +24,7 @@ import java.util.OptionalDouble;
  * @param residualSumOfSquares signal units squared, 0 or more
  * @param x the points, in the order given; not to be changed
  * @param y the points, in the order given; not to be changed
+ * @param weights of the points, in the order given, each above 0; not to be changed
  */
 public record StraightLine(
     int n,
@@ -31,13 +36,17 @@ public record StraightLine(
     double signalIntercept,
     double residualSumOfSquares,
     double[] x,
-    double[] y)
+    double[] y,
+    double[] weights)
     implements LineOutcome {
 
   /** Within these sizes no square, product or quotient that a line needs can overflow. */
   private static final double LARGEST = 1e75;
 
   private static final double SMALLEST = 1e-75;
+
+  /** A lighter point, beside the heaviest, would be none. */
+  private static final double LIGHTEST = 1e-12;
 
   /** A spread of x this many times its last digit is still a spread. */
   private static final double LAST_DIGITS = 16;
@@ -52,6 +61,40 @@ public record StraightLine(
    * @throws IllegalArgumentException when the lengths differ
    */
   public static LineOutcome fit(double[] x, double[] y) {
+    return asWeighted(x, y, ones(x.length));
+  }
+
+  /**
+   * Fits a weighted line.
+   *
+   * @param x abscissae, in axis units
+   * @param y signals, as many
+   * @param weights as many, inverse to the variances of the signals; only their ratios count
+   * @return a line, or why there is none, as without weights; or a weight is no positive number, or
+   *     leaves nothing of its point beside the heaviest (1e-12 of it)
+   * @throws IllegalArgumentException when the lengths differ
+   */
+  public static LineOutcome fit(double[] x, double[] y, double[] weights) {
+    if (weights.length != x.length) {
+      throw new IllegalArgumentException(x.length + " x but " + weights.length + " weights");
+    }
+    double heaviest = weights.length == 0 ? 1 : max(weights);
+    double[] scaled = new double[weights.length];
+    for (int i = 0; i < scaled.length; i++) {
+      scaled[i] = weights[i] / heaviest;
+      if (!(scaled[i] >= LIGHTEST && weights[i] > 0)) {
+        return new NoLine("a weight is not a positive number, or far too small");
+      }
+    }
+    double mean = mean(scaled);
+    for (int i = 0; i < scaled.length; i++) {
+      scaled[i] /= mean;
+    }
+    return asWeighted(x, y, scaled);
+  }
+
+  /** The line with these very weights, so that the lines through parts of one series compare. */
+  static LineOutcome asWeighted(double[] x, double[] y, double[] weights) {
     int n = x.length;
     if (n != y.length) {
       throw new IllegalArgumentException(n + " x but " + y.length + " y");
@@ -60,7 +103,7 @@ public record StraightLine(
       return new NoLine(n == 0 ? "no flask has a signal" : "only one flask has a signal");
     }
     Optional<String> refusal = refusal(x, y);
-    return refusal.isPresent() ? new NoLine(refusal.get()) : leastSquares(x, y);
+    return refusal.isPresent() ? new NoLine(refusal.get()) : leastSquares(x, y, weights);
   }
 
   private static Optional<String> refusal(double[] x, double[] y) {
@@ -85,28 +128,29 @@ public record StraightLine(
     return Optional.empty();
   }
 
-  private static StraightLine leastSquares(double[] x, double[] y) {
+  private static StraightLine leastSquares(double[] x, double[] y, double[] weights) {
     int n = x.length;
-    double xMean = mean(x);
-    double yMean = mean(y);
+    double xMean = mean(x, weights);
+    double yMean = mean(y, weights);
     double sxx = 0;
     double sxy = 0;
     double syy = 0;
     for (int i = 0; i < n; i++) {
       double u = x[i] - xMean;
       double v = y[i] - yMean;
-      sxx += u * u;
-      sxy += u * v;
-      syy += v * v;
+      sxx += weights[i] * u * u;
+      sxy += weights[i] * u * v;
+      syy += weights[i] * v * v;
     }
     double slope = sxy / sxx;
     double sse = 0;
     for (int i = 0; i < n; i++) {
       double e = (y[i] - yMean) - slope * (x[i] - xMean);
-      sse += e * e;
+      sse += weights[i] * e * e;
     }
     double intercept = yMean - slope * xMean;
-    return new StraightLine(n, xMean, yMean, sxx, syy, slope, intercept, sse, x.clone(), y.clone());
+    return new StraightLine(
+        n, xMean, yMean, sxx, syy, slope, intercept, sse, x.clone(), y.clone(), weights.clone());
   }
 
   /** Residual degrees of freedom, n − 2. */
@@ -114,7 +158,10 @@ public record StraightLine(
     return n - 2;
   }
 
-  /** Residual standard deviation s_{y/x}, in signal units; empty with two points. */
+  /**
+   * Residual standard deviation s_{y/x}, in signal units, of a point of weight 1; empty with two
+   * points.
+   */
   public OptionalDouble residualSd() {
     return n > 2
         ? OptionalDouble.of(Math.sqrt(residualSumOfSquares / (n - 2)))
@@ -128,7 +175,7 @@ public record StraightLine(
 
   /** Standard error of the signal intercept, in signal units; empty with two points. */
   public OptionalDouble interceptStandardError() {
-    return scaled(Math.sqrt(1.0 / n + xMean * xMean / sxx));
+    return scaled(Math.sqrt(1.0 / weight() + xMean * xMean / sxx));
   }
 
   /**
@@ -163,10 +210,29 @@ public record StraightLine(
     return (y[i] - yMean) - slope * (x[i] - xMean);
   }
 
-  /** Leverage of a point, counted from 0; between 1/n and 1. */
+  /** Leverage of a point, counted from 0; between 1/n (unweighted) and 1. */
   public double leverage(int i) {
     double u = x[i] - xMean;
-    return 1.0 / n + u * u / sxx;
+    return weights[i] * (1.0 / weight() + u * u / sxx);
+  }
+
+  /** The sum of the weights; n for an ordinary line. */
+  public double weight() {
+    double sum = 0;
+    for (double weight : weights) {
+      sum += weight;
+    }
+    return sum;
+  }
+
+  /** Whether all points weigh the same. */
+  public boolean isUnweighted() {
+    for (double weight : weights) {
+      if (weight != weights[0]) {
+        return false;
+      }
+    }
+    return true;
   }
 
   /**
@@ -197,6 +263,28 @@ public record StraightLine(
       rest += value - mean;
     }
     return mean + rest / values.length;
+  }
+
+  /** The weighted mean likewise. */
+  static double mean(double[] values, double[] weights) {
+    double sum = 0;
+    double weight = 0;
+    for (int i = 0; i < values.length; i++) {
+      sum += weights[i] * values[i];
+      weight += weights[i];
+    }
+    double mean = sum / weight;
+    double rest = 0;
+    for (int i = 0; i < values.length; i++) {
+      rest += weights[i] * (values[i] - mean);
+    }
+    return mean + rest / weight;
+  }
+
+  static double[] ones(int n) {
+    double[] ones = new double[n];
+    Arrays.fill(ones, 1);
+    return ones;
   }
 
   private static double size(double[] values) {

@@ -1,5 +1,6 @@
 package org.spikewright.judgement;
 
+import java.util.Collections;
 import java.util.EnumMap;
 import java.util.Map;
 
@@ -12,7 +13,7 @@ public record Criteria(Map<Criterion, Limit> limits) {
 
   /** Takes a copy; {@link IllegalArgumentException} when a criterion is missing. */
   public Criteria {
-    limits = new EnumMap<>(limits);
+    limits = Collections.unmodifiableMap(new EnumMap<>(limits));
     if (limits.size() != Criterion.values().length) {
       throw new IllegalArgumentException("limits for " + limits.keySet() + " only");
     }

@@ -54,7 +54,7 @@ final class DesignFlags {
         "Deliver the remaining flasks; after that time the series is judged as it is.");
   }
 
-  static List<Flag> of(AdditionSeries series) {
+  static List<Flag> of(AdditionSeries series, Criteria criteria) {
     List<Flag> flags = new ArrayList<>();
     if (series.usableFlasks().stream().noneMatch(Flask::isUnspiked)) {
       flags.add(
@@ -65,6 +65,7 @@ final class DesignFlags {
               "Measure an unspiked flask of this sample."));
     }
     fewFlasks(series, flags);
+    UnevenAdditions.flag(series, criteria.of(Criterion.UNEVEN_ADDITIONS)).ifPresent(flags::add);
     if (series.method().fitReadings()) {
       flags.add(
           Flags.plain(
@@ -142,13 +143,24 @@ final class DesignFlags {
               Weight.NOTE,
               "Reading below range or missing, left out: " + note.words() + ".",
               "Check whether the flask should be read again.");
+      case EXPIRED_STOCK ->
+          Flags.plain(
+              FlagKind.EXPIRED_STOCK,
+              Weight.NOTE,
+              "Spiked with an expired stock: " + note.words() + ".",
+              "Check the stock against a fresh one, or renew its entry in the table of stocks.");
     };
   }
 
   /** What the second run alone would give. */
   private static String secondResult(AdditionSeries series) {
-    return series.secondRun().map(SeriesFit::of).orElseThrow() instanceof SeriesFit.Fitted second
-        ? "would give " + Flags.n(second.result().value()) + " " + series.toResult().unit().symbol()
+    SeriesFit second = series.secondRun().map(SeriesFit::of).orElseThrow();
+    String unit = " " + series.toResult().unit().symbol();
+    if (second instanceof SeriesFit.ByElectrode electrode) {
+      return "would give " + Flags.n(electrode.result().value()) + unit;
+    }
+    return second instanceof SeriesFit.Fitted line
+        ? "would give " + Flags.n(line.result().value()) + unit
         : "gives none by itself";
   }
 }

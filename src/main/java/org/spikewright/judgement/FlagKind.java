@@ -39,6 +39,7 @@ public enum FlagKind {
   NEAR_DETECTION("near-detection"),
   NEGATIVE_RESULT("negative-result"),
   UNEQUAL_ALIQUOTS("unequal-aliquots"),
+  EXPIRED_STOCK("expired-stock"),
   READINGS_AS_FLASKS("readings-as-flasks"),
   NO_FIT_UNCERTAINTY("no-fit-uncertainty"),
   INCOMPLETE("incomplete"),

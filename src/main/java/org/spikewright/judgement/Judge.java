@@ -30,27 +30,45 @@ public final class Judge {
     this.waitForFlasks = waitForFlasks;
   }
 
-  /** The outcome of one series. Never throws on account of its numbers and never holds a NaN. */
+  /** The outcome of a series that stands alone. */
   public Outcome judge(Gathered gathered) {
-    if (gathered instanceof Ungrouped ungrouped) {
-      return outcome(ungrouped, Optional.empty(), List.of(DesignFlags.noSeries(ungrouped)));
-    }
-    AdditionSeries series = (AdditionSeries) gathered;
-    List<Flag> flags = new ArrayList<>(DesignFlags.of(series));
-    SeriesFit fit = SeriesFit.of(series);
+    return gathered instanceof AdditionSeries series
+        ? judge(series, SeriesFit.of(series), Around.NOTHING)
+        : judge((Ungrouped) gathered);
+  }
+
+  /** The outcome of readings that form no series. */
+  public Outcome judge(Ungrouped ungrouped) {
+    return outcome(ungrouped, Optional.empty(), List.of(DesignFlags.noSeries(ungrouped)));
+  }
+
+  /**
+   * The outcome of a series among others. Never throws on account of its numbers and never holds a
+   * NaN.
+   */
+  public Outcome judge(AdditionSeries series, SeriesFit fit, Around around) {
+    Criteria criteria = book.of(series.method().name());
+    List<Flag> flags = new ArrayList<>(DesignFlags.of(series, criteria));
     if (fit instanceof SeriesFit.Unfitted unfitted) {
       flags.add(DesignFlags.unfitted(series, unfitted.reason()));
       return outcome(series, Optional.empty(), flags);
     }
-    SeriesResult result = ((SeriesFit.Fitted) fit).result();
-    Criteria criteria = book.of(series.method().name());
+    if (fit instanceof SeriesFit.ByElectrode electrode) {
+      flags.addAll(new ElectrodeFlags(electrode.result(), criteria).all());
+      return outcome(series, Optional.empty(), flags).with(electrode.result());
+    }
+    PoolView pool = around.pool(series);
+    SeriesResult result = Moderating.of(((SeriesFit.Fitted) fit).result(), pool);
     flags.addAll(new LineFlags(result, criteria).all());
+    flags.addAll(new NightFlags(result, pool, criteria).all());
+    flags.addAll(new ReadingFlags(result, pool, criteria).all());
     flags.addAll(new ResultFlags(result, criteria).all());
+    flags.addAll(around.flags(series, result));
     return outcome(series, Optional.of(result), flags);
   }
 
   /** The instant up to which a series is waited for; empty when it is not short of flasks. */
-  public Optional<Instant> waitingUntil(Gathered gathered) {
+  private Optional<Instant> waitingUntil(Gathered gathered) {
     if (gathered instanceof AdditionSeries series
         && series.preparedFlasks() < series.method().expectedFlasks()) {
       Instant until = series.lastReadingAt().plus(waitForFlasks);
@@ -69,7 +87,8 @@ public final class Judge {
         verdict == Verdict.REPEAT || verdict == Verdict.WAITING
             ? ""
             : result.map(ReportedText::of).orElse("");
-    return new Outcome(gathered, result, List.copyOf(flags), verdict, reported);
+    return new Outcome(
+        gathered, result, List.copyOf(flags), verdict, reported, until, Optional.empty());
   }
 
   private static Verdict verdict(List<Flag> flags) {

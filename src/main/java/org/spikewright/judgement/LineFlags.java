@@ -3,88 +3,85 @@ package org.spikewright.judgement;
 import static org.spikewright.judgement.Flags.n;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
-import java.util.Set;
+import java.util.stream.Collectors;
 import org.spikewright.fit.BendTest;
-import org.spikewright.fit.DeletedResidual;
 import org.spikewright.fit.NativeEstimate;
+import org.spikewright.fit.NoisyTest;
+import org.spikewright.fit.OddFlask;
+import org.spikewright.fit.SensitivitySpread.OddSlope;
 import org.spikewright.judgement.Flag.LimitSource;
 import org.spikewright.judgement.Flag.Weight;
 import org.spikewright.quantity.Numbers;
 
 /** Flags on the line: is it straight, does one flask stand off, is the slope established. */
 final class LineFlags {
-  private record Odd(int index, DeletedResidual residual) {}
+  /** With so few flasks a bend and an odd flask look alike. */
+  private static final int FEW = 4;
 
   private final SeriesResult result;
   private final Criteria criteria;
+  private final StatisticalFamily family;
   private final String unit;
 
   LineFlags(SeriesResult result, Criteria criteria) {
     this.result = result;
     this.criteria = criteria;
+    this.family = StatisticalFamily.of(result, criteria.of(Criterion.FALSE_ALARMS));
     this.unit = result.series().toResult().unit().symbol();
   }
 
   List<Flag> all() {
     List<Flag> flags = new ArrayList<>();
-    Optional<Odd> odd = oddest();
-    Family family = new Family();
-    result.bend().ifPresent(bend -> family.add(FlagKind.BENT, bend.pOneSided()));
-    odd.ifPresent(
-        flask -> family.add(FlagKind.ODD_FLASK, flask.residual().p() * result.line().n()));
-    Set<FlagKind> significant =
-        criteria.of(Criterion.FALSE_ALARMS).on()
-            ? family.significant(criteria.of(Criterion.FALSE_ALARMS).value())
-            : Set.of();
-    if (significant.contains(FlagKind.BENT)) {
+    if (family.stands(FlagKind.BENT)) {
       bent().ifPresent(flags::add);
     }
-    if (significant.contains(FlagKind.ODD_FLASK)) {
-      flags.add(oddFlask(odd.orElseThrow()));
+    if (family.stands(FlagKind.ODD_FLASK)) {
+      flags.add(odd(family.odd().orElseThrow()));
+    }
+    if (family.stands(FlagKind.NOISY)) {
+      flags.add(noisy(family.noisy().orElseThrow()));
+    }
+    if (family.stands(FlagKind.SUSPECTED_SLIP)) {
+      family.slips().flatMap(slips -> SlipWords.flag(slips, result, rate())).ifPresent(flags::add);
+    }
+    if (family.stands(FlagKind.ODD_SLOPE)) {
+      flags.add(oddSlope(family.oddSlope().orElseThrow()));
     }
     slope().ifPresent(flags::add);
     correlation().ifPresent(flags::add);
     return flags;
   }
 
-  private Optional<Odd> oddest() {
-    Optional<Odd> oddest = Optional.empty();
-    for (int i = 0; i < result.residuals().size(); i++) {
-      Optional<DeletedResidual> residual = result.residuals().get(i);
-      if (residual.isPresent()
-          && (oddest.isEmpty() || residual.get().p() < oddest.get().residual().p())) {
-        oddest = Optional.of(new Odd(i, residual.get()));
-      }
-    }
-    return oddest;
+  private Limit rate() {
+    return criteria.of(Criterion.FALSE_ALARMS);
   }
 
   /** A bend counts when it also moves the result; the bent value is never reported in silence. */
   private Optional<Flag> bent() {
-    BendTest bend = result.bend().orElseThrow();
+    BendTest bend = family.bend().orElseThrow();
+    String advice = bendAdvice();
     OptionalDouble bentAxis = bend.nativeConcentration();
     if (bentAxis.isEmpty()) {
       return Optional.of(
           Flags.against(
               FlagKind.BENT,
               Weight.REPEAT,
-              bend.pOneSided(),
-              criteria.of(Criterion.FALSE_ALARMS),
+              family.bendP().orElseThrow(),
+              rate(),
               "The line bends so much that the bent line does not reach zero signal.",
-              "Prepare again with smaller additions or a diluted sample."));
+              advice));
     }
     double bentValue = result.series().toResult().value(bentAxis.getAsDouble());
     double straight = result.value();
     double change = (bentValue - straight) / Math.abs(straight);
-    boolean repeat =
-        criteria.of(Criterion.BEND_TO_REPEAT).on()
-            && over(change, criteria.of(Criterion.BEND_TO_REPEAT));
-    if (!repeat
-        && !(criteria.of(Criterion.BEND_TO_REVIEW).on()
-            && over(change, criteria.of(Criterion.BEND_TO_REVIEW)))) {
+    Limit toRepeat = criteria.of(Criterion.BEND_TO_REPEAT);
+    Limit toReview = criteria.of(Criterion.BEND_TO_REVIEW);
+    boolean repeat = toRepeat.on() && over(change, toRepeat);
+    if (!repeat && !(toReview.on() && over(change, toReview))) {
       return Optional.empty();
     }
     return Optional.of(
@@ -92,7 +89,7 @@ final class LineFlags {
             FlagKind.BENT,
             repeat ? Weight.REPEAT : Weight.REVIEW,
             change,
-            repeat ? criteria.of(Criterion.BEND_TO_REPEAT) : criteria.of(Criterion.BEND_TO_REVIEW),
+            repeat ? toRepeat : toReview,
             "The line bends: straight-line result "
                 + n(straight)
                 + ", bent-line "
@@ -102,42 +99,110 @@ final class LineFlags {
                 + ", "
                 + Flags.percent(change)
                 + ".",
-            "Prepare again with smaller additions or a diluted sample, inside the straight range."));
+            advice));
+  }
+
+  private String bendAdvice() {
+    String plain =
+        "Prepare again with smaller additions or a diluted sample, inside the straight range.";
+    return looksLikeBoth()
+        ? "With so few flasks a bend and one odd flask look alike: more levels would tell them"
+            + " apart. "
+            + plain
+        : plain;
+  }
+
+  private boolean looksLikeBoth() {
+    return family.stands(FlagKind.BENT)
+        && family.stands(FlagKind.ODD_FLASK)
+        && result.line().n() <= FEW;
   }
 
   private static boolean over(double change, Limit limit) {
     return !(Math.abs(change) <= limit.value());
   }
 
-  private Flag oddFlask(Odd odd) {
+  private Flag odd(OddFlask odd) {
     String otherWords =
-        NativeEstimate.of(odd.residual().without())
+        NativeEstimate.of(odd.without())
             .map(without -> result.series().toResult().value(without.value()))
-            .filter(other -> odd.residual().without().slope() > 0 && Double.isFinite(other))
+            .filter(other -> odd.without().slope() > 0 && Double.isFinite(other))
             .map(other -> n(other) + " " + unit)
             .orElse("no result");
+    boolean level = odd.kind() == OddFlask.Kind.LEVEL;
+    String labels =
+        Arrays.stream(odd.flasks())
+            .mapToObj(i -> result.flasks().get(i).label())
+            .collect(Collectors.joining(", "));
     return new Flag(
-        FlagKind.ODD_FLASK,
+        level ? FlagKind.ODD_LEVEL : FlagKind.ODD_FLASK,
         Weight.REVIEW,
-        OptionalDouble.of(odd.residual().t()),
-        OptionalDouble.of(criteria.of(Criterion.FALSE_ALARMS).value()),
-        criteria.of(Criterion.FALSE_ALARMS).source(),
-        "Flask "
-            + result.flasks().get(odd.index()).label()
+        OptionalDouble.of(odd.t()),
+        OptionalDouble.of(rate().value()),
+        rate().source(),
+        (level ? "The level of flasks " : "Flask ")
+            + labels
             + " lies "
-            + n(Math.abs(odd.residual().t()))
+            + n(Math.abs(odd.t()))
             + " standard deviations "
-            + (odd.residual().t() > 0 ? "above" : "below")
+            + (odd.t() > 0 ? "above" : "below")
             + " the line through the others: result "
             + n(result.value())
             + ", without it "
             + otherWords
             + ".",
-        "Prepare and measure this flask again; it stays in the result until a person decides.");
+        oddAdvice(level));
+  }
+
+  /** A single flask is remade only where it explains the data better than a bend does. */
+  private String oddAdvice(boolean level) {
+    if (looksLikeBoth()) {
+      return "With so few flasks a bend and one odd flask look alike: prepare the series again with"
+          + " more levels.";
+    }
+    if (level) {
+      return "Check the volume added at this level against the bench sheet; it stays in the result"
+          + " until a person decides.";
+    }
+    boolean bendExplainsBetter =
+        family.bendP().isPresent()
+            && family.stands(FlagKind.BENT)
+            && family.bendP().getAsDouble() < family.odd().orElseThrow().p();
+    return bendExplainsBetter
+        ? "A bend explains the points better than this one flask does; see the plot."
+        : "Prepare and measure this flask again; it stays in the result until a person decides.";
+  }
+
+  private Flag noisy(NoisyTest noisy) {
+    return Flags.against(
+        FlagKind.NOISY,
+        Weight.REVIEW,
+        noisy.p(),
+        rate(),
+        "The flasks scatter "
+            + n(noisy.ratio())
+            + " times as much about their line as is usual in "
+            + result.borrowed().orElseThrow().lender()
+            + ".",
+        "Look for the cause at the bench: mixing, pipetting, contamination, an unsteady signal.");
+  }
+
+  private Flag oddSlope(OddSlope odd) {
+    return Flags.against(
+        FlagKind.ODD_SLOPE,
+        Weight.REVIEW,
+        odd.p(),
+        rate(),
+        "The sensitivity is "
+            + n(odd.ratio())
+            + " times that of the other series of "
+            + result.borrowed().orElseThrow().lender()
+            + ".",
+        "Check which stock was used and its concentration, the volumes, and the matrix.");
   }
 
   private Optional<Flag> slope() {
-    NativeEstimate estimate = result.estimate();
+    NativeEstimate estimate = result.reportedEstimate();
     if (estimate.g().isEmpty() || estimate.isBounded()) {
       return Optional.empty();
     }

@@ -40,15 +40,11 @@ final class ReportedText {
         .isPresent();
   }
 
-  /**
-   * U = t · standard error of the fit, on the result's scale, until a full budget exists; empty
-   * without residual degrees of freedom.
-   */
+  /** The expanded uncertainty of the budget; empty where the fit has no uncertainty. */
   static OptionalDouble expandedUncertainty(SeriesResult result) {
-    OptionalDouble se = result.standardError();
-    OptionalDouble t = result.estimate().t();
-    return se.isPresent() && t.isPresent()
-        ? OptionalDouble.of(t.getAsDouble() * se.getAsDouble())
-        : OptionalDouble.empty();
+    return result
+        .budget()
+        .map(budget -> OptionalDouble.of(budget.expandedUncertainty()))
+        .orElseGet(OptionalDouble::empty);
   }
 }

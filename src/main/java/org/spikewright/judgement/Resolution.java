@@ -13,8 +13,8 @@ final class Resolution {
 
   /**
    * The standard deviation that rounding alone gives a reading: its last decimal place over √12
-   * (JCGM 100:2008, F.2.2.1), the finest place shown in the series, times the largest volume
-   * factor. 0 when it cannot be told.
+   * (JCGM 100:2008, F.2.2.1), the finest place shown in the series (over the internal standard
+   * where there is one), times the largest volume factor. 0 when it cannot be told.
    */
   static double of(List<Flask> flasks) {
     double finest = Double.POSITIVE_INFINITY;
@@ -23,7 +23,7 @@ final class Resolution {
       factor = Math.max(factor, flask.volumeFactor());
       for (var recorded : flask.readings()) {
         if (recorded.reading().signal() instanceof Signal.Value value) {
-          finest = Math.min(finest, lastPlace(value.text()));
+          finest = Math.min(finest, lastPlace(value.text()) / value.standard().orElse(1));
         }
       }
     }

@@ -6,9 +6,12 @@ import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
+import org.spikewright.fit.BendAllowance;
 import org.spikewright.fit.Detection;
+import org.spikewright.judgement.Flag.LimitSource;
 import org.spikewright.judgement.Flag.Weight;
 import org.spikewright.quantity.Numbers;
+import org.spikewright.reading.MethodFacts.WorkingRange;
 import org.spikewright.series.Flask;
 
 /** Flags on the size of the result: its uncertainty, its additions, its detection limit. */
@@ -27,7 +30,7 @@ final class ResultFlags {
 
   List<Flag> all() {
     List<Flag> flags = new ArrayList<>();
-    if (result.standardError().isEmpty()) {
+    if (result.reportedStandardError().isEmpty()) {
       flags.add(
           Flags.plain(
               FlagKind.NO_FIT_UNCERTAINTY,
@@ -36,6 +39,8 @@ final class ResultFlags {
               "Prepare at least two further flasks."));
     }
     detection().ifPresent(flags::add);
+    workingRange().ifPresent(flags::add);
+    bendAllowance().ifPresent(flags::add);
     if (result.value() < 0) {
       flags.add(
           Flags.plain(
@@ -89,6 +94,61 @@ final class ResultFlags {
         : Optional.empty();
   }
 
+  private Optional<Flag> workingRange() {
+    Optional<WorkingRange> range = result.series().method().workingRange();
+    boolean outside =
+        range.isPresent()
+            && !belowDetection
+            && !(result.value() >= range.get().lower() && result.value() <= range.get().upper());
+    return outside
+        ? Optional.of(
+            Flags.plain(
+                FlagKind.OUTSIDE_WORKING_RANGE,
+                Weight.NOTE,
+                "The result "
+                    + n(result.value())
+                    + " "
+                    + unit
+                    + " lies outside the method's working range, "
+                    + Numbers.plain(range.get().lower())
+                    + " to "
+                    + Numbers.plain(range.get().upper())
+                    + ".",
+                "Dilute the sample, or take another method."))
+        : Optional.empty();
+  }
+
+  /** A note only where the method sets a limit; the number itself always stands in the results. */
+  private Optional<Flag> bendAllowance() {
+    OptionalDouble limit = result.series().method().bendAllowance();
+    Optional<BendAllowance> allowance = result.allowance();
+    if (limit.isEmpty() || allowance.isEmpty() || belowDetection) {
+      return Optional.empty();
+    }
+    OptionalDouble bias = allowance.get().bias();
+    double relative =
+        bias.isPresent() ? bias.getAsDouble() / Math.abs(result.estimate().value()) : 1;
+    if (bias.isPresent() && relative <= limit.getAsDouble()) {
+      return Optional.empty();
+    }
+    String open =
+        bias.isPresent()
+            ? "a bend that moves the result by up to " + n(100 * relative) + " %"
+            : "a bend without any bound";
+    return Optional.of(
+        Flags.against(
+            FlagKind.BEND_ALLOWANCE,
+            Weight.NOTE,
+            relative,
+            new Limit(limit.getAsDouble(), true, LimitSource.LABORATORY, "the method's limit"),
+            "The data leave open "
+                + open
+                + "; the method allows "
+                + n(100 * limit.getAsDouble())
+                + " %.",
+            "More levels, or less scatter, would tell."));
+  }
+
   private Optional<Flag> uncertain() {
     Limit limit = target();
     OptionalDouble relative = relativeUncertainty();
@@ -113,8 +173,7 @@ final class ResultFlags {
     OptionalDouble own = result.series().method().targetUncertainty();
     Limit general = criteria.of(Criterion.TARGET_UNCERTAINTY);
     return own.isPresent()
-        ? new Limit(
-            own.getAsDouble(), general.on(), Flag.LimitSource.LABORATORY, "the method's target")
+        ? new Limit(own.getAsDouble(), general.on(), LimitSource.LABORATORY, "the method's target")
         : general;
   }
 
@@ -190,10 +249,7 @@ final class ResultFlags {
     }
     Limit limit =
         new Limit(
-            trusted.getAsDouble(),
-            true,
-            Flag.LimitSource.LABORATORY,
-            "the mapping's trusted_signal");
+            trusted.getAsDouble(), true, LimitSource.LABORATORY, "the mapping's trusted_signal");
     return Optional.of(
         Flags.against(
             FlagKind.ADDITIONS_TOO_LARGE,

@@ -11,7 +11,10 @@ import org.spikewright.fit.Detection;
 import org.spikewright.fit.LineOutcome;
 import org.spikewright.fit.NativeEstimate;
 import org.spikewright.fit.NoLine;
+import org.spikewright.fit.OddFlask;
+import org.spikewright.fit.PooledSeries;
 import org.spikewright.fit.StraightLine;
+import org.spikewright.reading.Design;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.series.Flask;
 import org.spikewright.series.ToResult;
@@ -22,6 +25,9 @@ public sealed interface SeriesFit {
   /** The numbers. */
   record Fitted(SeriesResult result) implements SeriesFit {}
 
+  /** The numbers of potentials, which no line goes through. */
+  record ByElectrode(ElectrodeResult result) implements SeriesFit {}
+
   /**
    * No result.
    *
@@ -31,6 +37,9 @@ public sealed interface SeriesFit {
 
   /** Fits a series: least squares on flask means, carried back to zero signal. */
   static SeriesFit of(AdditionSeries series) {
+    if (series.design() == Design.ELECTRODE) {
+      return ElectrodeFit.of(series);
+    }
     List<Flask> flasks = series.usableFlasks();
     double[] x = flasks.stream().mapToDouble(Flask::x).toArray();
     double[] y = flasks.stream().mapToDouble(Flask::y).toArray();
@@ -49,21 +58,28 @@ public sealed interface SeriesFit {
         .orElse(new Unfitted("the numbers are too large or too small to compute with"));
   }
 
-  private static SeriesResult result(
+  /** The numbers of a line by itself; not yet checked to be finite. */
+  static SeriesResult result(
       AdditionSeries series, List<Flask> flasks, StraightLine line, NativeEstimate estimate) {
     ToResult scale = series.toResult();
+    PooledSeries pooled = Pooling.of(series, flasks, line);
+    double floor = Resolution.of(flasks);
     return new SeriesResult(
         series,
         flasks,
         line,
+        pooled,
         estimate,
         BendTest.of(line),
-        residuals(line, Resolution.of(flasks)),
-        detection(line, scale),
+        residuals(line, floor),
+        OddFlask.of(line, pooled.addition(), floor),
+        detection(line, line.residualSd(), line.residualDf(), scale),
         scale.value(estimate.value()),
         onScale(estimate.standardError(), scale::length),
         onScale(estimate.lower95(), scale::value),
-        onScale(estimate.upper95(), scale::value));
+        onScale(estimate.upper95(), scale::value),
+        Optional.empty(),
+        Optional.empty());
   }
 
   private static List<Optional<DeletedResidual>> residuals(StraightLine line, double floor) {
@@ -74,27 +90,33 @@ public sealed interface SeriesFit {
     return List.copyOf(residuals);
   }
 
-  private static Optional<Detection> detection(StraightLine line, ToResult scale) {
-    OptionalDouble sd = line.residualSd();
+  static Optional<Detection> detection(
+      StraightLine line, OptionalDouble sd, double df, ToResult scale) {
     if (sd.isEmpty()) {
       return Optional.empty();
     }
     double fit = scale.length(Detection.standardErrorAtZero(line, sd.getAsDouble()));
     double blank = scale.methodBlankUncertainty() * scale.perSample() * scale.unitFactor();
-    return Optional.of(Detection.of(Math.hypot(fit, blank), line.residualDf()));
+    return Optional.of(Detection.of(Math.hypot(fit, blank), df));
   }
 
-  private static OptionalDouble onScale(OptionalDouble onAxis, DoubleUnaryOperator scale) {
+  static OptionalDouble onScale(OptionalDouble onAxis, DoubleUnaryOperator scale) {
     return onAxis.isPresent()
         ? OptionalDouble.of(scale.applyAsDouble(onAxis.getAsDouble()))
         : onAxis;
   }
 
-  private static boolean isFinite(SeriesResult result) {
+  static boolean isFinite(SeriesResult result) {
     return Double.isFinite(result.value())
-        && Double.isFinite(result.standardError().orElse(0))
-        && Double.isFinite(result.lower95().orElse(0))
-        && Double.isFinite(result.upper95().orElse(0))
-        && Double.isFinite(result.detection().map(Detection::detectionLimit).orElse(0.0));
+        && areFinite(
+            result.standardError(), result.lower95(), result.upper95(), result.ownDetection());
+  }
+
+  static boolean areFinite(
+      OptionalDouble error, OptionalDouble lower, OptionalDouble upper, Optional<Detection> d) {
+    return Double.isFinite(error.orElse(0))
+        && Double.isFinite(lower.orElse(0))
+        && Double.isFinite(upper.orElse(0))
+        && Double.isFinite(d.map(Detection::detectionLimit).orElse(0.0));
   }
 }

@@ -44,7 +44,14 @@ final class DayNotes {
   private final Pairs untimedToFollow = new Pairs();
 
   /** That a subject has readings on a day: of an untimed batch, or timed in a batch or none. */
-  private record Noted(boolean timed, long subject, long day, long delimitedBy) {}
+  private record Noted(boolean timed, long subject, long day, long delimitedBy) {
+    boolean isOf(NewRow row, long itsDay) {
+      return subject == row.subject()
+          && day == itsDay
+          && timed == row.timed()
+          && delimitedBy == row.delimitedBy();
+    }
+  }
 
   private record Untimed(long subject, long batch) {}
 
@@ -65,12 +72,13 @@ final class DayNotes {
   /** Takes a reading that is new, or a new version of one. */
   void fresh(NewRow row) {
     long day = row.timed() ? days.of(row.at()) : untimedDay(row);
-    Noted note = new Noted(row.timed(), row.subject(), day, row.delimitedBy());
-    if (note.equals(lastNote) || noted.putIfAbsent(note, true) != null) {
-      lastNote = note;
+    if (lastNote != null && lastNote.isOf(row, day)) {
       return;
     }
-    lastNote = note;
+    lastNote = new Noted(row.timed(), row.subject(), day, row.delimitedBy());
+    if (noted.putIfAbsent(lastNote, true) != null) {
+      return;
+    }
     subjectDays.add(day, row.subject(), arrival);
     bring(day);
     boolean known = row.subject() <= lastKnownSubject;

@@ -1,6 +1,8 @@
 package org.spikewright.ledger;
 
+import java.util.ArrayList;
 import java.util.HashMap;
+import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
@@ -24,6 +26,7 @@ import org.spikewright.reading.Role;
 final class FactsCodec {
   private static final Map<String, Unit> TABLE = new HashMap<>();
   private static final String STOCK = "stock";
+  private static final String STOCKS = "stocks";
   private static final String STATED = "stated";
   private static final char FOREIGN = '!';
 
@@ -45,11 +48,13 @@ final class FactsCodec {
     preparation(out, facts.preparation());
     Blanks blanks = facts.blanks();
     out.add(blanks.baseline()).add(optional(blanks.method())).add(optional(blanks.solvent()));
-    MethodCodec.encode(out, facts.method(), unit(facts.method().resultUnit()));
+    MethodCodec.encode(out, facts.method(), FactsCodec::unit);
     InternalStandard standard = facts.internalStandard().orElse(null);
     out.add(standard == null ? "" : standard.given().name());
     out.add(standard == null ? "" : optional(standard.mass()));
+    out.add(standard == null ? OptionalDouble.empty() : standard.baseline());
     AccuracyCodec.encode(out, facts.accuracies());
+    AccuracyCodec.encodeBottle(out, facts.bottle());
     return out.toString();
   }
 
@@ -65,15 +70,18 @@ final class FactsCodec {
         preparation(in),
         new Blanks(in.optionalDouble(), optionalMeasured(in.text()), optionalMeasured(in.text())),
         MethodCodec.decode(in, FactsCodec::unit),
-        standard(in.text(), in.text()),
-        AccuracyCodec.decode(in));
+        standard(in.text(), in.text(), in.optionalDouble()),
+        AccuracyCodec.decode(in),
+        AccuracyCodec.bottle(in));
   }
 
-  private static Optional<InternalStandard> standard(String given, String mass) {
+  private static Optional<InternalStandard> standard(
+      String given, String mass, OptionalDouble baseline) {
     return given.isEmpty()
         ? Optional.empty()
         : Optional.of(
-            new InternalStandard(InternalStandard.Given.valueOf(given), optionalMeasured(mass)));
+            new InternalStandard(
+                InternalStandard.Given.valueOf(given), optionalMeasured(mass), baseline));
   }
 
   /**
@@ -91,19 +99,41 @@ final class FactsCodec {
 
   private static void addition(Fields.Writer out, Addition addition) {
     if (addition instanceof Addition.OfStock spike) {
-      out.add(STOCK).add(measured(Measured.exactly(spike.volume()))).add(measured(spike.stock()));
+      out.add(STOCK);
+      portion(out, spike);
+    } else if (addition instanceof Addition.OfStocks several) {
+      out.add(STOCKS).add(several.portions().size());
+      several.portions().forEach(portion -> portion(out, portion));
     } else if (addition instanceof Addition.Stated stated) {
       out.add(STATED).add(measured(Measured.exactly(stated.concentration())));
       out.add(stated.terms().name());
     }
   }
 
+  private static void portion(Fields.Writer out, Addition.OfStock portion) {
+    out.add(measured(Measured.exactly(portion.delivered()))).add(measured(portion.stock()));
+  }
+
   private static Addition addition(Fields.Reader in) {
-    boolean stock = in.text().equals(STOCK);
-    Quantity amount = measured(in.text()).quantity();
-    return stock
-        ? new Addition.OfStock(amount, measured(in.text()))
-        : new Addition.Stated(amount, Addition.Terms.valueOf(in.text()));
+    return switch (in.text()) {
+      case STOCK -> portion(in);
+      case STOCKS -> portions(in);
+      default ->
+          new Addition.Stated(measured(in.text()).quantity(), Addition.Terms.valueOf(in.text()));
+    };
+  }
+
+  private static Addition portions(Fields.Reader in) {
+    int size = in.number();
+    List<Addition.OfStock> portions = new ArrayList<>(size);
+    for (int i = 0; i < size; i++) {
+      portions.add(portion(in));
+    }
+    return new Addition.OfStocks(portions);
+  }
+
+  private static Addition.OfStock portion(Fields.Reader in) {
+    return new Addition.OfStock(measured(in.text()).quantity(), measured(in.text()));
   }
 
   private static void preparation(Fields.Writer out, Preparation preparation) {

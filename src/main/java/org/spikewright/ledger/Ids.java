@@ -1,5 +1,6 @@
 package org.spikewright.ledger;
 
+import java.util.IdentityHashMap;
 import java.util.Map;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Preparation;
@@ -16,12 +17,18 @@ final class Ids {
 
   private static final int WORDS = 65_536;
   private static final int FACTS = 16_384;
+  private static final int SAME = 4096;
 
   private final Sql sql;
   private final Map<String, Long> names = new Recent<>(WORDS);
   private final Map<Subject, Long> subjects = new Recent<>(WORDS);
   private final Map<FlaskFacts, FactsId> facts = new Recent<>(FACTS);
   private final Map<Preparation, Long> preparations = new Recent<>(FACTS);
+
+  /** A mapping gives rows that say the same the same object: that is found without its content. */
+  private final Map<Subject, Long> sameSubjects = new IdentityHashMap<>();
+
+  private final Map<FlaskFacts, FactsId> sameFacts = new IdentityHashMap<>();
 
   /** What stands for facts, and for the preparation among them. */
   record FactsId(long facts, long preparation, boolean spiked) {}
@@ -35,6 +42,8 @@ final class Ids {
     subjects.clear();
     facts.clear();
     preparations.clear();
+    sameSubjects.clear();
+    sameFacts.clear();
   }
 
   long name(String text) {
@@ -52,6 +61,18 @@ final class Ids {
   }
 
   long subject(Subject subject) {
+    Long same = sameSubjects.get(subject);
+    if (same == null) {
+      same = equalSubject(subject);
+      if (sameSubjects.size() >= SAME) {
+        sameSubjects.clear();
+      }
+      sameSubjects.put(subject, same);
+    }
+    return same;
+  }
+
+  private long equalSubject(Subject subject) {
     Long known = subjects.get(subject);
     if (known != null) {
       return known;
@@ -71,6 +92,18 @@ final class Ids {
   }
 
   FactsId facts(FlaskFacts flask) {
+    FactsId same = sameFacts.get(flask);
+    if (same == null) {
+      same = equalFacts(flask);
+      if (sameFacts.size() >= SAME) {
+        sameFacts.clear();
+      }
+      sameFacts.put(flask, same);
+    }
+    return same;
+  }
+
+  private FactsId equalFacts(FlaskFacts flask) {
     FactsId known = facts.get(flask);
     if (known != null) {
       return known;

@@ -5,6 +5,7 @@ import java.time.Instant;
 import java.time.LocalDate;
 import java.util.List;
 import java.util.Optional;
+import org.spikewright.analysis.Recall;
 import org.spikewright.reading.LabCalendar;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Subject;
@@ -24,6 +25,7 @@ public sealed class LedgerView implements AutoCloseable permits Ledger {
   private final ReadingQueries readings;
   private final FileQueries files;
   private final RevisionQueries revisions;
+  private final PoolStore pools;
 
   LedgerView(Sql reads, LabCalendar calendar, Duration longestPause) {
     this.reads = reads;
@@ -32,6 +34,7 @@ public sealed class LedgerView implements AutoCloseable permits Ledger {
     this.readings = new ReadingQueries(reads, new DayIndex(calendar), longestPause.toMillis());
     this.files = new FileQueries(reads);
     this.revisions = new RevisionQueries(reads);
+    this.pools = new PoolStore(reads);
   }
 
   /** The number of the newest delivery; 0 when there is none. */
@@ -73,6 +76,11 @@ public sealed class LedgerView implements AutoCloseable permits Ledger {
     return readings.readings(subject, day, upTo);
   }
 
+  /** The same of several subjects, in their order; asked together they cost far less. */
+  public final List<List<Recorded>> readings(List<Subject> subjects, LocalDate day, long upTo) {
+    return readings.readings(subjects, day, upTo);
+  }
+
   /**
    * Lab days that are to be looked at, in order: never looked at, or something came since, or they
    * closed since, or a series has waited long enough.
@@ -97,6 +105,14 @@ public sealed class LedgerView implements AutoCloseable permits Ledger {
   /** The newest revision of a lab day. */
   public final Optional<RevisionRecord> newest(LocalDate day) {
     return revisions.newest(day);
+  }
+
+  /**
+   * What is known of a lab day before its series are looked at: what earlier days left behind, and
+   * what its own pools came to, where it was summarised after its close.
+   */
+  public final Recall recall(LocalDate day, boolean inProgress) {
+    return pools.recall(day, inProgress);
   }
 
   /** The results a revision shows; fetched one by one, and can be walked more than once. */

@@ -13,8 +13,8 @@ import org.spikewright.reading.MethodFacts.WorkingRange;
 final class MethodCodec {
   private MethodCodec() {}
 
-  static void encode(Fields.Writer out, MethodFacts method, String unit) {
-    out.add(method.name()).add(unit).add(method.expectedFlasks());
+  static void encode(Fields.Writer out, MethodFacts method, Function<Unit, String> unit) {
+    out.add(method.name()).add(unit.apply(method.resultUnit())).add(method.expectedFlasks());
     out.add(method.fitReadings() ? "readings" : "");
     out.add(method.trustedSignal()).add(method.reportingLimit()).add(method.targetUncertainty());
     Optional<WorkingRange> range = method.workingRange();
@@ -28,6 +28,7 @@ final class MethodCodec {
     out.add(electrode.map(e -> Integer.toString(e.charge())).orElse(""));
     out.add(electrode.map(Electrode::slope).orElse(OptionalDouble.empty()));
     out.add(electrode.map(Electrode::celsius).orElse(OptionalDouble.empty()));
+    out.add(method.signalUnit().map(unit).orElse(""));
   }
 
   static MethodFacts decode(Fields.Reader in, Function<String, Unit> unit) {
@@ -47,7 +48,12 @@ final class MethodCodec {
             Calculation.Weights.valueOf(in.text()),
             Calculation.Bend.valueOf(in.text()),
             !in.text().isEmpty()),
-        electrode(in.text(), in.optionalDouble(), in.optionalDouble()));
+        electrode(in.text(), in.optionalDouble(), in.optionalDouble()),
+        optional(in.text(), unit));
+  }
+
+  private static Optional<Unit> optional(String symbol, Function<String, Unit> unit) {
+    return symbol.isEmpty() ? Optional.empty() : Optional.of(unit.apply(symbol));
   }
 
   private static Optional<WorkingRange> range(OptionalDouble lower, OptionalDouble upper) {

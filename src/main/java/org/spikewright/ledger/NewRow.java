@@ -3,8 +3,8 @@ package org.spikewright.ledger;
 import java.sql.PreparedStatement;
 import java.sql.SQLException;
 import java.sql.Types;
-import java.util.Comparator;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import org.spikewright.reading.Signal;
 import org.spikewright.reading.Spread;
 
@@ -29,22 +29,32 @@ record NewRow(
     long line,
     long delimitedBy) {
 
-  /** The order of the primary key: rows that lie together are written together. */
-  static final Comparator<NewRow> KEY_ORDER =
-      Comparator.comparingLong(NewRow::subject)
-          .thenComparingLong(NewRow::at)
-          .thenComparingLong(NewRow::batch)
-          .thenComparingLong(NewRow::preparation)
-          .thenComparingLong(NewRow::flask)
-          .thenComparingLong(NewRow::replicate);
-
   /** Parts a mean's text from its spread; the last two of them count, whatever the text holds. */
   private static final char BEHIND = '\u001f';
 
   static final String INSERT =
       "INSERT INTO reading (subject, read_at, batch, preparation, flask, replicate, nth,"
-          + " signal, state, text, facts, origin, line_no)"
-          + " VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?) ON CONFLICT DO NOTHING";
+          + " signal, state, text, facts, origin, line_no, standard)"
+          + " VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?) ON CONFLICT DO NOTHING";
+
+  /** The order of the primary key: rows that lie together are written together. */
+  static int byKey(NewRow one, NewRow other) {
+    if (one.subject != other.subject) {
+      return Long.compare(one.subject, other.subject);
+    }
+    if (one.at != other.at) {
+      return Long.compare(one.at, other.at);
+    }
+    if (one.batch != other.batch) {
+      return Long.compare(one.batch, other.batch);
+    }
+    if (one.preparation != other.preparation) {
+      return Long.compare(one.preparation, other.preparation);
+    }
+    return one.flask != other.flask
+        ? Long.compare(one.flask, other.flask)
+        : Long.compare(one.replicate, other.replicate);
+  }
 
   boolean timed() {
     return batch == Ids.NONE;
@@ -68,6 +78,17 @@ record NewRow(
     insert.setLong(11, facts);
     insert.setLong(12, origin);
     insert.setLong(13, line);
+    OptionalDouble standard = standard(signal);
+    if (standard.isPresent()) {
+      insert.setDouble(14, standard.getAsDouble());
+    } else {
+      insert.setNull(14, Types.DOUBLE);
+    }
+  }
+
+  /** The internal standard's signal, where there is one. */
+  static OptionalDouble standard(Signal signal) {
+    return signal instanceof Signal.Value number ? number.standard() : OptionalDouble.empty();
   }
 
   /** 0 for a number, 4 for a number that is a mean with a spread. */
@@ -95,9 +116,9 @@ record NewRow(
     return BEHIND + ExactDouble.text(spread.sd()) + BEHIND + spread.readings();
   }
 
-  static Signal signal(int state, double value, String text) {
+  static Signal signal(int state, double value, String text, OptionalDouble standard) {
     return switch (state) {
-      case 0 -> new Signal.Value(value, text);
+      case 0 -> new Signal.Value(value, text, standard, Optional.empty());
       case 1 -> new Signal.NoNumber(Signal.State.OVER_RANGE, text);
       case 2 -> new Signal.NoNumber(Signal.State.BELOW_RANGE, text);
       case 3 -> new Signal.NoNumber(Signal.State.MISSING, text);
@@ -113,6 +134,7 @@ record NewRow(
         new Spread(
             ExactDouble.parse(text.substring(sd + 1, readings)),
             Integer.parseInt(text.substring(readings + 1)));
-    return new Signal.Value(value, text.substring(0, sd), Optional.of(spread));
+    return new Signal.Value(
+        value, text.substring(0, sd), OptionalDouble.empty(), Optional.of(spread));
   }
 }

@@ -5,30 +5,31 @@ import java.sql.SQLException;
 import java.time.Instant;
 import java.time.LocalDate;
 import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.Collections;
 import java.util.Comparator;
+import java.util.HashMap;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalLong;
 import java.util.Set;
-import java.util.stream.Stream;
-import org.spikewright.reading.Batch;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.SampleId;
 import org.spikewright.reading.Subject;
 import org.spikewright.table.Position;
-import org.spikewright.table.Source;
 
 /** Reads readings back, as the ledger stood after a given delivery. */
 final class ReadingQueries {
   private static final int REMEMBERED = 65_536;
-  private static final String ROWS =
-      "SELECT read_at, batch, preparation, flask, replicate, nth, signal, state, text, facts,"
-          + " origin, line_no FROM reading WHERE subject = ? ";
-  private static final String KEY_ORDER =
-      " ORDER BY read_at, batch, preparation, flask, replicate, nth";
+
+  /** How many subjects are asked for in one statement. */
+  private static final int TOGETHER = 64;
+
+  private static final String SEVERAL = " IN (?" + ", ?".repeat(TOGETHER - 1) + ")";
+  private static final String IN_TIME = " AND read_at >= ? AND read_at < ? AND batch = 0";
 
   private static final Comparator<Recorded> ORDER =
       Comparator.comparing(
@@ -42,47 +43,13 @@ final class ReadingQueries {
   private final Words words;
   private final DayIndex days;
   private final long pauseMillis;
-  private final Map<Long, Origin> origins = new Recent<>(REMEMBERED);
+  private final Origins origins;
   private final Map<Subject, Long> subjects = new Recent<>(REMEMBERED);
-
-  /** What the readings of one table of one delivery have in common. */
-  private record Origin(
-      long arrival,
-      Instant arrivedAt,
-      Source source,
-      int column,
-      long batchId,
-      Batch batch,
-      boolean flaskMapped,
-      boolean replicateMapped) {}
-
-  /** One row of the table of readings. */
-  private record Stored(
-      long at,
-      long batch,
-      long preparation,
-      long flask,
-      long replicate,
-      int nth,
-      double signal,
-      int state,
-      String text,
-      long facts,
-      Origin origin,
-      long line) {
-
-    boolean sameReading(Stored other) {
-      return at == other.at
-          && batch == other.batch
-          && preparation == other.preparation
-          && flask == other.flask
-          && replicate == other.replicate;
-    }
-  }
 
   ReadingQueries(Sql sql, DayIndex days, long pauseMillis) {
     this.sql = sql;
     this.words = new Words(sql);
+    this.origins = new Origins(sql, words);
     this.days = days;
     this.pauseMillis = pauseMillis;
   }
@@ -103,16 +70,38 @@ final class ReadingQueries {
   }
 
   List<Recorded> readings(Subject subject, LocalDate day, long upTo) {
-    OptionalLong id = id(subject);
-    if (id.isEmpty()) {
-      return List.of();
+    return readings(List.of(subject), day, upTo).get(0);
+  }
+
+  /** The readings of each subject; many are asked for in one statement. */
+  List<List<Recorded>> readings(List<Subject> asked, LocalDate day, long upTo) {
+    List<List<Recorded>> each = new ArrayList<>(asked.size());
+    for (int from = 0; from < asked.size(); from += TOGETHER) {
+      few(
+          asked.subList(from, Math.min(asked.size(), from + TOGETHER)),
+          day.toEpochDay(),
+          upTo,
+          each);
     }
-    long epochDay = day.toEpochDay();
-    List<Stored> found = timed(id.getAsLong(), epochDay, upTo);
-    return Stream.concat(found.stream(), untimed(id.getAsLong(), epochDay, upTo).stream())
-        .map(row -> recorded(subject, row))
-        .sorted(ORDER)
-        .toList();
+    return each;
+  }
+
+  private void few(List<Subject> asked, long day, long upTo, List<List<Recorded>> each) {
+    // A place that is not needed, or whose subject is unknown, asks for a number that is never
+    // given.
+    Object[] ids = new Object[TOGETHER];
+    Arrays.fill(ids, Ids.NONE);
+    for (int i = 0; i < asked.size(); i++) {
+      ids[i] = id(asked.get(i)).orElse(Ids.NONE);
+    }
+    Map<Long, List<StoredReading>> windows = windows(ids, day, upTo);
+    Map<Long, List<Long>> batches = untimedBatches(ids, day, upTo);
+    for (int i = 0; i < asked.size(); i++) {
+      Long id = (Long) ids[i];
+      List<StoredReading> found = timed(id, day, upTo, windows.getOrDefault(id, List.of()));
+      List<Long> untimed = batches.getOrDefault(id, List.of());
+      each.add(recorded(asked.get(i), untimed.isEmpty() ? found : with(found, id, untimed, upTo)));
+    }
   }
 
   private Subject subject(ResultSet row) throws SQLException {
@@ -141,18 +130,35 @@ final class ReadingQueries {
             subject.instrument());
   }
 
+  /** For each subject what was read on the day, and a longest pause before and after. */
+  private Map<Long, List<StoredReading>> windows(Object[] subjects, long day, long upTo) {
+    Object[] arguments = Arrays.copyOf(subjects, TOGETHER + 2);
+    arguments[TOGETHER] = days.start(day) - pauseMillis;
+    arguments[TOGETHER + 1] = days.start(day + 1) + pauseMillis;
+    List<StoredReading> rows = rows(SEVERAL + IN_TIME, upTo, arguments);
+    Map<Long, List<StoredReading>> windows = new HashMap<>();
+    int from = 0;
+    for (int to = 1; to <= rows.size(); to++) {
+      if (to == rows.size() || rows.get(to).subject() != rows.get(from).subject()) {
+        windows.put(rows.get(from).subject(), rows.subList(from, to));
+        from = to;
+      }
+    }
+    return windows;
+  }
+
   /**
    * The day's timed readings, those that no long pause divides from them, and the rest of the
    * batches that delimit any of these.
    */
-  private List<Stored> timed(long subject, long day, long upTo) {
+  private List<StoredReading> timed(long subject, long day, long upTo, List<StoredReading> around) {
     long start = days.start(day);
     long end = days.start(day + 1);
     long from = start - pauseMillis;
     long to = end + pauseMillis;
+    List<StoredReading> window = around;
     while (true) {
-      List<Stored> window = between(subject, from, to, upTo);
-      List<Stored> run = run(window, start, end);
+      List<StoredReading> run = run(window, start, end);
       if (run.isEmpty()) {
         return run;
       }
@@ -165,11 +171,12 @@ final class ReadingQueries {
       long width = to - from;
       from = first - pauseMillis < from ? from - width : from;
       to = last + pauseMillis >= to ? to + width : to;
+      window = between(subject, from, to, upTo);
     }
   }
 
   /** The part of a window, ordered by time, that is linked to the readings of a day. */
-  private List<Stored> run(List<Stored> window, long start, long end) {
+  private List<StoredReading> run(List<StoredReading> window, long start, long end) {
     int low = 0;
     while (low < window.size() && window.get(low).at() < start) {
       low++;
@@ -191,9 +198,9 @@ final class ReadingQueries {
     return window.subList(low, high);
   }
 
-  private List<Stored> withDelimited(List<Stored> run, long subject, long upTo) {
+  private List<StoredReading> withDelimited(List<StoredReading> run, long subject, long upTo) {
     Set<Long> batches = new HashSet<>();
-    for (Stored row : run) {
+    for (StoredReading row : run) {
       if (row.origin().batch().delimits()) {
         batches.add(row.origin().batchId());
       }
@@ -203,7 +210,7 @@ final class ReadingQueries {
     }
     long first = run.get(0).at();
     long last = run.get(run.size() - 1).at();
-    List<Stored> all = new ArrayList<>(run);
+    List<StoredReading> all = new ArrayList<>(run);
     for (long batch : batches) {
       for (long day : delimitedDays(subject, batch, upTo)) {
         between(subject, days.start(day), days.start(day + 1), upTo).stream()
@@ -224,41 +231,48 @@ final class ReadingQueries {
         upTo);
   }
 
-  private List<Stored> untimed(long subject, long day, long upTo) {
-    List<Long> batches =
-        sql.list(
-            "SELECT batch FROM untimed_batch WHERE subject = ? AND day BETWEEN ? AND ?"
-                + " AND arrival <= ?",
-            row -> row.getLong(1),
-            subject,
-            day - DayNotes.UNTIMED_REACH_DAYS,
-            day + DayNotes.UNTIMED_REACH_DAYS,
-            upTo);
-    List<Stored> all = new ArrayList<>();
+  private Map<Long, List<Long>> untimedBatches(Object[] subjects, long day, long upTo) {
+    Object[] arguments = Arrays.copyOf(subjects, TOGETHER + 3);
+    arguments[TOGETHER] = day - DayNotes.UNTIMED_REACH_DAYS;
+    arguments[TOGETHER + 1] = day + DayNotes.UNTIMED_REACH_DAYS;
+    arguments[TOGETHER + 2] = upTo;
+    Map<Long, List<Long>> batches = new HashMap<>();
+    sql.list(
+            "SELECT subject, batch FROM untimed_batch WHERE subject"
+                + SEVERAL
+                + " AND day BETWEEN ? AND ? AND arrival <= ?",
+            row -> new long[] {row.getLong(1), row.getLong(2)},
+            arguments)
+        .forEach(row -> batches.computeIfAbsent(row[0], id -> new ArrayList<>()).add(row[1]));
+    return batches;
+  }
+
+  private List<StoredReading> with(
+      List<StoredReading> timed, long subject, List<Long> batches, long upTo) {
+    List<StoredReading> all = new ArrayList<>(timed);
     for (long batch : batches) {
-      List<Stored> rows =
-          sql.list(
-              ROWS + "AND read_at = 0 AND batch = ?" + KEY_ORDER, this::stored, subject, batch);
-      all.addAll(newest(rows, upTo));
+      all.addAll(rows(" = ? AND read_at = 0 AND batch = ?", upTo, subject, batch));
     }
     return all;
   }
 
-  private List<Stored> between(long subject, long from, long to, long upTo) {
-    List<Stored> rows =
+  private List<StoredReading> between(long subject, long from, long to, long upTo) {
+    return rows(" = ?" + IN_TIME, upTo, subject, from, to);
+  }
+
+  /** Rows in the order of the key, of each reading the newest version. */
+  private List<StoredReading> rows(String condition, long upTo, Object... arguments) {
+    List<StoredReading> rows =
         sql.list(
-            ROWS + "AND read_at >= ? AND read_at < ? AND batch = 0" + KEY_ORDER,
-            this::stored,
-            subject,
-            from,
-            to);
+            StoredReading.SELECT + condition, row -> StoredReading.read(row, origins), arguments);
+    StoredReading.sort(rows);
     return newest(rows, upTo);
   }
 
   /** The newest version of each reading that a delivery up to the limit brought. */
-  private static List<Stored> newest(List<Stored> rows, long upTo) {
-    List<Stored> newest = new ArrayList<>(rows.size());
-    for (Stored row : rows) {
+  private static List<StoredReading> newest(List<StoredReading> rows, long upTo) {
+    List<StoredReading> newest = new ArrayList<>(rows.size());
+    for (StoredReading row : rows) {
       if (row.origin().arrival() > upTo) {
         continue;
       }
@@ -272,24 +286,23 @@ final class ReadingQueries {
     return newest;
   }
 
-  private Stored stored(ResultSet row) throws SQLException {
-    return new Stored(
-        row.getLong(1),
-        row.getLong(2),
-        row.getLong(3),
-        row.getLong(4),
-        row.getLong(5),
-        row.getInt(6),
-        row.getDouble(7),
-        row.getInt(8),
-        Sql.text(row, 9),
-        row.getLong(10),
-        origin(row.getLong(11)),
-        row.getLong(12));
+  private List<Recorded> recorded(Subject subject, List<StoredReading> rows) {
+    List<Recorded> recorded = new ArrayList<>(rows.size());
+    boolean inOrder = true;
+    long last = Long.MIN_VALUE;
+    for (StoredReading row : rows) {
+      recorded.add(recorded(subject, row));
+      inOrder &= row.at() > last;
+      last = row.at();
+    }
+    if (!inOrder) {
+      recorded.sort(ORDER);
+    }
+    return Collections.unmodifiableList(recorded);
   }
 
-  private Recorded recorded(Subject subject, Stored row) {
-    Origin origin = row.origin();
+  private Recorded recorded(Subject subject, StoredReading row) {
+    Origins.Origin origin = row.origin();
     Reading reading =
         new Reading(
             subject,
@@ -301,40 +314,9 @@ final class ReadingQueries {
             row.batch() == Ids.NONE
                 ? Optional.of(Instant.ofEpochMilli(row.at()))
                 : Optional.empty(),
-            NewRow.signal(row.state(), row.signal(), row.text()),
+            NewRow.signal(row.state(), row.signal(), row.text(), row.standard()),
             words.facts(row.facts()),
             new Position(origin.source(), row.line(), origin.column()));
     return new Recorded(reading, origin.arrival(), origin.arrivedAt(), row.nth());
-  }
-
-  private Origin origin(long id) {
-    Origin known = origins.get(id);
-    if (known == null) {
-      known =
-          sql.first(
-                  "SELECT o.arrival, a.arrived_at, o.file, o.sheet, o.column_no, o.batch,"
-                      + " o.delimits, o.flask_mapped, o.replicate_mapped FROM origin o"
-                      + " JOIN arrival a ON a.number = o.arrival WHERE o.id = ?",
-                  this::origin,
-                  id)
-              .orElseThrow(() -> new IllegalStateException("the ledger lacks origin " + id));
-      origins.put(id, known);
-    }
-    return known;
-  }
-
-  private Origin origin(ResultSet row) throws SQLException {
-    long sheet = row.getLong(4);
-    Optional<String> sheetName =
-        sheet == Ids.NONE ? Optional.empty() : Optional.of(words.name(sheet));
-    return new Origin(
-        row.getLong(1),
-        Instant.ofEpochMilli(row.getLong(2)),
-        new Source(words.name(row.getLong(3)), sheetName),
-        row.getInt(5),
-        row.getLong(6),
-        new Batch(words.name(row.getLong(6)), row.getInt(7) != 0),
-        row.getInt(8) != 0,
-        row.getInt(9) != 0);
   }
 }

@@ -5,6 +5,7 @@ import java.util.ArrayList;
 import java.util.BitSet;
 import java.util.List;
 import java.util.Map;
+import java.util.OptionalDouble;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Signal;
 import org.spikewright.table.Position;
@@ -42,11 +43,16 @@ final class ReadingWriter {
   /** A reading, and what stands for its batch and its origin. */
   private record Seen(Reading reading, long batch, long origin) {
     boolean isOf(Reading other) {
-      return reading.batch().equals(other.batch())
-          && reading.position().source().equals(other.position().source())
+      return same(reading.batch(), other.batch())
+          && same(reading.position().source(), other.position().source())
           && reading.position().column() == other.position().column()
           && reading.flaskMapped() == other.flaskMapped()
           && reading.replicateMapped() == other.replicateMapped();
+    }
+
+    /** Mostly one object, whose content then need not be compared. */
+    private static boolean same(Object one, Object other) {
+      return one == other || one.equals(other);
     }
   }
 
@@ -55,6 +61,7 @@ final class ReadingWriter {
       int nth,
       double signal,
       int state,
+      OptionalDouble standard,
       long facts,
       long batch,
       boolean delimits,
@@ -99,7 +106,7 @@ final class ReadingWriter {
 
   /** Writes what is waiting, in the order of the key; rows of one identity keep their order. */
   void flush() {
-    waiting.sort(NewRow.KEY_ORDER);
+    waiting.sort(NewRow::byKey);
     int[] added =
         sql.guarded(
             c -> {
@@ -153,7 +160,8 @@ final class ReadingWriter {
 
   private Newest newest(NewRow row) {
     return sql.first(
-            "SELECT r.nth, r.signal, r.state, r.facts, o.batch, o.delimits, o.arrival, r.text"
+            "SELECT r.nth, r.signal, r.state, r.facts, o.batch, o.delimits, o.arrival,"
+                + " r.standard, r.text"
                 + " FROM reading r JOIN origin o ON o.id = r.origin"
                 + " WHERE r.subject = ? AND r.read_at = ? AND r.batch = ? AND r.preparation = ?"
                 + " AND r.flask = ? AND r.replicate = ? ORDER BY r.nth DESC LIMIT 1",
@@ -162,11 +170,12 @@ final class ReadingWriter {
                     found.getInt(1),
                     found.getDouble(2),
                     found.getInt(3),
+                    Sql.optionalDouble(found, 8),
                     found.getLong(4),
                     found.getLong(5),
                     found.getInt(6) != 0,
                     found.getLong(7),
-                    found.getString(8)),
+                    found.getString(9)),
             row.subject(),
             row.at(),
             row.batch(),
@@ -208,6 +217,7 @@ final class ReadingWriter {
     long delimitedBy = row.timed() && newest.delimits() ? newest.batch() : Ids.NONE;
     return newest.signal() == signal
         && newest.state() == NewRow.state(row.signal())
+        && newest.standard().equals(NewRow.standard(row.signal()))
         && newest.facts() == row.facts()
         && sameSpread(newest, row)
         && delimitedBy == row.delimitedBy();

@@ -7,6 +7,7 @@ import org.spikewright.reading.SampleId;
 import org.spikewright.reading.Subject;
 import org.spikewright.series.SeriesKey;
 import org.spikewright.summary.ResultRow;
+import org.spikewright.summary.RowEvidence;
 
 /** A result as text that gives back every double exactly. */
 final class ResultCodec {
@@ -26,6 +27,7 @@ final class ResultCodec {
     out.add(row.slope()).add(row.signalIntercept()).add(row.residualSd());
     out.add(row.residualDf().isPresent() ? Integer.toString(row.residualDf().getAsInt()) : "");
     out.add(row.r()).add(row.design()).add(row.sourceFiles());
+    evidence(out, row.evidence());
     return out.toString();
   }
 
@@ -59,6 +61,31 @@ final class ResultCodec {
         optionalInt(in.text()),
         in.optionalDouble(),
         in.text(),
+        in.list(),
+        evidence(in));
+  }
+
+  private static void evidence(Fields.Writer out, RowEvidence evidence) {
+    out.add(evidence.pool()).add(evidence.poolSeries());
+    out.add(evidence.poolStandardError()).add(evidence.poolLower95()).add(evidence.poolUpper95());
+    out.add(evidence.poolDf()).add(evidence.bendP()).add(evidence.bentValue());
+    out.add(evidence.bendAllowance()).add(evidence.driftExposure()).add(evidence.effectiveDf());
+    out.add(evidence.contributions());
+  }
+
+  private static RowEvidence evidence(Fields.Reader in) {
+    return new RowEvidence(
+        in.text(),
+        in.number(),
+        in.optionalDouble(),
+        in.optionalDouble(),
+        in.optionalDouble(),
+        in.optionalDouble(),
+        in.optionalDouble(),
+        in.optionalDouble(),
+        in.optionalDouble(),
+        in.optionalDouble(),
+        in.optionalDouble(),
         in.list());
   }
 

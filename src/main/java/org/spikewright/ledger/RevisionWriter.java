@@ -6,8 +6,12 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalLong;
+import org.spikewright.analysis.NightEvidence;
+import org.spikewright.analysis.PoolKey;
+import org.spikewright.fit.PooledSeries;
 import org.spikewright.series.SeriesKey;
 import org.spikewright.summary.ResultRow;
 
@@ -79,6 +83,18 @@ public final class RevisionWriter implements AutoCloseable {
             ? newest.get().id()
             : add(series, newest.map(Newest::nth).orElse(0) + 1, inputsSha256, row, content);
     shown.add(new Shown(row.key(), version));
+  }
+
+  /**
+   * Stores what the pools of a closed day came to, for its later revisions and for later days;
+   * {@link IllegalStateException} for a day in progress.
+   */
+  public void pools(NightEvidence evidence, Map<PoolKey, List<PooledSeries>> toRemember) {
+    requireOpen();
+    if (start.inProgress()) {
+      throw new IllegalStateException("the pools of a day in progress are provisional");
+    }
+    new PoolStore(sql).store(start.labDay(), start.programVersion(), evidence, toRemember, ids);
   }
 
   /**

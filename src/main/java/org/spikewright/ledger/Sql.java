@@ -9,6 +9,7 @@ import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import java.util.OptionalLong;
 import org.sqlite.SQLiteErrorCode;
 import org.sqlite.SQLiteException;
@@ -214,6 +215,12 @@ final class Sql implements AutoCloseable {
         statement.setObject(i + 1, arguments[i]);
       }
     }
+  }
+
+  /** A number that may be absent. */
+  static OptionalDouble optionalDouble(ResultSet row, int column) throws SQLException {
+    double number = row.getDouble(column);
+    return row.wasNull() ? OptionalDouble.empty() : OptionalDouble.of(number);
   }
 
   static String text(ResultSet row, int column) throws SQLException {

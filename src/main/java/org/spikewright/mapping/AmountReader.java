@@ -25,7 +25,7 @@ public final class AmountReader {
 
   /** Reads a cell. A cell that the file stores as a number needs a declared unit. */
   public Understood<Measured> read(Fact fact, Cell cell, Optional<Unit> declared) {
-    boolean bare = fact == Fact.BASELINE || fact.kind() == Fact.Kind.SPREAD;
+    boolean bare = fact.isInSignalUnits() || fact.kind() == Fact.Kind.SPREAD;
     Optional<Unit> unit = declared.isEmpty() && bare ? Optional.of(Unit.ONE) : declared;
     if (cell instanceof Cell.Number number) {
       return unit.isPresent()
@@ -97,8 +97,12 @@ public final class AmountReader {
     if (!fact.admits(kept)) {
       return new Understood.Nothing<>(Reason.OUT_OF_BOUNDS, found, fact.expectation());
     }
+    OptionalDouble keptTolerance =
+        fraction && tolerance.isPresent()
+            ? OptionalDouble.of(tolerance.getAsDouble() * unit.to(Unit.ONE))
+            : tolerance;
     return new Understood.Value<>(
-        new Measured(new Quantity(kept, fraction ? Unit.ONE : unit), tolerance));
+        new Measured(new Quantity(kept, fraction ? Unit.ONE : unit), keptTolerance));
   }
 
   private Understood<Measured> noUnit(Fact fact, String found) {

@@ -50,7 +50,7 @@ public final class DilutionReader {
       return ratio(stripped, colon);
     }
     if (to > 0) {
-      return factor(stripped, volumes(stripped.substring(0, to), stripped.substring(to + 4)));
+      return volumes(stripped, stripped.substring(0, to), stripped.substring(to + 4));
     }
     if (plus > 0 && Character.toLowerCase(stripped.charAt(plus - 1)) != 'e') {
       return factor(stripped, parts(stripped, plus));
@@ -87,16 +87,34 @@ public final class DilutionReader {
     return quotient(OptionalDouble.of(part.getAsDouble() + other.getAsDouble()), part);
   }
 
-  private OptionalDouble volumes(String taken, String after) {
+  private Understood<Measured> volumes(String text, String taken, String after) {
     AmountReader amounts = new AmountReader(notation);
     Understood<Measured> from = amounts.read(Fact.ALIQUOT_VOLUME, taken, Optional.empty());
     Understood<Measured> into = amounts.read(Fact.ALIQUOT_VOLUME, after, Optional.empty());
     if (from instanceof Understood.Value<Measured> a
         && into instanceof Understood.Value<Measured> b) {
       Unit unit = a.value().quantity().unit();
-      return OptionalDouble.of(b.value().in(unit) / a.value().in(unit));
+      double factor = b.value().in(unit) / a.value().in(unit);
+      return factor(text, OptionalDouble.of(factor))
+          .then(value -> new Understood.Value<>(with(value, a.value(), b.value())));
     }
-    return OptionalDouble.empty();
+    return factor(text, OptionalDouble.empty());
+  }
+
+  /**
+   * The factor with the half-width whose rectangular standard uncertainty is that of the quotient
+   * of two volumes with rectangular tolerances.
+   */
+  private static Measured with(Measured factor, Measured taken, Measured after) {
+    if (taken.tolerance().isEmpty() && after.tolerance().isEmpty()) {
+      return factor;
+    }
+    double relative = Math.hypot(relative(taken), relative(after));
+    return new Measured(factor.quantity(), OptionalDouble.of(relative * factor.quantity().value()));
+  }
+
+  private static double relative(Measured volume) {
+    return volume.tolerance().orElse(0) / volume.quantity().value();
   }
 
   private static OptionalDouble quotient(OptionalDouble above, OptionalDouble below) {

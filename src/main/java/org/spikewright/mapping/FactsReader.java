@@ -11,8 +11,10 @@ import java.util.function.Predicate;
 import org.spikewright.mapping.Rejection.Reason;
 import org.spikewright.quantity.Measured;
 import org.spikewright.quantity.Unit;
+import org.spikewright.reading.Accuracies;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Role;
+import org.spikewright.reading.Stock;
 import org.spikewright.table.Cell;
 
 /**
@@ -41,6 +43,8 @@ final class FactsReader {
   private final NameReader names;
   private final AmountReader amounts;
   private final DilutionReader dilutions;
+  private final StockReader stocks;
+  private final AccuracyReader accuracies;
   private final Fact[] read;
   private final Fact[] needed;
   private final Map<String, Facts> known = new HashMap<>();
@@ -52,6 +56,8 @@ final class FactsReader {
     this.lookup = lookup;
     this.amounts = new AmountReader(mapping.notation());
     this.dilutions = new DilutionReader(mapping.notation());
+    this.stocks = new StockReader(mapping.shelf().stocks(), mapping.notation());
+    this.accuracies = new AccuracyReader(mapping, lookup);
     this.read = facts(fact -> mapping.places().isRead(fact));
     this.needed = facts(fact -> mapping.places().isNamed(fact));
   }
@@ -66,6 +72,7 @@ final class FactsReader {
   private static boolean isOfFlask(Fact fact) {
     return fact.kind() == Fact.Kind.AMOUNT
         || fact.kind() == Fact.Kind.DILUTION
+        || fact.kind() == Fact.Kind.TOOL
         || fact == Fact.PREPARATION
         || fact == Fact.RESULT_UNIT;
   }
@@ -106,7 +113,7 @@ final class FactsReader {
     for (Fact fact : needed) {
       if (fact == Fact.PREPARATION) {
         preparation = names.read(fact, troubles);
-      } else if (fact != Fact.RESULT_UNIT) {
+      } else if (fact != Fact.RESULT_UNIT && fact.kind() != Fact.Kind.TOOL) {
         amount(fact, analyte, troubles).ifPresent(value -> values.put(fact, value));
       }
     }
@@ -114,7 +121,14 @@ final class FactsReader {
     if (!troubles.isEmpty() || resultUnit.isEmpty()) {
       return new Facts.Unknown(troubles);
     }
-    FlaskDraft draft = new FlaskDraft(mapping.method(), values, resultUnit.get(), analyte);
+    Optional<Stock> stock = stock(analyte);
+    Accuracies known = accuracies.read(values, stock, analyte, troubles);
+    if (!troubles.isEmpty()) {
+      return new Facts.Unknown(troubles.stream().map(this::placed).toList());
+    }
+    FlaskDraft draft =
+        new FlaskDraft(
+            mapping.method(), values, resultUnit.get(), analyte, known, stock.map(Stock::bottle));
     Optional<Trouble> contradiction = draft.contradiction().map(this::placed);
     if (contradiction.isPresent()) {
       return new Facts.Unknown(List.of(contradiction.get()));
@@ -141,7 +155,7 @@ final class FactsReader {
   private Optional<Measured> amount(Fact fact, String analyte, List<Trouble> troubles) {
     Optional<Given> given = lookup.find(fact);
     if (given.isPresent()) {
-      return understood(fact, given.get(), troubles);
+      return understood(fact, given.get(), analyte, troubles);
     }
     PerAnalyte<Measured> fixed =
         mapping.places().fixedAmounts().getOrDefault(fact, PerAnalyte.none());
@@ -153,11 +167,23 @@ final class FactsReader {
     return value;
   }
 
-  private Optional<Measured> understood(Fact fact, Given given, List<Trouble> troubles) {
+  /** The named stock that the row, or the mapping for all rows, names. */
+  private Optional<Stock> stock(String analyte) {
+    Optional<Given> given = lookup.find(Fact.STOCK);
+    return given.isPresent()
+        ? stocks.named(given.get().text())
+        : mapping.places().fixedStocks().of(analyte).flatMap(stocks::named);
+  }
+
+  private Optional<Measured> understood(
+      Fact fact, Given given, String analyte, List<Trouble> troubles) {
+    Optional<Unit> unit = given.form().unit();
     Understood<Measured> result =
-        fact.kind() == Fact.Kind.DILUTION
-            ? dilutions.read(given.cell())
-            : amounts.read(fact, given.cell(), given.form().unit());
+        switch (fact) {
+          case DILUTION -> dilutions.read(given.cell());
+          case STOCK -> stocks.read(given.cell(), unit, analyte);
+          default -> amounts.read(fact, given.cell(), unit);
+        };
     if (result instanceof Understood.Value<Measured> value) {
       return Optional.of(value.value());
     }

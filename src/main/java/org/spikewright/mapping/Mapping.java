@@ -4,6 +4,7 @@ import java.util.LinkedHashSet;
 import java.util.List;
 import java.util.Set;
 import org.spikewright.quantity.NumberGrammar;
+import org.spikewright.reading.Shelf;
 import org.spikewright.table.TableShape;
 
 /**
@@ -21,6 +22,7 @@ import org.spikewright.table.TableShape;
  * @param words signals that are no numbers
  * @param rows which rows are left out, and what the others are
  * @param method what the method says
+ * @param shelf the stocks and the glassware that may be named
  */
 public record Mapping(
     String name,
@@ -34,7 +36,8 @@ public record Mapping(
     Places places,
     SignalWords words,
     RowRules rows,
-    MethodRule method) {
+    MethodRule method,
+    Shelf shelf) {
 
   /**
    * Whether the mapping claims a file.
@@ -78,13 +81,37 @@ public record Mapping(
   /** The same with other places. */
   Mapping with(Places other) {
     return new Mapping(
-        name, instrument, sha256, text, files, shape, table, notation, other, words, rows, method);
+        name,
+        instrument,
+        sha256,
+        text,
+        files,
+        shape,
+        table,
+        notation,
+        other,
+        words,
+        rows,
+        method,
+        shelf);
   }
 
   /** The same with another grammar of numbers. */
   Mapping with(NumberGrammar numbers) {
     Notation other = notation.with(numbers);
     return new Mapping(
-        name, instrument, sha256, text, files, shape, table, other, places, words, rows, method);
+        name,
+        instrument,
+        sha256,
+        text,
+        files,
+        shape,
+        table,
+        other,
+        places,
+        words,
+        rows,
+        method,
+        shelf);
   }
 }

@@ -40,7 +40,12 @@ final class NumberEvidence {
 
   private static final List<Fact> NUMBERS =
       Arrays.stream(Fact.values())
-          .filter(fact -> fact.kind() != Fact.Kind.NAME && fact.kind() != Fact.Kind.TIME)
+          .filter(
+              fact ->
+                  switch (fact.kind()) {
+                    case SIGNAL, SPREAD, AMOUNT, DILUTION -> true;
+                    case NAME, TOOL, TIME -> false;
+                  })
           .toList();
 
   private final Mapping mapping;
@@ -49,6 +54,7 @@ final class NumberEvidence {
   private final List<Fact> read;
   private final int[] columns;
   private final boolean inNames;
+  private final StockReader stocks;
   private final List<NumberGrammar> point;
   private final List<NumberGrammar> comma;
 
@@ -59,6 +65,7 @@ final class NumberEvidence {
     this.read = NUMBERS.stream().filter(fact -> mapping.places().isRead(fact)).toList();
     this.columns = columns(mapping.places(), header);
     this.inNames = read.stream().anyMatch(around::containsKey);
+    this.stocks = new StockReader(mapping.shelf().stocks(), mapping.notation());
     Optional<Character> thousands = mapping.notation().numbers().thousandsMark();
     this.point = grammars('.', ',', thousands);
     this.comma = grammars(',', '.', thousands);
@@ -123,8 +130,7 @@ final class NumberEvidence {
 
   private Witness witness(Fact fact, Given given, String text, Row row) {
     Position position = given.index() < 0 ? row.position() : row.at(given.index());
-    boolean word = fact == Fact.SIGNAL && mapping.words().state(text).isPresent();
-    if (word || !hasMark(text)) {
+    if (!hasMark(text) || isWord(fact, text)) {
       return new Witness(Verdict.NOTHING, text, position, "");
     }
     Optional<Measured> byPoint = value(fact, given, point);
@@ -134,6 +140,12 @@ final class NumberEvidence {
         text.strip(),
         position,
         shown(byPoint) + " with a decimal point and " + shown(byComma) + " with a decimal comma");
+  }
+
+  /** A declared word, or the name of a stock. */
+  private boolean isWord(Fact fact, String text) {
+    return fact.kind() == Fact.Kind.SIGNAL && mapping.words().state(text).isPresent()
+        || fact == Fact.STOCK && stocks.named(text).isPresent();
   }
 
   private static Verdict verdict(Optional<Measured> byPoint, Optional<Measured> byComma) {
@@ -156,7 +168,7 @@ final class NumberEvidence {
   }
 
   private Optional<Measured> value(Fact fact, Given given, NumberGrammar grammar) {
-    if (fact == Fact.SIGNAL) {
+    if (fact.kind() == Fact.Kind.SIGNAL) {
       OptionalDouble signal = grammar.parse(given.text());
       return signal.isPresent()
           ? Optional.of(Measured.exactly(new Quantity(signal.getAsDouble(), Unit.ONE)))

@@ -18,6 +18,8 @@ import org.spikewright.quantity.Measured;
  * @param fixedNames names that hold for every row
  * @param fixedAmounts quantities that hold for every row, or for every row of an analyte; a
  *     dilution is its factor, a dry mass its fraction, both in unit 1
+ * @param fixedStocks the names of fixed stocks that have one; their concentrations stand among the
+ *     fixed amounts
  */
 public record Places(
     Map<Fact, Column> columns,
@@ -27,7 +29,8 @@ public record Places(
     List<Named> sheetName,
     List<Named> fileName,
     Map<Fact, String> fixedNames,
-    Map<Fact, PerAnalyte<Measured>> fixedAmounts) {
+    Map<Fact, PerAnalyte<Measured>> fixedAmounts,
+    PerAnalyte<String> fixedStocks) {
 
   /** Copies its collections. */
   public Places {
@@ -90,7 +93,15 @@ public record Places(
   /** The same with other columns. */
   Places with(Map<Fact, Column> others) {
     return new Places(
-        others, labels, headers, titles, sheetName, fileName, fixedNames, fixedAmounts);
+        others,
+        labels,
+        headers,
+        titles,
+        sheetName,
+        fileName,
+        fixedNames,
+        fixedAmounts,
+        fixedStocks);
   }
 
   /** Whether a fact stands anywhere. */

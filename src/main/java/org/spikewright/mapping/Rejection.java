@@ -19,6 +19,7 @@ public record Rejection(
     NOT_A_NUMBER("not a number"),
     UNIT_DOES_NOT_FIT("unit does not fit"),
     FACT_MISSING("fact missing"),
+    NAME_UNKNOWN("name not known"),
     OUT_OF_BOUNDS("value out of bounds"),
     NOT_A_TIME("not a time"),
     ROLE_UNKNOWN("role not recognised"),

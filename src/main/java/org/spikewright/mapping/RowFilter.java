@@ -1,6 +1,8 @@
 package org.spikewright.mapping;
 
+import java.util.EnumMap;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
 import java.util.stream.Collectors;
 import org.spikewright.mapping.Rejection.Reason;
@@ -24,6 +26,13 @@ final class RowFilter {
   private record BoundSkip(RowRules.Skip rule, int column) {}
 
   private static final Kind LEFT_OUT = new Kind.LeftOut();
+  private static final Map<Role, Kind> MEASURED = new EnumMap<>(Role.class);
+
+  static {
+    for (Role role : Role.values()) {
+      MEASURED.put(role, new Kind.Measured(role));
+    }
+  }
 
   private final RowRules rules;
   private final List<BoundSkip> skips;
@@ -79,7 +88,7 @@ final class RowFilter {
 
   private Kind role(Row row) {
     if (roleColumn.isEmpty()) {
-      return new Kind.Measured(rules.role());
+      return MEASURED.get(rules.role());
     }
     RowRules.Roles roles = rules.roles().get();
     String text = row.cell(roleColumn.get()).shown();
@@ -94,7 +103,7 @@ final class RowFilter {
               "one of " + words(roles)));
     }
     boolean holdsAdditions = role.get() != Role.CALIBRATION && role.get() != Role.DRIFT_CHECK;
-    return holdsAdditions ? new Kind.Measured(role.get()) : LEFT_OUT;
+    return holdsAdditions ? MEASURED.get(role.get()) : LEFT_OUT;
   }
 
   private static String words(RowRules.Roles roles) {

@@ -53,13 +53,19 @@ public final class RowMapper implements RowSink {
   /** Takes the next row; wants no more once the file cannot be mapped. */
   @Override
   public boolean accept(Row row) {
-    if (fault.isEmpty() && !source.equals(Optional.of(row.source()))) {
+    if (fault.isEmpty() && !isOfThisTable(row)) {
       begin(row.source());
     }
     if (fault.isEmpty()) {
       fault = sheet.orElseThrow().take(row);
     }
     return fault.isEmpty();
+  }
+
+  /** The rows of a table mostly share one object, so that its names are not compared. */
+  private boolean isOfThisTable(Row row) {
+    return source.isPresent()
+        && (source.get() == row.source() || source.get().equals(row.source()));
   }
 
   private void begin(Source next) {

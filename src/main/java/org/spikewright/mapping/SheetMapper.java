@@ -7,12 +7,9 @@ import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
-import java.util.OptionalDouble;
 import java.util.Set;
 import java.util.stream.Stream;
 import org.spikewright.mapping.FactsReader.Facts;
-import org.spikewright.mapping.Rejection.Reason;
-import org.spikewright.quantity.Quantity;
 import org.spikewright.reading.Addition;
 import org.spikewright.reading.Batch;
 import org.spikewright.reading.FlaskFacts;
@@ -21,13 +18,10 @@ import org.spikewright.reading.Role;
 import org.spikewright.reading.SampleId;
 import org.spikewright.reading.Signal;
 import org.spikewright.reading.Subject;
-import org.spikewright.table.Cell;
 import org.spikewright.table.Row;
 
 /** Maps the data rows of one table, below its header. */
 final class SheetMapper {
-  private static final int LONGEST_SIGNAL = 200;
-
   /** What became of a row. */
   sealed interface Fate {
     /** It is a reading. */
@@ -48,11 +42,12 @@ final class SheetMapper {
   private final RowLookup lookup;
   private final NameReader names;
   private final FactsReader facts;
+  private final SignalReader signals;
   private final SpreadReader spreads;
   private final RowFilter filter;
   private final Set<Fact> namedFacts;
   private final boolean batchInRow;
-  private final Map<FlaskFacts, Map<Quantity, FlaskFacts>> summed = new HashMap<>();
+  private final Map<FlaskFacts, Map<Addition, FlaskFacts>> summed = new HashMap<>();
   private Subjects subjects = new Subjects("");
 
   SheetMapper(Mapping mapping, Header header, FileState file, Map<Fact, List<Outside>> around) {
@@ -62,6 +57,7 @@ final class SheetMapper {
     this.lookup = new RowLookup(mapping.places(), header, around);
     this.names = new NameReader(mapping.places(), lookup);
     this.facts = new FactsReader(mapping, lookup, names);
+    this.signals = new SignalReader(mapping, lookup);
     this.spreads = new SpreadReader(mapping, lookup);
     this.filter = new RowFilter(mapping.rows(), header);
     this.namedFacts = EnumSet.noneOf(Fact.class);
@@ -94,7 +90,10 @@ final class SheetMapper {
     Optional<Facts.Known> known = subject.flatMap(whose -> facts(whose.analyte(), role, troubles));
     boolean placed = troubles.isEmpty();
     Optional<Instant> time = time(troubles);
-    Optional<Signal> signal = signal(troubles).flatMap(read -> spreads.with(read, troubles));
+    Optional<Signal> signal =
+        signals
+            .read(known.map(Facts.Known::facts), troubles)
+            .flatMap(read -> spreads.with(read, troubles));
     if (!placed) {
       return refused(row, troubles);
     }
@@ -241,47 +240,6 @@ final class SheetMapper {
     return Optional.empty();
   }
 
-  private Optional<Signal> signal(List<Trouble> troubles) {
-    Optional<Given> given = lookup.find(Fact.SIGNAL);
-    if (given.isEmpty()) {
-      Optional<Signal.State> blank = mapping.words().state("");
-      if (blank.isEmpty()) {
-        troubles.add(
-            lookup.missing(
-                Fact.SIGNAL,
-                "a number, or a word declared under [words] (\"\" is the blank cell)",
-                false));
-      }
-      return blank.map(state -> new Signal.NoNumber(state, ""));
-    }
-    return taken(signal(given.get().cell()), given.get(), troubles);
-  }
-
-  private Understood<Signal> signal(Cell cell) {
-    String text = cell.shown();
-    String expected =
-        "a number with "
-            + AmountReader.markInWords(mapping.notation())
-            + ", or a word declared under [words]";
-    if (text.length() > LONGEST_SIGNAL) {
-      return new Understood.Nothing<>(Reason.NOT_A_NUMBER, text, expected);
-    }
-    Optional<Signal.State> state = mapping.words().state(text);
-    if (state.isPresent()) {
-      return new Understood.Value<>(new Signal.NoNumber(state.get(), text));
-    }
-    if (cell instanceof Cell.Number number) {
-      return new Understood.Value<>(new Signal.Value(number.value(), number.raw()));
-    }
-    if (!(cell instanceof Cell.Text)) {
-      return new Understood.Nothing<>(Reason.UNUSABLE_CELL, text, expected);
-    }
-    OptionalDouble value = mapping.notation().numbers().parse(text);
-    return value.isPresent()
-        ? new Understood.Value<>(new Signal.Value(value.getAsDouble(), text))
-        : new Understood.Nothing<>(Reason.NOT_A_NUMBER, text, expected);
-  }
-
   /** The facts with the vessel's total in place of the step's own addition. */
   private Optional<FlaskFacts> summed(Draft draft, List<Trouble> troubles) {
     FlaskFacts own = draft.known().facts();
@@ -290,15 +248,15 @@ final class SheetMapper {
     }
     Steps.Vessel vessel =
         new Steps.Vessel(draft.subject(), draft.batch().name(), draft.preparation());
-    Understood<Quantity> total =
-        file.steps().total(vessel, draft.flaskShown(), own.addition().amount());
-    if (total instanceof Understood.Value<Quantity> value) {
+    Understood<Addition> total =
+        file.steps().total(vessel, draft.flaskShown(), (Addition.OfStock) own.addition());
+    if (total instanceof Understood.Value<Addition> value) {
       return Optional.of(
           summed
               .computeIfAbsent(own, key -> new HashMap<>())
-              .computeIfAbsent(value.value(), sum -> withTotal(own, sum)));
+              .computeIfAbsent(value.value(), own::with));
     }
-    Understood.Nothing<Quantity> nothing = (Understood.Nothing<Quantity>) total;
+    Understood.Nothing<Addition> nothing = (Understood.Nothing<Addition>) total;
     Optional<Given> given = lookup.find(Fact.ADDITION_VOLUME);
     troubles.add(
         new Trouble(
@@ -308,19 +266,5 @@ final class SheetMapper {
             Said.quoted(nothing.found()),
             nothing.expected()));
     return Optional.empty();
-  }
-
-  private static FlaskFacts withTotal(FlaskFacts own, Quantity total) {
-    Addition addition = new Addition.OfStock(total, ((Addition.OfStock) own.addition()).stock());
-    return new FlaskFacts(
-        own.role(),
-        own.design(),
-        addition,
-        own.aliquot(),
-        own.finalVolume(),
-        own.startVolume(),
-        own.preparation(),
-        own.blanks(),
-        own.method());
   }
 }

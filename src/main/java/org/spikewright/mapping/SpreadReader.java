@@ -54,7 +54,8 @@ final class SpreadReader {
     double sd = absolute(((Understood.Value<Measured>) read).value(), mean.value());
     if (readings > 1) {
       return Optional.of(
-          new Signal.Value(mean.value(), mean.text(), Optional.of(new Spread(sd, readings))));
+          new Signal.Value(
+              mean.value(), mean.text(), mean.standard(), Optional.of(new Spread(sd, readings))));
     }
     if (sd == 0) {
       return Optional.of(mean);

@@ -25,6 +25,8 @@ final class TimeReader {
   private final Optional<DateTimeFormatter> formatter;
   private final String expected;
   private Instant previous = Instant.MIN;
+  private String lastText = "";
+  private Understood<Instant> last;
 
   TimeReader(TimeForm form) {
     this.form = form;
@@ -46,7 +48,13 @@ final class TimeReader {
     if (text.length() > LONGEST) {
       return notATime(text);
     }
-    return formatter.isPresent() ? byPattern(formatter.get(), text) : iso(text);
+    // Flasks and analytes are often read at one time; the same text next to itself is the same
+    // time.
+    if (last == null || !text.equals(lastText)) {
+      last = formatter.isPresent() ? byPattern(formatter.get(), text) : iso(text);
+      lastText = text;
+    }
+    return last;
   }
 
   private static String text(List<Cell> cells) {

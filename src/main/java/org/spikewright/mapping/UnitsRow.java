@@ -63,7 +63,7 @@ final class UnitsRow {
   private Optional<Unmappable> fault(
       Fact fact, Places.Column column, int index, String said, Optional<Unit> unit) {
     Optional<Unit> declared = column.form().unit();
-    boolean ofSignal = fact == Fact.SIGNAL_SD || fact == Fact.BASELINE;
+    boolean ofSignal = fact == Fact.SIGNAL_SD || fact.isInSignalUnits();
     if (ofSignal && declared.isEmpty()) {
       return Optional.empty();
     }

@@ -9,6 +9,8 @@ public enum Dimension {
   MASS_PER_MASS("a mass fraction"),
   AMOUNT_PER_VOLUME("an amount concentration"),
   AMOUNT_PER_MASS("a molality"),
+  POTENTIAL("a potential"),
+  MASS_PER_AMOUNT("a molar mass"),
   NUMBER("a plain number");
 
   private final String words;

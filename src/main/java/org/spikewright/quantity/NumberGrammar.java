@@ -20,6 +20,18 @@ public record NumberGrammar(char decimalMark, Optional<Character> thousandsMark)
   /** Decimal comma, no grouping. */
   public static final NumberGrammar COMMA = new NumberGrammar(',', Optional.empty());
 
+  /** So many digits are exact in a double, and so are the powers of ten. */
+  private static final int MOST_DIGITS = 15;
+
+  private static final double[] POWERS = new double[MOST_DIGITS + 1];
+
+  static {
+    POWERS[0] = 1;
+    for (int i = 1; i < POWERS.length; i++) {
+      POWERS[i] = 10 * POWERS[i - 1];
+    }
+  }
+
   /** Refuses marks that cannot be told apart: {@link IllegalArgumentException}. */
   public NumberGrammar {
     if (thousandsMark.isPresent() && thousandsMark.get() == decimalMark) {
@@ -33,12 +45,44 @@ public record NumberGrammar(char decimalMark, Optional<Character> thousandsMark)
    * @return the nearest double, or empty when the text is not a number by this grammar or overflows
    */
   public OptionalDouble parse(String text) {
+    double common = common(text);
+    if (common >= 0) {
+      return OptionalDouble.of(common);
+    }
     String plain = normalised(text.strip());
     if (plain.isEmpty()) {
       return OptionalDouble.empty();
     }
     double value = Double.parseDouble(plain);
     return Double.isFinite(value) ? OptionalDouble.of(value) : OptionalDouble.empty();
+  }
+
+  /**
+   * The number that up to 15 digits with at most one decimal mark among them write, which is what
+   * nearly every cell holds; NaN for any other text. Digits and power of ten are exact, so that
+   * their quotient is the nearest double.
+   */
+  private double common(String text) {
+    int length = text.length();
+    if (length == 0 || length > MOST_DIGITS + 1) {
+      return Double.NaN;
+    }
+    long digits = 0;
+    int mark = -1;
+    for (int i = 0; i < length; i++) {
+      char c = text.charAt(i);
+      if (c >= '0' && c <= '9') {
+        digits = 10 * digits + c - '0';
+      } else if (c == decimalMark && mark < 0) {
+        mark = i;
+      } else {
+        return Double.NaN;
+      }
+    }
+    if (mark < 0) {
+      return length > MOST_DIGITS ? Double.NaN : digits;
+    }
+    return length == 1 ? Double.NaN : digits / POWERS[length - 1 - mark];
   }
 
   /** The text in the grammar of {@link Double#parseDouble}, or empty when it is not a number. */

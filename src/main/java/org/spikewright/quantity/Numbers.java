@@ -6,6 +6,11 @@ import java.math.RoundingMode;
 
 /** How numbers are printed where a program or a person reads them back. */
 public final class Numbers {
+  private static final long MILLION = 1_000_000;
+
+  /** Below this a number of millionths has at most 15 digits, which a double tells apart. */
+  private static final double SHORT = 1e6;
+
   private Numbers() {}
 
   /**
@@ -17,6 +22,13 @@ public final class Numbers {
       return "0";
     }
     double size = Math.abs(value);
+    if (size < SHORT) {
+      double digits = Math.rint(value * SHORT);
+      // Both are exact, so that their quotient is what the decimal text reads as.
+      if (digits / SHORT == value) {
+        return decimal((long) digits);
+      }
+    }
     if (size >= 1e-3 && size < 1e7) {
       // Here the shortest text has no exponent.
       String text = Double.toString(value);
@@ -26,6 +38,22 @@ public final class Numbers {
       return Double.toString(value);
     }
     return new BigDecimal(Double.toString(value)).stripTrailingZeros().toPlainString();
+  }
+
+  /** A number of millionths, without zeros at its end. */
+  private static String decimal(long millionths) {
+    long whole = Math.abs(millionths) / MILLION;
+    long rest = Math.abs(millionths) % MILLION;
+    StringBuilder text = new StringBuilder(16);
+    text.append(millionths < 0 ? "-" : "").append(whole);
+    if (rest > 0) {
+      text.append('.');
+      for (long place = MILLION / 10; rest > 0; place /= 10) {
+        text.append((char) ('0' + rest / place));
+        rest %= place;
+      }
+    }
+    return text.toString();
   }
 
   /**

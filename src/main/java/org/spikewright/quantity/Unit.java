@@ -12,7 +12,7 @@ import java.util.Optional;
  * @param symbol the spelling we print, such as {@code µg/L}
  * @param dimension what it measures
  * @param perBase how many base units one of these is; base units are L, g, mol, g/L, g/g, mol/L,
- *     mol/g and 1
+ *     mol/g, V, g/mol and 1
  */
 public record Unit(String symbol, Dimension dimension, double perBase) {
 
@@ -96,6 +96,10 @@ public record Unit(String symbol, Dimension dimension, double perBase) {
     ratios(table, amounts, amountSizes, masses, massSizes, Dimension.AMOUNT_PER_MASS);
     String[] molars = {"M", "mM", "µM", "nM", "pM"};
     addAll(table, molars, amountSizes, Dimension.AMOUNT_PER_VOLUME);
+    add(table, "V", Dimension.POTENTIAL, 1);
+    add(table, "mV", Dimension.POTENTIAL, 1e-3);
+    add(table, "g/mol", Dimension.MASS_PER_AMOUNT, 1);
+    add(table, "kg/mol", Dimension.MASS_PER_AMOUNT, 1e3);
     return Collections.unmodifiableMap(table);
   }
 

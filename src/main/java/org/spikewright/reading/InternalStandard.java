@@ -1,6 +1,7 @@
 package org.spikewright.reading;
 
 import java.util.Optional;
+import java.util.OptionalDouble;
 import org.spikewright.quantity.Measured;
 
 /**
@@ -8,8 +9,14 @@ import org.spikewright.quantity.Measured;
  *
  * @param given how it came into the flask
  * @param mass weighed into this flask; only where it was weighed in
+ * @param baseline its signal without any of it, in signal units, subtracted before it divides
  */
-public record InternalStandard(Given given, Optional<Measured> mass) {
+public record InternalStandard(Given given, Optional<Measured> mass, OptionalDouble baseline) {
+
+  /** One whose signal has no baseline. */
+  public InternalStandard(Given given, Optional<Measured> mass) {
+    this(given, mass, OptionalDouble.empty());
+  }
 
   /** How an internal standard came into the flask. */
   public enum Given {

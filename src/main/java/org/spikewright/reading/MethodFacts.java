@@ -22,6 +22,8 @@ import org.spikewright.quantity.Unit;
  * @param blankDue whether a method blank must be there
  * @param calculation how the line is drawn and which interval is reported
  * @param electrode what a potentiometric method needs besides; empty for all others
+ * @param signalUnit the unit of the signals where they are quantities: a concentration that the
+ *     instrument read back from a calibration, or a potential
  */
 public record MethodFacts(
     String name,
@@ -35,7 +37,38 @@ public record MethodFacts(
     OptionalDouble bendAllowance,
     boolean blankDue,
     Calculation calculation,
-    Optional<Electrode> electrode) {
+    Optional<Electrode> electrode,
+    Optional<Unit> signalUnit) {
+
+  /** What a method says whose signals have no unit. */
+  public MethodFacts(
+      String name,
+      Unit resultUnit,
+      int expectedFlasks,
+      boolean fitReadings,
+      OptionalDouble trustedSignal,
+      OptionalDouble reportingLimit,
+      OptionalDouble targetUncertainty,
+      Optional<WorkingRange> workingRange,
+      OptionalDouble bendAllowance,
+      boolean blankDue,
+      Calculation calculation,
+      Optional<Electrode> electrode) {
+    this(
+        name,
+        resultUnit,
+        expectedFlasks,
+        fitReadings,
+        trustedSignal,
+        reportingLimit,
+        targetUncertainty,
+        workingRange,
+        bendAllowance,
+        blankDue,
+        calculation,
+        electrode,
+        Optional.empty());
+  }
 
   /**
    * Where results of a method are valid.

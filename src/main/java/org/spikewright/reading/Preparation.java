@@ -12,7 +12,7 @@ import org.spikewright.quantity.Quantity;
  * @param name the preparation as mapped; empty when it is the set of the other four
  * @param dilution volume after over volume taken, the product over all dilutions; 1 or more
  * @param testPortion mass or volume of sample taken for a digest
- * @param digestVolume volume the digest was made up to
+ * @param digestVolume volume the digest was made up to; its mass where it was weighed
  * @param dryMassFraction dry mass over moist mass, above 0 and at most 1
  */
 public record Preparation(

@@ -1,6 +1,7 @@
 package org.spikewright.reading;
 
 import java.util.Optional;
+import java.util.OptionalDouble;
 
 /** What the instrument said. */
 public sealed interface Signal {
@@ -12,12 +13,23 @@ public sealed interface Signal {
    *
    * @param value finite, in the instrument's unit
    * @param text as it stood in the cell
-   * @param spread of the readings whose mean the value is; empty for a single reading
+   * @param standard the internal standard's signal of the same reading, above its baseline; empty
+   *     where there is none
+   * @param spread of the readings whose mean the value is; empty for a single reading, and beside
+   *     an internal standard: how a ratio scatters does not follow from how its signals do
    */
-  record Value(double value, String text, Optional<Spread> spread) implements Signal {
-    /** A single reading. */
+  record Value(double value, String text, OptionalDouble standard, Optional<Spread> spread)
+      implements Signal {
+    /** Holds one of the two at most. */
+    public Value {
+      if (standard.isPresent() && spread.isPresent()) {
+        throw new IllegalArgumentException("a spread beside an internal standard");
+      }
+    }
+
+    /** A single reading without an internal standard. */
     public Value(double value, String text) {
-      this(value, text, Optional.empty());
+      this(value, text, OptionalDouble.empty(), Optional.empty());
     }
   }
 

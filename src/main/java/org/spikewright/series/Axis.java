@@ -22,55 +22,53 @@ import org.spikewright.reading.FlaskFacts;
  * @param x additions, in the order of the flasks
  * @param factor volume factors, in the same order; exactly 1 where all volumes are equal
  * @param dilution flask volume over aliquot where additions are stated in flask terms; otherwise 1
+ * @param measured by how much larger a concentration is on the axis than in the measured solution:
+ *     mean final volume (or mass) over mean aliquot, in one vessel the start volume over the
+ *     aliquot; 1 where additions are stated in flask terms, where the volumes are not known, and
+ *     where the internal standard was weighed in, whose ratio refers to the aliquot itself
  */
-record Axis(Unit unit, double[] x, double[] factor, double dilution) {
-
-  private static final Unit LITRE = Unit.of("L");
+record Axis(Unit unit, double[] x, double[] factor, double dilution, double measured) {
 
   /** Places flasks that passed {@link AxisCheck}. */
   static Axis of(List<FlaskFacts> flasks) {
     return switch (flasks.get(0).design()) {
-      case MADE_UP -> madeUp(flasks);
-      case ONE_VESSEL -> oneVessel(flasks);
+      case MADE_UP, WEIGHED -> madeUp(flasks);
+      case ONE_VESSEL, ELECTRODE -> vessel(flasks);
       case STATED -> stated(flasks);
     };
   }
 
-  /** Each flask made up: x = C_s·v/V_x, factor (V_t/V_x)·(mean V_x/mean V_t). */
+  /** Each flask made up, by volume or by mass: x = C_s·v/V_x. */
   private static Axis madeUp(List<FlaskFacts> flasks) {
     Unit unit = unit(flasks.get(0));
     double[] x = each(flasks, facts -> spike(facts, unit, aliquot(facts)));
-    return new Axis(unit, x, madeUpFactors(flasks), 1);
+    boolean standardIsWeighed = VolumeFactor.isWeighedIn(flasks.get(0));
+    return new Axis(
+        unit, x, VolumeFactor.madeUp(flasks), 1, standardIsWeighed ? 1 : madeUpRatio(flasks));
   }
 
-  private static double[] madeUpFactors(List<FlaskFacts> flasks) {
-    Unit volume = aliquot(flasks.get(0)).unit();
-    double[] taken = each(flasks, facts -> aliquot(facts).in(volume));
-    double[] total =
-        flasks.get(0).finalVolume().isPresent()
-            ? each(flasks, facts -> volume(facts.finalVolume()).in(volume))
-            : each(flasks, facts -> 1);
-    double[] factor = new double[taken.length];
-    if (allEqual(taken) && allEqual(total)) {
-      Arrays.fill(factor, 1);
-      return factor;
+  /** Mean final volume over mean aliquot; 1 where one of them is not known. */
+  private static double madeUpRatio(List<FlaskFacts> flasks) {
+    double taken = 0;
+    double total = 0;
+    for (FlaskFacts facts : flasks) {
+      if (facts.aliquot().isEmpty() || facts.finalVolume().isEmpty()) {
+        return 1;
+      }
+      taken += inBase(facts.aliquot().get());
+      total += inBase(facts.finalVolume().get());
     }
-    double ratio = Arrays.stream(taken).sum() / Arrays.stream(total).sum();
-    for (int i = 0; i < factor.length; i++) {
-      factor[i] = total[i] / taken[i] * ratio;
-    }
-    return factor;
+    return total / taken;
   }
 
-  /** One vessel: x = C_s·Σv/V_x, factor (V_0 + Σv)/V_0. */
-  private static Axis oneVessel(List<FlaskFacts> flasks) {
+  /** One vessel: x = C_s·Σv/V_x. */
+  private static Axis vessel(List<FlaskFacts> flasks) {
     Unit unit = unit(flasks.get(0));
     Quantity start = startVolume(flasks).orElseThrow();
     Quantity aliquot = flasks.get(0).aliquot().map(Measured::quantity).orElse(start);
     double[] x = each(flasks, facts -> spike(facts, unit, aliquot));
-    double[] factor =
-        each(flasks, facts -> 1 + facts.addition().amount().in(start.unit()) / start.value());
-    return new Axis(unit, x, factor, 1);
+    double measured = start.in(aliquot.unit()) / aliquot.value();
+    return new Axis(unit, x, VolumeFactor.vessel(flasks, start), 1, measured);
   }
 
   private static Axis stated(List<FlaskFacts> flasks) {
@@ -83,7 +81,7 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
         inFlask
             ? volume(first.finalVolume()).in(aliquot(first).unit()) / aliquot(first).value()
             : 1;
-    return new Axis(unit, x, ones, dilution);
+    return new Axis(unit, x, ones, dilution, inFlask ? 1 : madeUpRatio(flasks));
   }
 
   /**
@@ -108,14 +106,19 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
   }
 
   private static double added(FlaskFacts facts) {
-    return facts.addition().amount().in(LITRE);
+    Quantity amount = facts.addition().amount();
+    return amount.value() * amount.unit().perBase();
   }
 
+  /** Σ C_s·v/V_x over the stocks that were added. */
   private static double spike(FlaskFacts facts, Unit unit, Quantity aliquot) {
-    OfStock addition = (OfStock) facts.addition();
-    double stock = addition.stock().in(unit);
     double solvent = facts.blanks().solvent().map(blank -> blank.in(unit)).orElse(0.0);
-    return (stock + solvent) * addition.volume().in(aliquot.unit()) / aliquot.value();
+    double sum = 0;
+    for (OfStock portion : facts.addition().portions()) {
+      double stock = portion.stock().in(unit);
+      sum += (stock + solvent) * portion.delivered().in(aliquot.unit()) / aliquot.value();
+    }
+    return sum;
   }
 
   /**
@@ -124,10 +127,11 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
    * addition.
    */
   static Unit unit(FlaskFacts facts) {
+    List<OfStock> portions = facts.addition().portions();
     Unit added =
-        facts.addition() instanceof OfStock spike
-            ? spike.stock().quantity().unit()
-            : facts.addition().amount().unit();
+        portions.isEmpty()
+            ? facts.addition().amount().unit()
+            : portions.get(0).stock().quantity().unit();
     Unit asked = facts.method().resultUnit();
     return asked.dimension() == added.dimension() ? asked : added;
   }
@@ -140,20 +144,14 @@ record Axis(Unit unit, double[] x, double[] factor, double dilution) {
     return measured.orElseThrow().quantity();
   }
 
-  private static boolean allEqual(double[] values) {
-    for (double value : values) {
-      if (value != values[0]) {
-        return false;
-      }
-    }
-    return true;
+  /** A value in the base unit of its dimension. */
+  static double inBase(Measured measured) {
+    return measured.quantity().value() * measured.quantity().unit().perBase();
   }
 
-  private static double[] each(List<FlaskFacts> flasks, ToDoubleFunction<FlaskFacts> number) {
+  static double[] each(List<FlaskFacts> flasks, ToDoubleFunction<FlaskFacts> number) {
     double[] numbers = new double[flasks.size()];
-    for (int i = 0; i < numbers.length; i++) {
-      numbers[i] = number.applyAsDouble(flasks.get(i));
-    }
+    Arrays.setAll(numbers, i -> number.applyAsDouble(flasks.get(i)));
     return numbers;
   }
 }

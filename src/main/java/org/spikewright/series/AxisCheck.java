@@ -1,6 +1,9 @@
 package org.spikewright.series;
 
+import java.util.Comparator;
+import java.util.HashMap;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
 import java.util.function.Function;
 import java.util.function.Predicate;
@@ -14,6 +17,7 @@ import org.spikewright.reading.Addition.OfStock;
 import org.spikewright.reading.Addition.Stated;
 import org.spikewright.reading.Addition.Terms;
 import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.InternalStandard;
 import org.spikewright.reading.Preparation;
 
 /** Whether the facts of a series' flasks fit together, so that {@link Axis} can place them. */
@@ -38,6 +42,8 @@ final class AxisCheck {
         .or(() -> check.differing("preparation", FlaskFacts::preparation))
         .or(() -> check.differing("method blank", facts -> facts.blanks().method()))
         .or(() -> check.differing("kind of concentration", AxisCheck::kinds))
+        .or(() -> check.differing("unit of the signal", facts -> facts.method().signalUnit()))
+        .or(check::internalStandard)
         .or(check::ofDesign)
         .or(check::mixedKinds)
         .or(check::resultUnit);
@@ -46,10 +52,11 @@ final class AxisCheck {
   /** The dimensions of everything that is added to or taken from a concentration on the axis. */
   private static List<Dimension> kinds(FlaskFacts facts) {
     return Stream.of(
-            Optional.of(Axis.unit(facts)),
-            facts.blanks().solvent().map(blank -> blank.quantity().unit()),
-            facts.blanks().method().map(blank -> blank.quantity().unit()))
-        .flatMap(Optional::stream)
+            Stream.of(Axis.unit(facts)),
+            facts.addition().portions().stream().map(portion -> portion.stock().quantity().unit()),
+            facts.blanks().solvent().stream().map(blank -> blank.quantity().unit()),
+            facts.blanks().method().stream().map(blank -> blank.quantity().unit()))
+        .flatMap(units -> units)
         .map(Unit::dimension)
         .distinct()
         .toList();
@@ -64,50 +71,141 @@ final class AxisCheck {
 
   private Optional<Misfit> ofDesign() {
     return switch (flasks.get(0).facts().design()) {
-      case MADE_UP -> madeUp();
-      case ONE_VESSEL -> oneVessel();
+      case MADE_UP -> madeUp("volume", Dimension.VOLUME);
+      case WEIGHED -> madeUp("mass", Dimension.MASS);
+      case ONE_VESSEL -> vessel();
+      case ELECTRODE -> vessel().or(this::electrode);
       case STATED -> stated();
     };
   }
 
-  private Optional<Misfit> madeUp() {
-    return needs("a volume of stock as its addition", f -> f.addition() instanceof OfStock)
-        .or(() -> needs("an aliquot volume above 0", f -> isPositive(f.aliquot())))
-        .or(this::finalVolumes)
-        .or(() -> needs("volumes that fit into the flask", AxisCheck::fits));
+  private Optional<Misfit> internalStandard() {
+    return differing("way of giving the internal standard", AxisCheck::given)
+        .or(
+            () ->
+                VolumeFactor.isWeighedIn(flasks.get(0).facts())
+                    ? needs(
+                        "a mass of internal standard above 0",
+                        f -> isPositive(f.internalStandard().flatMap(InternalStandard::mass)))
+                    : Optional.empty());
   }
 
-  private Optional<Misfit> finalVolumes() {
+  private static Optional<String> given(FlaskFacts facts) {
+    return facts.internalStandard().map(standard -> standard.given().word());
+  }
+
+  private Optional<Misfit> madeUp(String kind, Dimension dimension) {
+    return needs("a " + kind + " of stock as its addition", f -> isStock(f, dimension))
+        .or(
+            () ->
+                needs(
+                    "an aliquot " + kind + " above 0",
+                    f -> isPositive(f.aliquot()) && is(f.aliquot(), dimension)))
+        .or(() -> finals(kind, dimension))
+        .or(() -> needs(kind + "s that fit into the flask", AxisCheck::fits));
+  }
+
+  private static boolean areVolumes(List<OfStock> portions) {
+    return !portions.isEmpty()
+        && portions.stream().allMatch(p -> p.delivered().unit().dimension() == Dimension.VOLUME);
+  }
+
+  private static boolean isStock(FlaskFacts facts, Dimension dimension) {
+    return facts.addition() instanceof OfStock spike
+        && spike.delivered().unit().dimension() == dimension;
+  }
+
+  private Optional<Misfit> finals(String kind, Dimension dimension) {
     long with = flasks.stream().filter(f -> f.facts().finalVolume().isPresent()).count();
     return with == 0
         ? Optional.empty()
-        : needs("a final volume above 0, as other flasks have", f -> isPositive(f.finalVolume()));
+        : needs(
+            "a final " + kind + " above 0, as other flasks have",
+            f -> isPositive(f.finalVolume()) && is(f.finalVolume(), dimension));
+  }
+
+  private static boolean is(Optional<Measured> measured, Dimension dimension) {
+    return measured.isPresent() && measured.get().quantity().unit().dimension() == dimension;
   }
 
   private static boolean fits(FlaskFacts facts) {
     if (facts.finalVolume().isEmpty()) {
       return true;
     }
-    double total = facts.finalVolume().get().in(LITRE);
-    double in = facts.aliquot().orElseThrow().in(LITRE) + facts.addition().amount().in(LITRE);
-    return in <= total * (1 + 1e-9);
+    double total = Axis.inBase(facts.finalVolume().get());
+    Measured added = Measured.exactly(facts.addition().amount());
+    return Axis.inBase(facts.aliquot().orElseThrow()) + Axis.inBase(added) <= total * (1 + 1e-9);
   }
 
-  private Optional<Misfit> oneVessel() {
-    return needs("a volume of stock as its addition", f -> f.addition() instanceof OfStock)
+  private Optional<Misfit> vessel() {
+    return needs("a volume of stock as its addition", f -> areVolumes(f.addition().portions()))
         .or(() -> differing("aliquot", FlaskFacts::aliquot))
         .or(() -> differing("start volume", FlaskFacts::startVolume))
         .or(this::stocks)
         .or(this::startVolume);
   }
 
-  /** Of a total volume, what each stock brought cannot be told. */
+  /** What each stock brought must be told, and nothing that was added can go away again. */
   private Optional<Misfit> stocks() {
     AxisCheck spiked =
         new AxisCheck(flasks.stream().filter(f -> !f.facts().addition().isNone()).toList());
     return spiked
-        .differing("stock", facts -> ((OfStock) facts.addition()).stock())
-        .or(() -> spiked.differing("solvent blank", facts -> facts.blanks().solvent()));
+        .differing("solvent blank", facts -> facts.blanks().solvent())
+        .or(
+            () ->
+                spiked.grows()
+                    ? Optional.empty()
+                    : Optional.of(
+                        new Misfit(
+                            "more than one stock: " + spiked.stockWords(),
+                            "one stock, or additions = \"each\": a total does not tell what each"
+                                + " stock brought")));
+  }
+
+  private String stockWords() {
+    return flasks.stream()
+        .flatMap(flask -> flask.facts().addition().portions().stream())
+        .map(portion -> portion.stock().toString())
+        .distinct()
+        .collect(Collectors.joining(", "));
+  }
+
+  private boolean grows() {
+    Map<Measured, Double> before = Map.of();
+    for (FlaskFacts facts : byAmount()) {
+      Map<Measured, Double> now = new HashMap<>();
+      for (OfStock portion : facts.addition().portions()) {
+        now.merge(portion.stock(), portion.delivered().in(LITRE), Double::sum);
+      }
+      for (Map.Entry<Measured, Double> earlier : before.entrySet()) {
+        if (!(now.getOrDefault(earlier.getKey(), 0.0) >= earlier.getValue() * (1 - 1e-9))) {
+          return false;
+        }
+      }
+      before = now;
+    }
+    return true;
+  }
+
+  private List<FlaskFacts> byAmount() {
+    return flasks.stream()
+        .map(FlaskDraft::facts)
+        .sorted(Comparator.comparingDouble(facts -> facts.addition().amount().in(LITRE)))
+        .toList();
+  }
+
+  private Optional<Misfit> electrode() {
+    return needs("the charge of the ion", f -> f.method().electrode().isPresent())
+        .or(() -> needs("a potential as its signal", AxisCheck::isPotential));
+  }
+
+  private static boolean isPotential(FlaskFacts facts) {
+    return facts.internalStandard().isEmpty()
+        && facts
+            .method()
+            .signalUnit()
+            .map(Unit::dimension)
+            .equals(Optional.of(Dimension.POTENTIAL));
   }
 
   private Optional<Misfit> startVolume() {

@@ -56,7 +56,8 @@ final class Clusters {
   }
 
   /**
-   * Whether readings are one run as they stand, as nearly always: timed, in order, of one delivery.
+   * Whether readings are one run as they stand, as nearly always: timed, in order, of one delivery,
+   * all within the longest pause.
    */
   private boolean isOneRun(List<Recorded> readings) {
     Instant last = Instant.MIN;
@@ -66,13 +67,13 @@ final class Clusters {
       if (time.isEmpty()
           || reading.batch().delimits()
           || recorded.arrival() != readings.get(0).arrival()
-          || !time.get().isAfter(last)
-          || last != Instant.MIN && time.get().isAfter(last.plus(rules.longestPause()))) {
+          || !time.get().isAfter(last)) {
         return false;
       }
       last = time.get();
     }
-    return !readings.isEmpty();
+    return !readings.isEmpty()
+        && !last.isAfter(readings.get(0).reading().measuredAt().get().plus(rules.longestPause()));
   }
 
   private static void add(SortedMap<String, List<Recorded>> batches, Recorded recorded) {

@@ -1,9 +1,14 @@
 package org.spikewright.series;
 
+import java.math.BigDecimal;
+import java.math.MathContext;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
+import java.util.OptionalDouble;
+import org.spikewright.quantity.Quantity;
 import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.InternalStandard;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
 import org.spikewright.reading.Spread;
@@ -17,8 +22,9 @@ import org.spikewright.reading.Spread;
  * @param volumeFactor the factor by which a signal is multiplied to allow for the flask's volume
  * @param readings the readings that count, ordered by replicate and time
  * @param secondRun readings of a second run of this flask, never averaged with the first
- * @param meanSignal mean of the readings that are numbers, after the baseline, before the volume
- *     factor; NaN when no reading is a number
+ * @param meanSignal mean of the readings that are numbers, after the baseline and divided by the
+ *     internal standard where there is one, before the volume factor; NaN when no reading is a
+ *     number
  * @param replicateSd standard deviation of those readings; NaN with fewer than two
  * @param numbers how many readings are numbers, those behind a mean counted each
  */
@@ -33,19 +39,21 @@ public record Flask(
     double replicateSd,
     int numbers) {
 
+  /** Beyond these, units that were converted may leave their trace. */
+  private static final MathContext LEVEL_DIGITS = new MathContext(9);
+
   /** A reading by itself does not scatter. */
   private static final Spread SINGLE = new Spread(0, 1);
 
   /** A flask with the mean of its readings. */
   static Flask of(FlaskDraft draft, double x, double volumeFactor) {
-    double baseline = draft.facts().blanks().baseline().orElse(0);
     double[] signals = new double[draft.readings().size()];
     List<Spread> spreads = new ArrayList<>();
     int numbers = 0;
     boolean means = false;
     for (Recorded recorded : draft.readings()) {
       if (recorded.reading().signal() instanceof Signal.Value signal) {
-        signals[numbers++] = signal.value() - baseline;
+        signals[numbers++] = beforeTheLine(signal, draft.facts());
         spreads.add(signal.spread().orElse(SINGLE));
         means |= signal.spread().isPresent();
       }
@@ -98,6 +106,17 @@ public record Flask(
     }
   }
 
+  /** The baseline first, then the internal standard, whose own baseline comes off it. */
+  private static double beforeTheLine(Signal.Value signal, FlaskFacts facts) {
+    double net = signal.value() - facts.blanks().baseline().orElse(0);
+    if (signal.standard().isEmpty()) {
+      return net;
+    }
+    OptionalDouble baseline =
+        facts.internalStandard().map(InternalStandard::baseline).orElse(OptionalDouble.empty());
+    return net / (signal.standard().getAsDouble() - baseline.orElse(0));
+  }
+
   private static double mean(double[] values) {
     double sum = 0;
     for (double value : values) {
@@ -127,12 +146,31 @@ public record Flask(
 
   /** Mean of the readings as the instrument showed them, the baseline included. */
   public double meanAsRead() {
-    return meanSignal + facts.blanks().baseline().orElse(0);
+    if (facts.internalStandard().isEmpty()) {
+      return meanSignal + facts.blanks().baseline().orElse(0);
+    }
+    double sum = 0;
+    for (Recorded recorded : readings) {
+      sum += recorded.reading().signal() instanceof Signal.Value signal ? signal.value() : 0;
+    }
+    return sum / numbers;
   }
 
   /** The signal that the line is fitted to. */
   public double y() {
     return meanSignal * volumeFactor;
+  }
+
+  /**
+   * The amount delivered, which tells one addition level from another whatever unit it was written
+   * in: in base units (L, g, or those of a stated concentration), to 9 significant digits. In one
+   * vessel it is the total so far.
+   */
+  public double delivered() {
+    Quantity amount = facts.addition().amount();
+    return new BigDecimal(amount.value() * amount.unit().perBase())
+        .round(LEVEL_DIGITS)
+        .doubleValue();
   }
 
   /** Whether nothing was added to it. */

@@ -1,15 +1,18 @@
 package org.spikewright.series;
 
-import java.time.Instant;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.HashMap;
+import java.util.HashSet;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.Set;
 import java.util.SortedMap;
 import java.util.TreeMap;
 import org.spikewright.reading.FlaskFacts;
+import org.spikewright.reading.Preparation;
+import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Subject;
 
@@ -20,6 +23,7 @@ import org.spikewright.reading.Subject;
  */
 public final class Gathering {
   private final GatheringRules rules;
+  private final Fitting fitting = new Fitting();
 
   /** Gathers by these rules. */
   public Gathering(GatheringRules rules) {
@@ -37,23 +41,27 @@ public final class Gathering {
     List<Gathered> gathered = new ArrayList<>();
     Map<SeriesKey, Integer> ordinals = new HashMap<>();
     for (Cluster cluster : new Clusters(rules).of(readings)) {
-      byPreparation(cluster)
-          .forEach(
-              (preparation, part) -> {
-                SeriesKey first =
-                    new SeriesKey(cluster.labDay(), subject, cluster.batch(), preparation, 1);
-                int ordinal = ordinals.merge(first, 1, Integer::sum);
-                SeriesKey key =
-                    new SeriesKey(cluster.labDay(), subject, cluster.batch(), preparation, ordinal);
-                gathered.add(series(key, cluster, part));
-              });
+      for (Map.Entry<String, List<Recorded>> part : byPreparation(cluster).entrySet()) {
+        SeriesKey first =
+            new SeriesKey(cluster.labDay(), subject, cluster.batch(), part.getKey(), 1);
+        int ordinal = ordinals.merge(first, 1, Integer::sum);
+        SeriesKey key = ordinal == 1 ? first : first.withOrdinal(ordinal);
+        gathered.add(series(key, cluster, part.getValue()));
+      }
     }
-    gathered.sort(Comparator.comparing(Gathered::key));
+    if (gathered.size() > 1) {
+      gathered.sort(Comparator.comparing(Gathered::key));
+    }
     return gathered;
   }
 
   private static SortedMap<String, List<Recorded>> byPreparation(Cluster cluster) {
     SortedMap<String, List<Recorded>> parts = new TreeMap<>();
+    if (isOfOnePreparation(cluster.readings())) {
+      parts.put(
+          cluster.readings().get(0).reading().facts().preparation().shown(), cluster.readings());
+      return parts;
+    }
     for (Recorded recorded : cluster.readings()) {
       String preparation = recorded.reading().facts().preparation().shown();
       parts.computeIfAbsent(preparation, k -> new ArrayList<>()).add(recorded);
@@ -61,11 +69,24 @@ public final class Gathering {
     return parts;
   }
 
-  private static Gathered series(SeriesKey key, Cluster cluster, List<Recorded> readings) {
+  /** As nearly always; then nothing has to be put into words for each reading. */
+  private static boolean isOfOnePreparation(List<Recorded> readings) {
+    Preparation first = readings.get(0).reading().facts().preparation();
+    for (Recorded recorded : readings) {
+      Preparation preparation = recorded.reading().facts().preparation();
+      if (preparation != first && !preparation.equals(first)) {
+        return false;
+      }
+    }
+    return true;
+  }
+
+  private Gathered series(SeriesKey key, Cluster cluster, List<Recorded> readings) {
     List<FlaskDraft> drafts = new ArrayList<>();
     SortedMap<String, List<Recorded>> byFlask = new TreeMap<>();
-    readings.forEach(
-        r -> byFlask.computeIfAbsent(r.reading().flask(), k -> new ArrayList<>()).add(r));
+    for (Recorded recorded : readings) {
+      byFlask.computeIfAbsent(recorded.reading().flask(), label -> new ArrayList<>()).add(recorded);
+    }
     for (Map.Entry<String, List<Recorded>> entry : byFlask.entrySet()) {
       Optional<FlaskFacts> facts = facts(entry.getValue());
       if (facts.isEmpty()) {
@@ -78,11 +99,13 @@ public final class Gathering {
       }
       drafts.add(draft(entry.getKey(), facts.get(), entry.getValue()));
     }
-    Optional<AxisCheck.Misfit> misfit = AxisCheck.misfit(drafts);
+    Optional<AxisCheck.Misfit> misfit =
+        fitting.areKnown(drafts) ? Optional.empty() : AxisCheck.misfit(drafts);
     if (misfit.isPresent()) {
       return new Ungrouped(
           key, cluster.batchName(), misfit.get().found(), misfit.get().expected(), readings);
     }
+    fitting.add(drafts);
     return new SeriesBuilder(key, cluster, drafts).build();
   }
 
@@ -94,7 +117,8 @@ public final class Gathering {
     }
     FlaskFacts facts = latest.reading().facts();
     for (Recorded recorded : readings) {
-      if (recorded.arrival() == latest.arrival() && !recorded.reading().facts().equals(facts)) {
+      FlaskFacts own = recorded.reading().facts();
+      if (recorded.arrival() == latest.arrival() && own != facts && !own.equals(facts)) {
         return Optional.empty();
       }
     }
@@ -108,12 +132,12 @@ public final class Gathering {
   private static FlaskDraft draft(String label, FlaskFacts facts, List<Recorded> readings) {
     List<Recorded> first = new ArrayList<>();
     List<Recorded> second = new ArrayList<>();
-    Map<String, Instant> firstAt = new HashMap<>();
+    Set<String> replicates = new HashSet<>();
     for (Recorded recorded : readings) {
-      Optional<Instant> time = recorded.reading().measuredAt();
-      if (time.isEmpty() || !recorded.reading().replicateMapped()) {
+      Reading reading = recorded.reading();
+      if (reading.measuredAt().isEmpty() || !reading.replicateMapped()) {
         first.add(recorded);
-      } else if (firstAt.putIfAbsent(recorded.reading().replicate(), time.get()) == null) {
+      } else if (replicates.add(reading.replicate())) {
         first.add(recorded);
       } else {
         second.add(recorded);

@@ -13,6 +13,9 @@ import org.spikewright.reading.Signal.State;
 
 /** Builds a series from flasks whose facts fit together. */
 final class SeriesBuilder {
+  private static final Comparator<Flask> BY_ADDITION =
+      Comparator.comparingDouble(Flask::x).thenComparing(Flask::label);
+
   private final SeriesKey key;
   private final Cluster cluster;
   private final List<FlaskDraft> drafts;
@@ -29,12 +32,16 @@ final class SeriesBuilder {
   }
 
   AdditionSeries build() {
-    Axis axis = Axis.of(drafts.stream().map(FlaskDraft::facts).toList());
-    List<Flask> flasks = new ArrayList<>();
+    List<FlaskFacts> each = new ArrayList<>(drafts.size());
+    for (FlaskDraft draft : drafts) {
+      each.add(draft.facts());
+    }
+    Axis axis = Axis.of(each);
+    List<Flask> flasks = new ArrayList<>(drafts.size());
     for (int i = 0; i < drafts.size(); i++) {
       flasks.add(Flask.of(drafts.get(i), axis.x()[i], axis.factor()[i]));
     }
-    flasks.sort(Comparator.comparingDouble(Flask::x).thenComparing(Flask::label));
+    flasks.sort(BY_ADDITION);
     return new AdditionSeries(
         key,
         cluster.batchName(),
@@ -43,6 +50,7 @@ final class SeriesBuilder {
         facts.preparation(),
         facts.method(),
         axis.unit(),
+        axis.measured() / axis.unit().perBase(),
         ToResult.of(facts, axis),
         List.copyOf(flasks),
         notes(),
@@ -79,7 +87,9 @@ final class SeriesBuilder {
   /** Whether there is nothing to remark, as with nearly every series; so it is asked first. */
   private boolean isPlain() {
     for (FlaskDraft draft : drafts) {
-      if (!draft.secondRun().isEmpty() || !draft.facts().aliquot().equals(facts.aliquot())) {
+      if (!draft.secondRun().isEmpty()
+          || !draft.facts().aliquot().equals(facts.aliquot())
+          || isOfExpiredStock(draft.facts())) {
         return false;
       }
       for (Recorded recorded : draft.readings()) {
@@ -122,7 +132,23 @@ final class SeriesBuilder {
     if (aliquots.size() > 1) {
       note(notes, SeriesNote.Kind.UNEQUAL_ALIQUOTS, aliquots.stream());
     }
+    note(
+        notes,
+        SeriesNote.Kind.EXPIRED_STOCK,
+        drafts.stream()
+            .map(FlaskDraft::facts)
+            .filter(this::isOfExpiredStock)
+            .map(spiked -> spiked.bottle().orElseThrow())
+            .map(bottle -> bottle.name() + ", last day " + bottle.expires().orElseThrow())
+            .distinct());
     return List.copyOf(notes);
+  }
+
+  /** By the lab day of the series, which is that of its first reading. */
+  private boolean isOfExpiredStock(FlaskFacts spiked) {
+    return spiked.bottle().isPresent()
+        && !spiked.addition().isNone()
+        && spiked.bottle().get().isExpiredOn(cluster.labDay());
   }
 
   private Stream<String> states(State state) {

@@ -25,6 +25,11 @@ public record SeriesKey(
           .thenComparing(SeriesKey::preparation)
           .thenComparingInt(SeriesKey::ordinal);
 
+  /** The key of another such series of the lab day. */
+  SeriesKey withOrdinal(int other) {
+    return new SeriesKey(labDay, subject, batch, preparation, other);
+  }
+
   @Override
   public int compareTo(SeriesKey other) {
     return ORDER.compare(this, other);

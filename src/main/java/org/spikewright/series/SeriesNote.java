@@ -21,6 +21,8 @@ public record SeriesNote(Kind kind, String words) {
     /** A reading above the instrument's range. */
     OVER_RANGE,
     /** A reading below the instrument's range, or missing. */
-    LEFT_OUT
+    LEFT_OUT,
+    /** A named stock was used after its last day. */
+    EXPIRED_STOCK
   }
 }

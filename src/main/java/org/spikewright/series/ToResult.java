@@ -34,7 +34,8 @@ public record ToResult(
     Preparation preparation = facts.preparation();
     Unit asked = facts.method().resultUnit();
     boolean digested = preparation.testPortion().isPresent();
-    double perSample = digested ? litres(preparation) / portion(preparation) : 1;
+    double perSample =
+        digested ? base(preparation.digestVolume()) / base(preparation.testPortion()) : 1;
     double dry = preparation.dryMassFraction().orElse(1);
     Unit unit =
         preparation.dryMassFraction().isPresent()
@@ -55,14 +56,9 @@ public record ToResult(
     return facts.role() == Role.BLANK ? Optional.empty() : facts.blanks().method();
   }
 
-  private static double litres(Preparation preparation) {
-    return preparation.digestVolume().orElseThrow().in(Unit.of("L"));
-  }
-
-  /** The test portion in base units: grams or litres. */
-  private static double portion(Preparation preparation) {
-    Quantity portion = preparation.testPortion().orElseThrow();
-    return portion.value() * portion.unit().perBase();
+  /** In base units: grams or litres. */
+  private static double base(Optional<Quantity> known) {
+    return Axis.inBase(Measured.exactly(known.orElseThrow()));
   }
 
   /** A tolerance is the half-width of a rectangular distribution (JCGM 100:2008, 4.3.7). */

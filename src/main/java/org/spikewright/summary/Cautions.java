@@ -17,7 +17,11 @@ final class Cautions {
           + " all), metals and samples are handled by the safety data sheets and the laboratory's"
           + " rules.";
 
-  static final List<String> ALL = List.of(REVIEW, ADDITIVE, HANDLING);
+  static final String VOLUMES =
+      "Volumes are arithmetic, not a procedure: whether and how anything is prepared is decided by"
+          + " qualified staff, under the laboratory's own method and rules.";
+
+  static final List<String> ALL = List.of(REVIEW, ADDITIVE, HANDLING, VOLUMES);
 
   private Cautions() {}
 }

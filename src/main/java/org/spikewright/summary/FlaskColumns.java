@@ -1,6 +1,7 @@
 package org.spikewright.summary;
 
 import java.util.ArrayList;
+import java.util.Collections;
 import java.util.Comparator;
 import java.util.LinkedHashMap;
 import java.util.List;
@@ -56,8 +57,16 @@ public final class FlaskColumns {
   /** One list of fields a flask; readings that form no series are gathered by flask label. */
   public static List<List<String>> lines(Outcome outcome) {
     return outcome.gathered() instanceof AdditionSeries series
-        ? FlaskLine.of(outcome).stream().map(line -> fields(series, line)).toList()
+        ? lines(series, FlaskLine.of(outcome))
         : ungrouped((Ungrouped) outcome.gathered());
+  }
+
+  private static List<List<String>> lines(AdditionSeries series, List<FlaskLine> flasks) {
+    List<List<String>> lines = new ArrayList<>(flasks.size());
+    for (FlaskLine flask : flasks) {
+      lines.add(fields(series, flask));
+    }
+    return lines;
   }
 
   private static List<String> fields(AdditionSeries series, FlaskLine line) {
@@ -131,6 +140,6 @@ public final class FlaskColumns {
   }
 
   private static void add(List<String> fields, String... more) {
-    fields.addAll(List.of(more));
+    Collections.addAll(fields, more);
   }
 }

@@ -1,19 +1,22 @@
 package org.spikewright.summary;
 
-import java.util.ArrayDeque;
 import java.util.ArrayList;
-import java.util.HashMap;
+import java.util.Arrays;
+import java.util.LinkedHashSet;
 import java.util.List;
-import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
-import java.util.Queue;
+import java.util.Set;
+import java.util.SortedSet;
+import java.util.TreeSet;
 import java.util.stream.Collectors;
 import org.spikewright.fit.DeletedResidual;
+import org.spikewright.judgement.ElectrodeResult;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.FlagKind;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.SeriesResult;
+import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.series.Flask;
@@ -48,31 +51,28 @@ record FlaskLine(
     if (!(outcome.gathered() instanceof AdditionSeries series)) {
       return List.of();
     }
-    Map<String, Queue<Integer>> points = new HashMap<>();
-    outcome.result().ifPresent(result -> index(result, points));
-    int odd = oddPoint(outcome);
-    List<FlaskLine> lines = new ArrayList<>();
+    List<Flask> fitted = outcome.result().map(SeriesResult::flasks).orElse(List.of());
+    Set<Integer> odd = oddPoints(outcome);
+    List<FlaskLine> lines = new ArrayList<>(series.flasks().size());
+    int point = 0;
     for (Flask flask : series.flasks()) {
-      Queue<Integer> own = points.getOrDefault(flask.label(), new ArrayDeque<>());
-      if (own.isEmpty()) {
-        lines.add(unused(flask, outcome));
-      }
-      // Where the laboratory counts readings as flasks, one flask has several points.
-      while (!own.isEmpty()) {
-        int point = own.remove();
-        lines.add(used(outcome.result().orElseThrow(), point, point == odd));
+      // The line's points are in the order of the flasks, of which it may leave some out.
+      if (point < fitted.size() && fitted.get(point).label().equals(flask.label())) {
+        lines.add(used(outcome.result().orElseThrow(), point, odd.contains(point)));
+        point++;
+      } else {
+        lines.add(
+            outcome
+                .electrode()
+                .filter(electrode -> electrode.flasks().contains(flask))
+                .map(electrode -> beside(electrode, flask))
+                .orElseGet(() -> unused(flask, outcome)));
       }
       if (!flask.secondRun().isEmpty()) {
         lines.add(secondRun(flask.second()));
       }
     }
     return lines;
-  }
-
-  private static void index(SeriesResult result, Map<String, Queue<Integer>> points) {
-    for (int i = 0; i < result.flasks().size(); i++) {
-      points.computeIfAbsent(result.flasks().get(i).label(), label -> new ArrayDeque<>()).add(i);
-    }
   }
 
   private static FlaskLine used(SeriesResult result, int i, boolean odd) {
@@ -88,6 +88,20 @@ record FlaskLine(
         OptionalDouble.of(result.line().residual(i)),
         deleted.isPresent() ? finite(deleted.get().t()) : OptionalDouble.empty(),
         odd ? ODD : "");
+  }
+
+  /** A state of the vessel beside the electrode's curve. */
+  private static FlaskLine beside(ElectrodeResult electrode, Flask flask) {
+    double fitted = electrode.at(flask);
+    return new FlaskLine(
+        flask,
+        true,
+        OptionalDouble.of(flask.x()),
+        OptionalDouble.of(flask.y()),
+        finite(fitted),
+        finite(flask.y() - fitted),
+        OptionalDouble.empty(),
+        "");
   }
 
   private static FlaskLine unused(Flask flask, Outcome outcome) {
@@ -115,22 +129,18 @@ record FlaskLine(
     return states.isEmpty() ? "no reading" : "no reading is a number: " + states;
   }
 
-  /** The point with the least probable deleted residual, where the series has an odd flask. */
-  private static int oddPoint(Outcome outcome) {
-    boolean flagged = outcome.flags().stream().map(Flag::kind).anyMatch(FlagKind.ODD_FLASK::equals);
-    if (!flagged || outcome.result().isEmpty()) {
-      return -1;
-    }
-    List<Optional<DeletedResidual>> residuals = outcome.result().get().residuals();
-    int odd = -1;
-    double least = Double.POSITIVE_INFINITY;
-    for (int i = 0; i < residuals.size(); i++) {
-      if (residuals.get(i).isPresent() && residuals.get(i).get().p() < least) {
-        least = residuals.get(i).get().p();
-        odd = i;
-      }
-    }
-    return odd;
+  /** The points that an odd-flask or odd-level flag is about. */
+  private static Set<Integer> oddPoints(Outcome outcome) {
+    boolean flagged =
+        outcome.flags().stream()
+            .map(Flag::kind)
+            .anyMatch(kind -> kind == FlagKind.ODD_FLASK || kind == FlagKind.ODD_LEVEL);
+    return flagged
+        ? outcome.result().flatMap(SeriesResult::judgedOdd).stream()
+            .flatMapToInt(odd -> Arrays.stream(odd.flasks()))
+            .boxed()
+            .collect(Collectors.toSet())
+        : Set.of();
   }
 
   static OptionalDouble finite(double value) {
@@ -139,18 +149,19 @@ record FlaskLine(
 
   /** The files the flask's readings came from, sorted. */
   List<String> files() {
-    return flask.readings().stream()
-        .map(recorded -> recorded.reading().position().source().file())
-        .distinct()
-        .sorted()
-        .toList();
+    SortedSet<String> files = new TreeSet<>();
+    for (Recorded recorded : flask.readings()) {
+      files.add(recorded.reading().position().source().file());
+    }
+    return List.copyOf(files);
   }
 
   /** The cells the flask's readings came from, in the order of the readings. */
   List<String> cells() {
-    return flask.readings().stream()
-        .map(recorded -> recorded.reading().position().within())
-        .distinct()
-        .toList();
+    Set<String> cells = new LinkedHashSet<>();
+    for (Recorded recorded : flask.readings()) {
+      cells.add(recorded.reading().position().within());
+    }
+    return List.copyOf(cells);
   }
 }

@@ -3,6 +3,7 @@ package org.spikewright.summary;
 import java.time.LocalDate;
 import java.util.ArrayList;
 import java.util.Arrays;
+import java.util.Collections;
 import java.util.List;
 import java.util.OptionalDouble;
 import java.util.OptionalInt;
@@ -58,7 +59,19 @@ public final class ResultColumns {
           "role",
           "series",
           "delimiting_batch",
-          "sentences");
+          "sentences",
+          "pool",
+          "pool_series",
+          "pool_standard_error",
+          "pool_lower95",
+          "pool_upper95",
+          "pool_df",
+          "bend_p",
+          "bent_value",
+          "bend_allowance",
+          "drift_exposure",
+          "effective_df",
+          "contributions");
 
   private ResultColumns() {}
 
@@ -81,6 +94,13 @@ public final class ResultColumns {
     add(fields, row.design(), subject.instrument(), key.preparation(), join(row.sourceFiles()));
     add(fields, subject.line(), row.role(), Integer.toString(key.ordinal()));
     add(fields, key.batch(), join(row.sentences()));
+    RowEvidence evidence = row.evidence();
+    String lenders = evidence.poolSeries() == 0 ? "" : Integer.toString(evidence.poolSeries());
+    add(fields, evidence.pool(), lenders, number(evidence.poolStandardError()));
+    add(fields, number(evidence.poolLower95()), number(evidence.poolUpper95()));
+    add(fields, number(evidence.poolDf()), number(evidence.bendP()), number(evidence.bentValue()));
+    add(fields, number(evidence.bendAllowance()), number(evidence.driftExposure()));
+    add(fields, number(evidence.effectiveDf()), join(evidence.contributions()));
     return fields;
   }
 
@@ -131,7 +151,25 @@ public final class ResultColumns {
         df.isEmpty() ? OptionalInt.empty() : OptionalInt.of(Integer.parseInt(df)),
         number(fields.get(25)),
         fields.get(26),
-        split(fields.get(29)));
+        split(fields.get(29)),
+        evidence(fields));
+  }
+
+  private static RowEvidence evidence(List<String> fields) {
+    String lenders = fields.get(36);
+    return new RowEvidence(
+        fields.get(35),
+        lenders.isEmpty() ? 0 : Integer.parseInt(lenders),
+        number(fields.get(37)),
+        number(fields.get(38)),
+        number(fields.get(39)),
+        number(fields.get(40)),
+        number(fields.get(41)),
+        number(fields.get(42)),
+        number(fields.get(43)),
+        number(fields.get(44)),
+        number(fields.get(45)),
+        split(fields.get(46)));
   }
 
   /** Items in one field; none of them empty. */
@@ -139,7 +177,13 @@ public final class ResultColumns {
     StringBuilder field = new StringBuilder();
     for (String item : items) {
       field.append(field.isEmpty() ? "" : ";");
-      field.append(item.replace("\\", "\\\\").replace(";", "\\;"));
+      for (int i = 0; i < item.length(); i++) {
+        char c = item.charAt(i);
+        if (c == ';' || c == '\\') {
+          field.append('\\');
+        }
+        field.append(c);
+      }
     }
     return field.toString();
   }
@@ -181,6 +225,6 @@ public final class ResultColumns {
   }
 
   private static void add(List<String> fields, String... more) {
-    fields.addAll(List.of(more));
+    Collections.addAll(fields, more);
   }
 }

@@ -1,5 +1,6 @@
 package org.spikewright.summary;
 
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
@@ -7,7 +8,9 @@ import java.util.OptionalInt;
 import java.util.SortedSet;
 import java.util.TreeSet;
 import java.util.function.Function;
+import org.spikewright.fit.Budget;
 import org.spikewright.fit.StraightLine;
+import org.spikewright.judgement.ElectrodeResult;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.SeriesResult;
@@ -15,6 +18,7 @@ import org.spikewright.judgement.Verdict;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Recorded;
 import org.spikewright.series.AdditionSeries;
+import org.spikewright.series.Flask;
 import org.spikewright.series.Gathered;
 import org.spikewright.series.SeriesKey;
 import org.spikewright.series.Ungrouped;
@@ -28,7 +32,7 @@ import org.spikewright.series.Ungrouped;
  * @param value the result, in {@code unit}
  * @param unit the unit of the result; empty when there is no series
  * @param reported the text to report; empty when nothing can be reported
- * @param standardUncertainty combined; empty until a budget exists
+ * @param standardUncertainty combined; empty where the fit has no uncertainty
  * @param expandedUncertainty likewise
  * @param coverageFactor likewise
  * @param lower95 lower end of the reported fit interval, in {@code unit}; empty when unbounded
@@ -43,13 +47,14 @@ import org.spikewright.series.Ungrouped;
  * @param sentences one for each flag, in the same order
  * @param flasks how many the line was fitted to
  * @param readings how many count
- * @param slope signal per axis unit
+ * @param slope signal per axis unit; of an electrode signal per decade
  * @param signalIntercept signal
  * @param residualSd signal
  * @param residualDf degrees of freedom
  * @param r correlation coefficient
  * @param design in a word
  * @param sourceFiles the files its readings came from, sorted
+ * @param evidence what it rests on beside its own line
  */
 public record ResultRow(
     SeriesKey key,
@@ -79,45 +84,90 @@ public record ResultRow(
     OptionalInt residualDf,
     OptionalDouble r,
     String design,
-    List<String> sourceFiles) {
+    List<String> sourceFiles,
+    RowEvidence evidence) {
 
   /** The row of what the night says about a series. */
   public static ResultRow of(Outcome outcome) {
     Optional<SeriesResult> result = outcome.result();
     Optional<StraightLine> line = result.map(SeriesResult::line);
-    OptionalDouble lower = number(result, SeriesResult::lower95);
-    OptionalDouble upper = number(result, SeriesResult::upper95);
-    OptionalDouble none = OptionalDouble.empty();
+    Optional<ElectrodeResult> electrode = outcome.electrode();
+    Optional<Budget> budget = result.flatMap(SeriesResult::budget);
     Origin origin = Origin.of(outcome.gathered());
     return new ResultRow(
         outcome.gathered().key(),
         origin.batch,
         origin.role,
-        number(result, found -> OptionalDouble.of(found.value())),
+        either(
+            result,
+            r -> OptionalDouble.of(r.value()),
+            electrode,
+            e -> OptionalDouble.of(e.value())),
         origin.unit,
         outcome.reported(),
-        none,
-        none,
-        none,
-        lower,
-        upper,
-        number(result, SeriesResult::standardError),
-        lower,
-        upper,
-        lower.isPresent() || upper.isPresent() ? "own" : "",
+        number(budget, made -> OptionalDouble.of(made.standardUncertainty())),
+        number(budget, made -> OptionalDouble.of(made.expandedUncertainty())),
+        number(budget, made -> OptionalDouble.of(made.coverageFactor())),
+        either(result, SeriesResult::reportedLower95, electrode, ElectrodeResult::lower95),
+        either(result, SeriesResult::reportedUpper95, electrode, ElectrodeResult::upper95),
+        either(result, SeriesResult::standardError, electrode, ElectrodeResult::standardError),
+        either(result, SeriesResult::lower95, electrode, ElectrodeResult::lower95),
+        either(result, SeriesResult::upper95, electrode, ElectrodeResult::upper95),
+        basis(result, electrode),
         number(result.flatMap(SeriesResult::detection), d -> OptionalDouble.of(d.detectionLimit())),
         outcome.verdict(),
         outcome.flags().stream().map(flag -> flag.kind().shortName()).toList(),
         outcome.flags().stream().map(Flag::sentence).toList(),
-        result.map(found -> found.flasks().size()).orElse(0),
+        result
+            .map(SeriesResult::flasks)
+            .or(() -> electrode.map(ElectrodeResult::flasks))
+            .map(List::size)
+            .orElse(0),
         origin.readings.size(),
-        number(line, found -> OptionalDouble.of(found.slope())),
+        either(
+            line,
+            l -> OptionalDouble.of(l.slope()),
+            electrode,
+            e -> OptionalDouble.of(e.inSignalUnits(e.fit().slope()))),
         number(line, found -> OptionalDouble.of(found.signalIntercept())),
-        number(line, StraightLine::residualSd),
-        line.map(found -> OptionalInt.of(found.residualDf())).orElse(OptionalInt.empty()),
+        either(line, StraightLine::residualSd, electrode, ResultRow::scatter),
+        line.map(StraightLine::residualDf)
+            .or(() -> electrode.map(found -> found.fit().df()))
+            .map(OptionalInt::of)
+            .orElse(OptionalInt.empty()),
         number(line, StraightLine::correlation),
         origin.design,
-        origin.files());
+        origin.files(),
+        result.map(RowEvidence::of).orElse(RowEvidence.EMPTY));
+  }
+
+  private static String basis(Optional<SeriesResult> result, Optional<ElectrodeResult> electrode) {
+    if (result.flatMap(SeriesResult::reportedPool).isPresent()) {
+      return "pool";
+    }
+    boolean own =
+        result.map(SeriesResult::standardError).filter(OptionalDouble::isPresent).isPresent()
+            || electrode
+                .map(ElectrodeResult::standardError)
+                .filter(OptionalDouble::isPresent)
+                .isPresent();
+    return own ? "own" : "";
+  }
+
+  private static OptionalDouble scatter(ElectrodeResult electrode) {
+    OptionalDouble millivolts = electrode.fit().residualSd();
+    return millivolts.isPresent()
+        ? OptionalDouble.of(electrode.inSignalUnits(millivolts.getAsDouble()))
+        : millivolts;
+  }
+
+  /** The number of the line's result, or of the electrode's where that is the one there is. */
+  private static <A, B> OptionalDouble either(
+      Optional<A> line,
+      Function<A, OptionalDouble> ofLine,
+      Optional<B> electrode,
+      Function<B, OptionalDouble> ofElectrode) {
+    return electrode.isPresent() ? number(electrode, ofElectrode) : number(line, ofLine);
   }
 
   /** What is known of readings whether they form a series or not. */
@@ -131,7 +181,7 @@ public record ResultRow(
             series.role().word(),
             series.toResult().unit().symbol(),
             series.design().word(),
-            series.flasks().stream().flatMap(flask -> flask.readings().stream()).toList());
+            readings(series));
       }
       Ungrouped ungrouped = (Ungrouped) gathered;
       Optional<FlaskFacts> facts =
@@ -142,6 +192,14 @@ public record ResultRow(
           "",
           facts.map(known -> known.design().word()).orElse(""),
           ungrouped.readings());
+    }
+
+    private static List<Recorded> readings(AdditionSeries series) {
+      List<Recorded> readings = new ArrayList<>();
+      for (Flask flask : series.flasks()) {
+        readings.addAll(flask.readings());
+      }
+      return readings;
     }
 
     List<String> files() {

@@ -24,13 +24,15 @@ import org.spikewright.series.Ungrouped;
  * @param remarks the sentences under the heading
  * @param flasks its flasks
  * @param live stored and live numbers; empty where no line was fitted
+ * @param evidence sentences under them
  */
 record SeriesBlock(
     Outcome outcome,
     int firstRow,
     List<String> remarks,
     List<FlaskLine> flasks,
-    Optional<LiveCells> live) {
+    Optional<LiveCells> live,
+    List<String> evidence) {
 
   static SeriesBlock of(Outcome outcome, int firstRow) {
     List<String> remarks = remarks(outcome);
@@ -41,7 +43,8 @@ record SeriesBlock(
         firstRow,
         remarks,
         flasks,
-        outcome.result().map(result -> LiveCells.of(result, flasks, firstFlask)));
+        outcome.result().map(result -> LiveCells.of(result, flasks, firstFlask)),
+        outcome.result().map(EvidenceLines::of).orElse(List.of()));
   }
 
   private static List<String> remarks(Outcome outcome) {
@@ -63,7 +66,8 @@ record SeriesBlock(
 
   /** How many rows, with the empty one at the end. */
   int height() {
-    return 2 + remarks.size() + flasks.size() + (live.isPresent() ? LiveCells.HEIGHT : 0);
+    int numbers = live.isPresent() ? LiveCells.HEIGHT : 0;
+    return 2 + remarks.size() + flasks.size() + numbers + evidence.size();
   }
 
   /** How many check cells say that stored and live numbers differ. */
@@ -84,6 +88,9 @@ record SeriesBlock(
       rows.add(flask(line, unit, shown));
     }
     live.ifPresent(cells -> rows.addAll(cells.rows()));
+    for (String line : evidence) {
+      rows.add(List.of(CellPlan.EMPTY, CellPlan.text(line, Look.FAINT)));
+    }
     rows.add(List.of());
     return rows;
   }

@@ -8,6 +8,7 @@ import java.util.OptionalDouble;
 import org.spikewright.fit.StraightLine;
 import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.Outcome;
+import org.spikewright.judgement.RepeatAdvice;
 import org.spikewright.judgement.SeriesResult;
 import org.spikewright.judgement.Verdict;
 import org.spikewright.series.AdditionSeries;
@@ -21,6 +22,7 @@ import org.spikewright.series.SeriesKey;
  * @param lastRow the last row of the Series sheet, from 1
  * @param mostFlasks the largest number of flask rows of a series
  * @param differing how many live checks differ from the stored numbers
+ * @param forReview how many series for review have something to prepare
  * @param plotted the flasks of the series that the Plot sheet shows first
  */
 record SeriesIndex(
@@ -28,10 +30,14 @@ record SeriesIndex(
     int lastRow,
     int mostFlasks,
     int differing,
+    int forReview,
     List<FlaskLine> plotted) {
 
   /** No series begins below this row, so that the sheet never continues on a second one. */
   static final int LAST_START = 1_000_000;
+
+  /** Nobody prepares more in a day; and the plans are held until the sheets are written. */
+  static final int MOST_PLANS = 2_000;
 
   /**
    * One series.
@@ -47,6 +53,7 @@ record SeriesIndex(
    * @param upper95 on the axis
    * @param topX largest addition, on the axis
    * @param advice what to do, for series to repeat only
+   * @param repeat what to prepare; empty for series beyond the {@link #MOST_PLANS} that are planned
    */
   record Entry(
       int firstRow,
@@ -59,7 +66,8 @@ record SeriesIndex(
       OptionalDouble lower95,
       OptionalDouble upper95,
       OptionalDouble topX,
-      List<String> advice) {}
+      List<String> advice,
+      Optional<RepeatAdvice> repeat) {}
 
   /** Whether the Series sheet holds a series with this verdict, while it has room. */
   static boolean holds(Night night, Verdict verdict) {
@@ -72,12 +80,22 @@ record SeriesIndex(
     int row = SeriesSheet.HEAD_ROWS + 1;
     int mostFlasks = 0;
     int differing = 0;
+    int plans = 0;
+    int forReview = 0;
     for (Outcome outcome : night.outcomes()) {
       if (!holds(night, outcome.verdict()) || row > LAST_START) {
         continue;
       }
       SeriesBlock block = SeriesBlock.of(outcome, row);
-      entries.put(outcome.gathered().key(), entry(outcome, block));
+      Optional<RepeatAdvice> repeat =
+          plans < MOST_PLANS
+              ? Optional.of(RepeatAdvice.of(outcome, night.criteria()))
+              : Optional.empty();
+      boolean planned =
+          repeat.filter(advice -> !(advice instanceof RepeatAdvice.Nothing)).isPresent();
+      plans += planned ? 1 : 0;
+      forReview += planned && outcome.verdict() == Verdict.REVIEW ? 1 : 0;
+      entries.put(outcome.gathered().key(), entry(outcome, block, repeat));
       mostFlasks = Math.max(mostFlasks, block.flasks().size());
       differing += block.differing();
       if (toPlot.isPresent() && toPlot.get().equals(outcome.gathered().key())) {
@@ -85,10 +103,10 @@ record SeriesIndex(
       }
       row += block.height();
     }
-    return new SeriesIndex(entries, row - 1, mostFlasks, differing, plotted);
+    return new SeriesIndex(entries, row - 1, mostFlasks, differing, forReview, plotted);
   }
 
-  private static Entry entry(Outcome outcome, SeriesBlock block) {
+  private static Entry entry(Outcome outcome, SeriesBlock block, Optional<RepeatAdvice> repeat) {
     Optional<SeriesResult> result = outcome.result();
     Optional<StraightLine> line = result.map(SeriesResult::line);
     OptionalDouble none = OptionalDouble.empty();
@@ -107,7 +125,8 @@ record SeriesIndex(
             .filter(OptionalDouble::isPresent)
             .mapToDouble(OptionalDouble::getAsDouble)
             .max(),
-        advice(outcome));
+        advice(outcome),
+        repeat);
   }
 
   private static List<String> advice(Outcome outcome) {

@@ -68,6 +68,7 @@ final class SettingsSheet {
   static SheetPlan of(Night night) {
     List<Setting> all = new ArrayList<>(night.settings());
     all.addAll(limits(night.criteria()));
+    all.addAll(RepeatSettings.of(night.criteria().repeat()));
     all.addAll(METHOD);
     Cautions.ALL.forEach(caution -> all.add(new Setting("Caution", "", caution, "")));
     return SheetPlan.table(

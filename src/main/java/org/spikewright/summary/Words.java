@@ -69,6 +69,7 @@ final class Words {
       case NEAR_DETECTION -> "detected, but too little to be measured well";
       case NEGATIVE_RESULT -> "the line meets zero signal on the wrong side";
       case UNEQUAL_ALIQUOTS -> "the aliquots differ from flask to flask";
+      case EXPIRED_STOCK -> "the stock was past its last day";
       case READINGS_AS_FLASKS -> "readings were counted as flasks, as the laboratory has set";
       case NO_FIT_UNCERTAINTY -> "too few flasks for an uncertainty of the fit";
       case SUPERSEDED_READING -> "a later delivery replaced a reading";

@@ -8,7 +8,6 @@ import java.io.Writer;
 import java.nio.charset.StandardCharsets;
 import java.nio.file.Path;
 import java.util.List;
-import org.apache.commons.csv.CSVFormat;
 import org.spikewright.summary.CsvPlan;
 
 /**
@@ -16,9 +15,6 @@ import org.spikewright.summary.CsvPlan;
  * where they need it (RFC 4180).
  */
 public final class CsvWriter {
-  private static final CSVFormat FORMAT =
-      CSVFormat.RFC4180.builder().setRecordSeparator('\n').get();
-
   private CsvWriter() {}
 
   /**
@@ -33,10 +29,49 @@ public final class CsvWriter {
   /** Prints to a stream, which is flushed and left open. */
   public static void print(CsvPlan plan, OutputStream out) throws IOException {
     Writer writer = new BufferedWriter(new OutputStreamWriter(out, StandardCharsets.UTF_8));
-    FORMAT.printRecord(writer, plan.header().toArray());
+    StringBuilder record = new StringBuilder(256);
+    print(plan.header(), record, writer);
     for (List<String> line : plan.lines()) {
-      FORMAT.printRecord(writer, line.toArray());
+      print(line, record, writer);
     }
     writer.flush();
+  }
+
+  private static void print(List<String> fields, StringBuilder record, Writer writer)
+      throws IOException {
+    record.setLength(0);
+    for (int i = 0; i < fields.size(); i++) {
+      if (i > 0) {
+        record.append(',');
+      }
+      String field = fields.get(i);
+      if (needsQuotes(field, i == 0)) {
+        record.append('"').append(field.replace("\"", "\"\"")).append('"');
+      } else {
+        record.append(field);
+      }
+    }
+    writer.append(record.append('\n'));
+  }
+
+  /**
+   * Beyond what RFC 4180 asks for, blanks at an end, a mark that some programs take for a
+   * comment's, and an empty first field, which could pass for an empty line, stand in quotes.
+   */
+  private static boolean needsQuotes(String field, boolean first) {
+    if (field.isEmpty()) {
+      return first;
+    }
+    char begin = field.charAt(0);
+    if (begin <= '#' || field.charAt(field.length() - 1) <= ' ') {
+      return true;
+    }
+    for (int i = 0; i < field.length(); i++) {
+      char c = field.charAt(i);
+      if (c == ',' || c == '"' || c == '\n' || c == '\r') {
+        return true;
+      }
+    }
+    return false;
   }
 }

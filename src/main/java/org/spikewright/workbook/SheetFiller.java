@@ -1,29 +1,29 @@
 package org.spikewright.workbook;
 
+import java.io.IOException;
 import java.util.List;
 import org.apache.poi.common.usermodel.HyperlinkType;
-import org.apache.poi.ss.usermodel.Cell;
+import org.apache.poi.ss.usermodel.CellStyle;
+import org.apache.poi.ss.usermodel.DateUtil;
 import org.apache.poi.ss.usermodel.FormulaError;
-import org.apache.poi.ss.usermodel.Row;
 import org.apache.poi.ss.util.CellReference;
-import org.apache.poi.xssf.streaming.SXSSFSheet;
 import org.apache.poi.xssf.usermodel.XSSFHyperlink;
-import org.apache.poi.xssf.usermodel.XSSFSheet;
 import org.spikewright.summary.CellPlan;
 import org.spikewright.summary.Look;
 import org.spikewright.summary.SheetPlan;
+import org.spikewright.workbook.StreamedBook.StreamedSheet;
 
 /** Puts planned rows into one sheet, top down. */
 final class SheetFiller {
-  private final SXSSFSheet sheet;
-  private final XSSFSheet underlying;
+  private final StreamedSheet sheet;
+  private final SheetRows out;
   private final Styles styles;
   private final RowHeights heights;
   private int next;
 
-  SheetFiller(SheetPlan plan, SXSSFSheet sheet, XSSFSheet underlying, Styles styles) {
+  SheetFiller(SheetPlan plan, StreamedSheet sheet, Styles styles) {
     this.sheet = sheet;
-    this.underlying = underlying;
+    this.out = sheet.rows();
     this.styles = styles;
     this.heights = new RowHeights(plan.columns());
   }
@@ -34,77 +34,70 @@ final class SheetFiller {
   }
 
   /** Adds a row below. */
-  void add(List<CellPlan> cells) {
-    int number = next++;
+  void add(List<CellPlan> cells) throws IOException {
+    int number = ++next;
     if (cells.isEmpty()) {
       return;
     }
-    Row row = sheet.createRow(number);
-    for (int i = 0; i < cells.size(); i++) {
-      CellPlan plan = cells.get(i);
-      if (!(plan instanceof CellPlan.Empty)) {
-        put(plan, row.createCell(i));
-      }
-    }
     float points = heights.of(cells);
     if (points > RowHeights.ONE_LINE) {
-      row.setHeightInPoints(points);
-    }
-  }
-
-  private void put(CellPlan plan, Cell cell) {
-    if (plan instanceof CellPlan.Text text) {
-      putText(text, cell);
-    } else if (plan instanceof CellPlan.Number number) {
-      cell.setCellValue(number.value());
-      cell.setCellStyle(styles.of(number.look(), number.format()));
-    } else if (plan instanceof CellPlan.Formula formula) {
-      cell.setCellFormula(formula.formula());
-      putCached(formula.cached(), cell);
-    } else if (plan instanceof CellPlan.Moment moment) {
-      cell.setCellValue(moment.value());
-      cell.setCellStyle(styles.of(Look.PLAIN, Styles.MOMENT));
-    } else if (plan instanceof CellPlan.Day day) {
-      cell.setCellValue(day.value());
-      cell.setCellStyle(styles.of(Look.PLAIN, Styles.DAY));
-    } else if (plan instanceof CellPlan.Link link) {
-      putLink(link, cell);
-    }
-  }
-
-  private void putText(CellPlan.Text text, Cell cell) {
-    cell.setCellValue(CellText.of(text.text()));
-    cell.setCellStyle(styles.ofText(text.look(), CellText.needsQuote(text.text())));
-  }
-
-  /** The value that shows until the sheet is computed anew. */
-  private void putCached(CellPlan cached, Cell cell) {
-    if (cached instanceof CellPlan.Number number) {
-      cell.setCellValue(number.value());
-      cell.setCellStyle(styles.of(number.look(), number.format()));
-    } else if (cached instanceof CellPlan.Text text) {
-      cell.setCellValue(CellText.of(text.text()));
-      cell.setCellStyle(styles.ofText(text.look(), false));
-    } else if (cached instanceof CellPlan.NotAvailable) {
-      cell.setCellErrorValue(FormulaError.NA.getCode());
-      cell.setCellStyle(styles.of(Look.FAINT, "General"));
+      out.begin(number, points);
     } else {
-      throw new IllegalArgumentException("a formula cannot hold " + cached);
+      out.begin(number);
+    }
+    for (int i = 0; i < cells.size(); i++) {
+      put(cells.get(i), i);
+    }
+    out.end();
+  }
+
+  private void put(CellPlan plan, int column) {
+    if (plan instanceof CellPlan.Text text) {
+      boolean quoted = CellText.needsQuote(text.text());
+      out.text(column, styles.ofText(text.look(), quoted), CellText.of(text.text()));
+    } else if (plan instanceof CellPlan.Number number) {
+      out.number(column, styles.of(number.look(), number.format()), number.value());
+    } else if (plan instanceof CellPlan.Formula formula) {
+      putFormula(formula, column);
+    } else if (plan instanceof CellPlan.Moment moment) {
+      CellStyle style = styles.of(Look.PLAIN, Styles.MOMENT);
+      out.number(column, style, DateUtil.getExcelDate(moment.value()));
+    } else if (plan instanceof CellPlan.Day day) {
+      CellStyle style = styles.of(Look.PLAIN, Styles.DAY);
+      out.number(column, style, DateUtil.getExcelDate(day.value()));
+    } else if (plan instanceof CellPlan.Link link) {
+      putLink(link, column);
     }
   }
 
-  /**
-   * The link goes to the underlying sheet at once: the cell's own setter first searches all earlier
-   * links, which takes minutes for thousands.
-   */
-  private void putLink(CellPlan.Link link, Cell cell) {
-    cell.setCellValue(CellText.of(link.text()));
-    cell.setCellStyle(styles.ofLink());
+  /** A formula with the value that shows until the sheet is computed anew. */
+  private void putFormula(CellPlan.Formula plan, int column) {
+    String formula = plan.formula();
+    if (plan.cached() instanceof CellPlan.Number number) {
+      CellStyle style = styles.of(number.look(), number.format());
+      out.formula(column, style, formula, number.value());
+    } else if (plan.cached() instanceof CellPlan.Text text) {
+      CellStyle style = styles.ofText(text.look(), false);
+      out.formula(column, style, formula, CellText.of(text.text()));
+    } else if (plan.cached() instanceof CellPlan.NotAvailable) {
+      CellStyle style = styles.of(Look.FAINT, "General");
+      out.failing(column, style, formula, FormulaError.NA.getString());
+    } else {
+      throw new IllegalArgumentException("a formula cannot hold " + plan.cached());
+    }
+  }
+
+  /** A cell and, beside the rows, where it leads. */
+  private void putLink(CellPlan.Link link, int column) {
+    out.text(column, styles.ofLink(), CellText.of(link.text()));
     XSSFHyperlink target =
-        (XSSFHyperlink)
-            sheet.getWorkbook().getCreationHelper().createHyperlink(HyperlinkType.DOCUMENT);
+        sheet
+            .underlying()
+            .getWorkbook()
+            .getCreationHelper()
+            .createHyperlink(HyperlinkType.DOCUMENT);
     target.setAddress("'" + link.sheet() + "'!A" + link.row());
-    target.setCellReference(new CellReference(cell.getRowIndex(), cell.getColumnIndex()));
-    underlying.addHyperlink(target);
+    target.setCellReference(new CellReference(next - 1, column));
+    sheet.underlying().addHyperlink(target);
   }
 }

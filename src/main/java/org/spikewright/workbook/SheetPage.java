@@ -13,6 +13,7 @@ import org.apache.poi.xssf.streaming.SXSSFSheet;
 import org.apache.poi.xssf.streaming.SXSSFWorkbook;
 import org.apache.poi.xssf.usermodel.XSSFSheet;
 import org.spikewright.summary.SheetPlan;
+import org.spikewright.workbook.StreamedBook.StreamedSheet;
 
 /** How one sheet lies on screen and paper, and what lies over its cells. */
 final class SheetPage {
@@ -23,11 +24,11 @@ final class SheetPage {
   private final SXSSFSheet sheet;
   private final XSSFSheet underlying;
 
-  SheetPage(SheetPlan plan, SXSSFWorkbook book, SXSSFSheet sheet, XSSFSheet underlying) {
+  SheetPage(SheetPlan plan, SXSSFWorkbook book, StreamedSheet sheet) {
     this.plan = plan;
     this.book = book;
-    this.sheet = sheet;
-    this.underlying = underlying;
+    this.sheet = sheet.streamed();
+    this.underlying = sheet.underlying();
   }
 
   /**
@@ -45,15 +46,16 @@ final class SheetPage {
     }
     sheet.setDisplayGridlines(plan.layout().table().isPresent());
     table(rows, part);
-    print();
+    print(rows);
     plan.choices().forEach(this::choice);
     if (part == 1) {
       plan.charts().forEach(chart -> new Charts(underlying).draw(chart));
     }
+    CellRangeAddress all =
+        new CellRangeAddress(0, Math.max(rows - 1, 0), 0, plan.columns().size() - 1);
+    underlying.setDimensionOverride(all);
     // Sample names made of digits are meant as text: no warning mark in their corner.
-    underlying.addIgnoredErrors(
-        new CellRangeAddress(0, Math.max(rows - 1, 0), 0, plan.columns().size() - 1),
-        IgnoredErrorType.NUMBER_STORED_AS_TEXT);
+    underlying.addIgnoredErrors(all, IgnoredErrorType.NUMBER_STORED_AS_TEXT);
     book.setSheetHidden(
         book.getSheetIndex(sheet), plan.layout().kind() == SheetPlan.Kind.HIDDEN_ROWS);
   }
@@ -79,7 +81,7 @@ final class SheetPage {
     name.setRefersToFormula(range.formatAsString(sheet.getSheetName(), true));
   }
 
-  private void print() {
+  private void print(int rows) {
     PrintSetup setup = sheet.getPrintSetup();
     setup.setPaperSize(PrintSetup.A4_PAPERSIZE);
     boolean onePage = plan.layout().kind() == SheetPlan.Kind.ONE_PAGE;
@@ -100,8 +102,7 @@ final class SheetPage {
     }
     if (plan.layout().printColumns() > 0) {
       int index = book.getSheetIndex((Sheet) sheet);
-      int lastRow = Math.max(sheet.getLastRowNum(), 0);
-      book.setPrintArea(index, 0, plan.layout().printColumns() - 1, 0, lastRow);
+      book.setPrintArea(index, 0, plan.layout().printColumns() - 1, 0, Math.max(rows - 1, 0));
     }
   }
 

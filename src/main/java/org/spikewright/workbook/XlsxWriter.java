@@ -10,19 +10,14 @@ import java.util.Optional;
 import java.util.function.LongConsumer;
 import org.apache.poi.ooxml.POIXMLProperties.CoreProperties;
 import org.apache.poi.ss.SpreadsheetVersion;
-import org.apache.poi.xssf.streaming.SXSSFSheet;
-import org.apache.poi.xssf.streaming.SXSSFWorkbook;
-import org.apache.poi.xssf.usermodel.XSSFSheet;
 import org.apache.poi.xssf.usermodel.XSSFWorkbook;
 import org.spikewright.summary.CellPlan;
 import org.spikewright.summary.SheetPlan;
 import org.spikewright.summary.SummaryPlan;
+import org.spikewright.workbook.StreamedBook.StreamedSheet;
 
 /** Writes a planned workbook, row by row, in memory that does not grow with the night. */
 public final class XlsxWriter {
-
-  /** How many rows wait in memory before they go to POI's temporary file. */
-  private static final int WINDOW = 64;
 
   private final int mostRows;
 
@@ -68,7 +63,7 @@ public final class XlsxWriter {
   }
 
   private void write(SummaryPlan plan, OutputStream out, LongConsumer progress) throws IOException {
-    try (SXSSFWorkbook book = new StreamedBook(WINDOW)) {
+    try (StreamedBook book = new StreamedBook()) {
       properties(plan, book.getXSSFWorkbook());
       Styles styles = new Styles(book.getXSSFWorkbook());
       for (SheetPlan sheet : plan.sheets()) {
@@ -93,23 +88,25 @@ public final class XlsxWriter {
     core.setModified(moment);
   }
 
-  private void write(SheetPlan plan, SXSSFWorkbook book, Styles styles, LongConsumer progress) {
+  private void write(SheetPlan plan, StreamedBook book, Styles styles, LongConsumer progress)
+      throws IOException {
     Iterator<List<CellPlan>> rows = plan.rows().iterator();
     long written = 0;
     int part = 1;
     do {
       String name = part == 1 ? plan.name() : plan.name() + " " + part;
-      SXSSFSheet sheet = book.createSheet(name);
-      XSSFSheet underlying = book.getXSSFWorkbook().getSheet(name);
-      SheetFiller filler = new SheetFiller(plan, sheet, underlying, styles);
-      plan.head().forEach(filler::add);
+      StreamedSheet sheet = book.newSheet(name);
+      SheetFiller filler = new SheetFiller(plan, sheet, styles);
+      for (List<CellPlan> row : plan.head()) {
+        filler.add(row);
+      }
       while (rows.hasNext() && filler.rows() < mostRows) {
         filler.add(rows.next());
         if (++written % 256 == 0) {
           progress.accept(written);
         }
       }
-      new SheetPage(plan, book, sheet, underlying).layOut(filler.rows(), part);
+      new SheetPage(plan, book, sheet).layOut(filler.rows(), part);
       part++;
     } while (rows.hasNext());
     progress.accept(written);

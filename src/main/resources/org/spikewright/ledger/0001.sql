@@ -105,6 +105,8 @@ CREATE TABLE reading (
   facts INTEGER NOT NULL,
   origin INTEGER NOT NULL,
   line_no BIGINT NOT NULL,
+  -- the internal standard's signal, where there is one
+  standard DOUBLE PRECISION,
   PRIMARY KEY (subject, read_at, batch, preparation, flask, replicate, nth)
 ) WITHOUT ROWID;
 

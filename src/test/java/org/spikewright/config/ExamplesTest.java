@@ -8,12 +8,17 @@ import java.nio.file.Path;
 import java.time.ZoneId;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.ValueSource;
 import org.spikewright.mapping.Fact;
 import org.spikewright.mapping.Mapping;
+import org.spikewright.mapping.Places;
 import org.spikewright.mapping.Tally;
 import org.spikewright.mapping.Trial;
+import org.spikewright.reading.MethodFacts;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Role;
 import org.spikewright.reading.Signal;
@@ -37,7 +42,7 @@ class ExamplesTest {
   void allLoad() {
     MappingFolder folder = MappingFolder.load(MAPPINGS, LISBON);
     assertThat(folder.faults()).isEmpty();
-    assertThat(folder.good()).hasSize(12);
+    assertThat(folder.good()).hasSize(15);
   }
 
   @Test
@@ -56,6 +61,30 @@ class ExamplesTest {
     for (String key : MappingKeys.METHOD_IN_FIXED) {
       assertThat(text).containsPattern("(?m)^(#: )?" + key + " *=");
     }
+  }
+
+  /** What the reference shows of names in comments, by the tables that are shipped. */
+  @ParameterizedTest(name = "{0}")
+  @ValueSource(strings = {"stock       = \"two metals\"", "stock       = { Cd = \"two metals\""})
+  void theReferenceNamesWhatTheShippedTablesHold(String stock) throws IOException {
+    Loaded<Settings> settings = Settings.load(Path.of("conf", "spikewright.toml"));
+    String text = Files.readString(MAPPINGS.resolve("reference-all-keys.toml"));
+    String named =
+        text.replaceFirst("(?m)^stock          = .*$", "")
+            .replace("#: " + stock, stock)
+            .replace("#: addition_by = \"P100", "addition_by = \"P100")
+            .replace("\"100 mL ± 0.10 mL\"", "\"100 mL\"")
+            .replace("#: final_volume_by = \"flask 100 A", "final_volume_by = \"flask 100 A");
+    assertThat(named).hasSizeLessThan(text.length() - 40);
+    Loaded<Mapping> mapping =
+        MappingFile.read(
+            Path.of("m.toml"), named, LISBON, ((Loaded.Good<Settings>) settings).value().shelf());
+    assertThat(mapping).as(mapping.toString()).isInstanceOf(Loaded.Good.class);
+    Places places = ((Loaded.Good<Mapping>) mapping).value().places();
+    assertThat(places.fixedStocks().of("Cd")).contains("two metals");
+    assertThat(places.fixedNames())
+        .containsEntry(Fact.ADDITION_BY, "P100, P1000")
+        .containsEntry(Fact.FINAL_VOLUME_BY, "flask 100 A");
   }
 
   @Test
@@ -258,8 +287,7 @@ class ExamplesTest {
     Reading second = trial.readings.get(1);
     assertThat(second.subject().analyte()).isEqualTo("Cd");
     assertThat(second.subject().line()).isEqualTo("228.8");
-    assertThat(second.signal())
-        .isEqualTo(new Signal.Value(2000, "2000", Optional.of(new Spread(30, 3))));
+    assertThat(second.signal()).isEqualTo(mean(2000, "2000", new Spread(30, 3)));
     assertThat(trial.rejections.get(0).column()).isEqualTo("signal_sd");
     assertThat(trial.rejections.get(0).position().within()).isEqualTo("line 2, column 8");
   }
@@ -294,7 +322,7 @@ class ExamplesTest {
             "W-1,3,10,0.3234,,3");
     assertThat(trial.tally()).isEqualTo(new Tally(3, 2, 1, 0));
     assertThat(trial.readings.get(0).signal())
-        .isEqualTo(new Signal.Value(0.1234, "0.1234", Optional.of(new Spread(0.0021, 3))));
+        .isEqualTo(mean(0.1234, "0.1234", new Spread(0.0021, 3)));
     assertThat(trial.readings.get(1).signal()).isEqualTo(new Signal.Value(0.2234, "0.2234"));
   }
 
@@ -336,6 +364,67 @@ class ExamplesTest {
   }
 
   @Test
+  void weighed() {
+    Trial trial =
+        Trial.text(
+            mapping("weighed.toml"),
+            "weighed/a.csv",
+            ",",
+            "Sample,Flask,Run,Counts Pb,Counts Tl,Aliquot g,Spike g,Tl solution g",
+            "K-1,1,1,10040,5025,10.003,0,0.1002",
+            "K-1,2,1,20040,SAT,9.998,0.5,0.1001",
+            "K-1,3,1,30040,25,10.001,1.0,0.1");
+    assertThat(trial.tally()).isEqualTo(new Tally(3, 2, 1, 0));
+    Reading first = trial.readings.get(0);
+    assertThat(first.facts().aliquot().get()).hasToString("10.003 g");
+    assertThat(first.facts().addition().amount()).hasToString("0 g");
+    assertThat(first.facts().internalStandard().get().mass().get()).hasToString("0.1002 g");
+    assertThat(first.signal())
+        .isEqualTo(new Signal.Value(10040, "10040", OptionalDouble.of(5025), Optional.empty()));
+    assertThat(trial.readings.get(1).signal())
+        .isEqualTo(new Signal.NoNumber(Signal.State.OVER_RANGE, "SAT"));
+    assertThat(trial.rejections.get(0).column()).isEqualTo("Counts Tl");
+    assertThat(trial.rejections.get(0).expected()).contains("above its baseline of 25");
+  }
+
+  @Test
+  void internalStandard() {
+    Trial trial =
+        Trial.text(
+            mapping("internal-standard.toml"),
+            "yttrium/a.csv",
+            ",",
+            "Sample,Element,Intensity,Y 371.029,Time,Spike",
+            "K-1,Cu,1000,5000,2025-01-15 18:30:00,0",
+            "K-1,Cu,1000,,2025-01-15 18:31:00,1",
+            "K-1,Zn,1000,0,2025-01-15 18:31:00,0");
+    assertThat(trial.tally()).isEqualTo(new Tally(3, 1, 2, 0));
+    assertThat(trial.rejections)
+        .extracting(rejection -> rejection.position().column())
+        .containsOnly(4);
+    assertThat(trial.rejections.get(1).expected()).contains("above 0");
+  }
+
+  @Test
+  void electrode() {
+    Trial trial =
+        Trial.text(
+            mapping("electrode.toml"),
+            "electrode/a.csv",
+            ",",
+            "Sample,Step,E / mV,Time,Added / mL",
+            "K-1,0,102.3,2025-01-15 18:30:00,0",
+            "K-1,1,89.1,2025-01-15 18:31:00,0.5",
+            "K-1,2,81.2,2025-01-15 18:32:00,0.5");
+    assertThat(trial.readings)
+        .extracting(reading -> reading.facts().addition().amount().toString())
+        .containsExactly("0 mL", "0.5 mL", "1 mL");
+    MethodFacts method = trial.readings.get(0).facts().method();
+    assertThat(method.electrode().get().charge()).isEqualTo(-1);
+    assertThat(method.signalUnit().get().symbol()).isEqualTo("mV");
+  }
+
+  @Test
   void twoMappingsOfOneNameAreOneTooMany(@TempDir Path folder) throws IOException {
     String text = Files.readString(MAPPINGS.resolve("long-csv.toml"));
     Files.writeString(folder.resolve("b.toml"), text);
@@ -352,5 +441,9 @@ class ExamplesTest {
     assertThat(second.found()).isEqualTo("the name 'furnace', which a.toml has already");
     assertThat(loaded.faults()).hasSizeGreaterThan(2);
     assertThat(MappingFolder.load(folder.resolve("none"), LISBON).faults()).hasSize(1);
+  }
+
+  private static Signal mean(double value, String text, Spread spread) {
+    return new Signal.Value(value, text, OptionalDouble.empty(), Optional.of(spread));
   }
 }

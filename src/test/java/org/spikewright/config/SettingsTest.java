@@ -96,6 +96,7 @@ class SettingsTest {
     assertThat(spelt.waitForFlasks()).isEqualTo(shipped.waitForFlasks());
     assertThat(spelt.leave()).isEqualTo(shipped.leave());
     assertThat(values(spelt.criteria())).isEqualTo(values(shipped.criteria()));
+    assertThat(spelt.criteria().repeat()).isEqualTo(shipped.criteria().repeat());
   }
 
   private static List<Double> values(CriteriaBook criteria) {
@@ -129,6 +130,11 @@ class SettingsTest {
       delimiter = '|',
       value = {
         "[criteria]~false_alarms = 0.9 | 9 | at most 0.5",
+        "[repeat]~flasks = 3 | 9 | from 4",
+        "[repeat]~flasks = 20~most_flasks = 12 | 10 | as many as flasks",
+        "[repeat]~top_addition = 4 | 9 | from 1.5 to 3.0",
+        "[repeat]~largest_share_of_volume = nan | 9 | from 0.001",
+        "[repeat]~pipettes = ['10 µL'] | 9 | such as",
         "[criteria]~false_alarms = nan | 9 | above 0",
         "[criteria]~bend_to_review = 0.5 | 9 | at most as large as bend_to_repeat",
         "[criteria]~bend_to_review = { limt = 0.5 } | 9 | limit",

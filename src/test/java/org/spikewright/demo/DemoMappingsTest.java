@@ -54,7 +54,8 @@ class DemoMappingsTest {
   }
 
   private static MappingFolder mappings() {
-    return MappingFolder.load(FOLDER.resolve("mappings"), settings().calendar().zone());
+    Settings settings = settings();
+    return MappingFolder.load(settings.mappings(), settings.calendar().zone(), settings.shelf());
   }
 
   private static Settings settings() {

@@ -40,6 +40,12 @@ class LiveRTest {
     assertSame("fit-t.csv", run("fit-t.R"));
   }
 
+  @Test
+  void the_further_numbers_are_those_that_the_scripts_make() throws Exception {
+    assertSame("numbers-series.csv", run("numbers-series.R"));
+    assertSame("numbers-r.csv", run("numbers.R", STORED.resolve("numbers-series.csv").toString()));
+  }
+
   private List<CSVRecord> run(String script, String... arguments) throws Exception {
     assumeTrue(isInstalled(), "Rscript is not on the path: the stored numbers of R are not remade");
     Path out = folder.resolve(script + ".csv");

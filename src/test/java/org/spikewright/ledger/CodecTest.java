@@ -18,6 +18,7 @@ import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Accuracies;
 import org.spikewright.reading.Addition;
 import org.spikewright.reading.Blanks;
+import org.spikewright.reading.Bottle;
 import org.spikewright.reading.Calculation;
 import org.spikewright.reading.Design;
 import org.spikewright.reading.FlaskFacts;
@@ -29,6 +30,7 @@ import org.spikewright.reading.SampleId;
 import org.spikewright.reading.Subject;
 import org.spikewright.series.SeriesKey;
 import org.spikewright.summary.ResultRow;
+import org.spikewright.summary.RowEvidence;
 
 class CodecTest {
   private static final String[] WORDS = {
@@ -142,9 +144,7 @@ class CodecTest {
     return new FlaskFacts(
         pick(Role.values()),
         pick(Design.values()),
-        random.nextBoolean()
-            ? new Addition.OfStock(quantity(), measured())
-            : new Addition.Stated(quantity(), pick(Addition.Terms.values())),
+        addition(),
         optional(),
         optional(),
         optional(),
@@ -158,7 +158,9 @@ class CodecTest {
         method(),
         random.nextBoolean()
             ? Optional.empty()
-            : Optional.of(new InternalStandard(pick(InternalStandard.Given.values()), optional())),
+            : Optional.of(
+                new InternalStandard(
+                    pick(InternalStandard.Given.values()), optional(), optionalNumber())),
         random.nextBoolean()
             ? Accuracies.NONE
             : new Accuracies(
@@ -170,7 +172,28 @@ class CodecTest {
                 accuracy(),
                 accuracy(),
                 accuracy(),
-                accuracy()));
+                accuracy()),
+        random.nextBoolean() ? Optional.empty() : Optional.of(bottle()));
+  }
+
+  private Bottle bottle() {
+    return new Bottle(
+        pick(WORDS),
+        random.nextBoolean()
+            ? Optional.empty()
+            : Optional.of(LocalDate.ofEpochDay(random.nextInt(100_000) - 50_000)));
+  }
+
+  private Addition addition() {
+    return switch (random.nextInt(3)) {
+      case 0 -> new Addition.OfStock(quantity(), measured());
+      case 1 ->
+          new Addition.OfStocks(
+              List.of(
+                  new Addition.OfStock(quantity(), measured()),
+                  new Addition.OfStock(quantity(), measured())));
+      default -> new Addition.Stated(quantity(), pick(Addition.Terms.values()));
+    };
   }
 
   private Optional<Accuracies.Accuracy> accuracy() {
@@ -202,7 +225,8 @@ class CodecTest {
             ? Optional.empty()
             : Optional.of(
                 new MethodFacts.Electrode(
-                    random.nextInt(9) - 4, optionalNumber(), optionalNumber())));
+                    random.nextInt(9) - 4, optionalNumber(), optionalNumber())),
+        random.nextBoolean() ? Optional.empty() : Optional.of(unit()));
   }
 
   private ResultRow result() {
@@ -235,7 +259,20 @@ class CodecTest {
         random.nextBoolean() ? OptionalInt.empty() : OptionalInt.of(random.nextInt()),
         optionalNumber(),
         pick(WORDS),
-        words());
+        words(),
+        new RowEvidence(
+            pick(WORDS),
+            random.nextInt(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            optionalNumber(),
+            words()));
   }
 
   private List<String> words() {

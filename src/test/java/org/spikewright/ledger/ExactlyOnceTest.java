@@ -101,7 +101,7 @@ class ExactlyOnceTest {
         reading.replicate(),
         true,
         reading.measuredAt(),
-        new Signal.Value(0.1, text, Optional.of(spread)),
+        new Signal.Value(0.1, text, OptionalDouble.empty(), Optional.of(spread)),
         reading.facts(),
         reading.position());
   }

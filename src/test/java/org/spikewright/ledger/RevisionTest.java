@@ -18,6 +18,7 @@ import org.junit.jupiter.api.io.TempDir;
 import org.spikewright.judgement.Verdict;
 import org.spikewright.series.SeriesKey;
 import org.spikewright.summary.ResultRow;
+import org.spikewright.summary.RowEvidence;
 
 class RevisionTest {
   private static final LocalDate DAY = Samples.DAY;
@@ -222,6 +223,7 @@ class RevisionTest {
         OptionalInt.of(2),
         none,
         "made up",
-        List.of("run.csv"));
+        List.of("run.csv"),
+        RowEvidence.EMPTY);
   }
 }

@@ -163,10 +163,17 @@ class HandComputedFlasksTest {
     isAbout(line.limits(T2)[1], result.upper95(), 1e-11);
   }
 
-  /** What the steps added up to cannot be told from the last stock and the total volume. */
+  /** Each step brings its own stock: 0, 1, 2 and 12 mg/L referred to the 10 mL aliquot. */
   @Test
-  void stocksOfDifferentStrengthInOneVesselAreRefusedAndNeverMixedUp() throws IOException {
-    Outcome outcome =
+  void stocksOfDifferentStrengthInOneVesselAddUpStepByStep() throws IOException {
+    double[] added = {0, 0.1, 0.2, 0.3};
+    double[] x = {0, 1, 2, 12};
+    double[] signal = {0.5, 0.75, 1.0, 3.5};
+    double[] y = new double[4];
+    for (int i = 0; i < 4; i++) {
+      y[i] = signal[i] * (20 + added[i]) / 20;
+    }
+    SeriesResult result =
         read(
                 VESSEL,
                 "sample,step,added,stock,signal",
@@ -174,10 +181,27 @@ class HandComputedFlasksTest {
                 "BW-1,1,100,100,0.75",
                 "BW-1,2,100,100,1.0",
                 "BW-1,3,100,1000,3.5")
+            .result();
+    ByHand line = ByHand.line(x, y);
+    isAbout(line.found(), result.value(), 1e-12);
+    isAbout(line.slope(), result.line().slope(), 1e-12);
+  }
+
+  /** What was added cannot be told from the last stock and the total volume. */
+  @Test
+  void totalsOfStocksOfDifferentStrengthAreRefusedAndNeverMixedUp() throws IOException {
+    Outcome outcome =
+        read(
+                VESSEL.replace("\"each\"", "\"cumulative\""),
+                "sample,step,added,stock,signal",
+                "BW-1,0,0,100,0.5",
+                "BW-1,1,100,100,0.75",
+                "BW-1,2,200,100,1.0",
+                "BW-1,3,300,1000,3.5")
             .only();
     assertThat(outcome.result()).isEmpty();
     assertThat(outcome.flags()).extracting(Flag::kind).contains(FlagKind.NO_SERIES);
-    assertThat(outcome.flags().get(0).sentence()).contains("100 mg/L", "1000 mg/L");
+    assertThat(outcome.flags().get(0).sentence()).contains("100 mg/L", "1000 mg/L", "each");
   }
 
   /** The stock beside a step that added nothing says nothing. */

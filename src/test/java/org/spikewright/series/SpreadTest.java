@@ -6,6 +6,7 @@ import static org.assertj.core.api.Assertions.within;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import java.util.Random;
 import org.junit.jupiter.api.Test;
 import org.spikewright.reading.Reading;
@@ -27,7 +28,7 @@ class SpreadTest {
             plain.replicate(),
             plain.replicateMapped(),
             plain.measuredAt(),
-            new Signal.Value(signal, "x", spread),
+            new Signal.Value(signal, "x", OptionalDouble.empty(), spread),
             plain.facts(),
             plain.position()));
   }

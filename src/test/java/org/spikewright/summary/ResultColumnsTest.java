@@ -5,7 +5,6 @@ import static org.assertj.core.api.Assertions.assertThatThrownBy;
 
 import java.util.ArrayList;
 import java.util.List;
-import java.util.OptionalDouble;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.ValueSource;
@@ -48,7 +47,7 @@ class ResultColumnsTest {
     assertThat(row.lower95()).isEqualTo(result.lower95()).isEqualTo(row.ownLower95());
     assertThat(row.ownStandardError()).isEqualTo(result.standardError());
     assertThat(row.intervalBasis()).isEqualTo("own");
-    assertThat(row.standardUncertainty()).isEqualTo(OptionalDouble.empty());
+    assertThat(row.standardUncertainty()).isEqualTo(result.standardError());
     assertThat(row.slope()).hasValue(result.line().slope());
     assertThat(row.residualDf()).hasValue(3);
     assertThat(row.flasks()).isEqualTo(5);
@@ -95,6 +94,6 @@ class ResultColumnsTest {
   void aRowOfAnotherShapeIsRefused() {
     assertThatThrownBy(() -> ResultColumns.row(List.of("2025-01-15")))
         .isInstanceOf(IllegalArgumentException.class)
-        .hasMessageContaining("1 fields, not 35");
+        .hasMessageContaining("1 fields, not 47");
   }
 }

@@ -48,8 +48,6 @@ public final class Program implements AutoCloseable {
               "-XX:TieredStopAtLevel=1",
               "-XX:+UseSerialGC",
               "-Djava.awt.headless=true"));
-      // The log as it is in use, not as it is in tests.
-      command.add("-Dlogback.configurationFile=logback.xml");
       command.addAll(jvm);
       command.addAll(List.of("-cp", System.getProperty("java.class.path"), main));
       command.addAll(List.of(args));

@@ -1,9 +1,8 @@
-package org.spikewright.schedule;
+package org.spikewright.app;
 
 import static org.assertj.core.api.Assertions.assertThat;
 
 import ch.qos.logback.classic.LoggerContext;
-import ch.qos.logback.classic.joran.JoranConfigurator;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.List;
@@ -16,15 +15,13 @@ import org.slf4j.Logger;
 class LogSetupTest {
   @TempDir Path folder;
 
-  private static LoggerContext configured(String property, String value) throws Exception {
+  private static LoggerContext configured(String property, String value) {
     LoggerContext context = new LoggerContext();
     context.setMDCAdapter(new ch.qos.logback.classic.util.LogbackMDCAdapter());
     if (!property.isEmpty()) {
       context.putProperty(property, value);
     }
-    JoranConfigurator configurator = new JoranConfigurator();
-    configurator.setContext(context);
-    configurator.doConfigure(LogSetupTest.class.getResource("/logback.xml"));
+    LogSetup.setUp(context);
     return context;
   }
 
@@ -57,7 +54,7 @@ class LogSetupTest {
   }
 
   @Test
-  void withoutANamedFileNoneIsWritten() throws Exception {
+  void withoutANamedFileNoneIsWritten() {
     LoggerContext context = configured("", "");
     ch.qos.logback.classic.Logger root = context.getLogger(Logger.ROOT_LOGGER_NAME);
     assertThat(root.getAppender("STDERR")).isNotNull();
