@@ -64,7 +64,7 @@ final class DryRun {
     out.println("Export   " + name);
     out.println("Mapping  " + mapping.name() + ", instrument " + mapping.instrument());
     RowMapper mapper = mapping.open(name, new Kept());
-    Optional<DecodeFault> fault = FileDecoder.read(export, name, mapping.shape(), mapper::accept);
+    Optional<DecodeFault> fault = FileDecoder.read(export, name, mapping.shape(), mapper);
     MappedFile mapped = mapper.finish();
     boolean fit;
     if (fault.isPresent()) {
@@ -72,6 +72,7 @@ final class DryRun {
     } else if (mapped instanceof MappedFile.Unmappable unmappable) {
       fit = refused(Refusal.of(unmappable));
     } else {
+      ((MappedFile.Mapped) mapped).workedOut().forEach(line -> out.println("Taken    " + line));
       fit = understood(((MappedFile.Mapped) mapped).tally());
     }
     out.flush();

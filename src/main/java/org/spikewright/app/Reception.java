@@ -25,6 +25,9 @@ import org.spikewright.mapping.RowMapper;
 import org.spikewright.mapping.Tally;
 import org.spikewright.reading.Subject;
 import org.spikewright.table.DecodeFault;
+import org.spikewright.table.Row;
+import org.spikewright.table.RowSink;
+import org.spikewright.table.TextForm;
 
 /** Takes one settled file in: known already, refused, or read in one transaction. */
 final class Reception {
@@ -125,9 +128,17 @@ final class Reception {
               file.path(),
               file.name(),
               mapping.shape(),
-              row -> {
-                progress.at(reading, row.number());
-                return mapper.accept(row) && !stop.isRequested();
+              new RowSink() {
+                @Override
+                public boolean accept(Row row) {
+                  progress.at(reading, row.number());
+                  return mapper.accept(row) && !stop.isRequested();
+                }
+
+                @Override
+                public void begins(TextForm form) {
+                  mapper.begins(form);
+                }
               });
       if (stop.isRequested() || changed(file, content)) {
         return new Received.LetGo();
@@ -135,6 +146,7 @@ final class Reception {
       sink.finish();
       MappedFile mapped = mapper.finish();
       if (fault.isEmpty() && mapped instanceof MappedFile.Mapped done) {
+        LOG.info("taken file={} as=\"{}\"", file.name(), String.join("; ", done.workedOut()));
         return recorded(record(delivery, done.tally(), sink.first(), file, arriving));
       }
       refusal =

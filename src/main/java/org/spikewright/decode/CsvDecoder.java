@@ -10,6 +10,7 @@ import org.spikewright.table.Row;
 import org.spikewright.table.RowSink;
 import org.spikewright.table.Source;
 import org.spikewright.table.TableShape;
+import org.spikewright.table.TextForm;
 
 /** Reads text files: CSV, TSV and their like. */
 final class CsvDecoder {
@@ -21,10 +22,12 @@ final class CsvDecoder {
    */
   static void read(Path path, String shownName, TableShape shape, RowSink sink) throws IOException {
     TextFile file = TextFile.of(path, shape.encoding());
-    char separator =
+    SeparatorSearch.Found found =
         shape.separator().isPresent()
-            ? shape.separator().get()
-            : SeparatorSearch.in(file, shape.quote(), shape.headerWords());
+            ? new SeparatorSearch.Found(shape.separator().get(), "as declared")
+            : SeparatorSearch.in(file, shape.quote(), shape.header());
+    char separator = found.separator();
+    sink.begins(new TextForm(separator, found.how(), file.charset().name(), file.how()));
     Source source = new Source(shownName, Optional.empty());
     try (CsvRecords records = new CsvRecords(file, separator, shape.quote())) {
       while (records.next()) {

@@ -18,6 +18,8 @@ public enum Fact {
   PREPARATION("preparation"),
   RESULT_UNIT("result_unit"),
   SIGNAL("signal", Kind.SIGNAL, Bound.ANY, "", Dimension.NUMBER),
+  SIGNAL_SD("signal_sd", Kind.SPREAD, Bound.NOT_NEGATIVE, "0.002", Dimension.NUMBER),
+  READINGS("readings", Kind.SPREAD, Bound.AT_LEAST_ONE, "3", Dimension.NUMBER),
   INTERNAL_STANDARD("internal_standard", Kind.SIGNAL, Bound.ANY, "", Dimension.NUMBER),
   MEASURED_AT("measured_at", Kind.TIME, Bound.ANY, ""),
   ADDITION_VOLUME("addition_volume", Kind.AMOUNT, Bound.NOT_NEGATIVE, "0.5 mL", Dimension.VOLUME),
@@ -66,6 +68,8 @@ public enum Fact {
     NAME,
     /** The signal: a number or a declared word. */
     SIGNAL,
+    /** How the readings behind a mean signal scatter: a number. */
+    SPREAD,
     /** A date and time. */
     TIME,
     /** A number with its unit. */

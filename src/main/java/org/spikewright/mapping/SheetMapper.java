@@ -51,20 +51,22 @@ final class SheetMapper {
   private final NameReader names;
   private final FactsReader facts;
   private final SignalReader signals;
+  private final SpreadReader spreads;
   private final RowFilter filter;
   private final Set<Fact> namedFacts;
   private final boolean batchInRow;
   private final Map<FlaskFacts, Map<Addition, FlaskFacts>> summed = new HashMap<>();
   private Subjects subjects = new Subjects("");
 
-  SheetMapper(Mapping mapping, Header header, FileState file) {
+  SheetMapper(Mapping mapping, Header header, FileState file, Map<Fact, List<Outside>> around) {
     this.mapping = mapping;
     this.header = header;
     this.file = file;
-    this.lookup = new RowLookup(mapping.places(), header, file.fromFileName());
+    this.lookup = new RowLookup(mapping.places(), header, around);
     this.names = new NameReader(mapping.places(), lookup);
     this.facts = new FactsReader(mapping, lookup, names);
     this.signals = new SignalReader(mapping, lookup);
+    this.spreads = new SpreadReader(mapping, lookup);
     this.filter = new RowFilter(mapping.rows(), header);
     this.namedFacts = EnumSet.noneOf(Fact.class);
     Stream.of(Fact.values()).filter(mapping.places()::isNamed).forEach(namedFacts::add);
@@ -129,7 +131,10 @@ final class SheetMapper {
     Optional<Facts.Known> known = subject.flatMap(whose -> facts(whose.analyte(), role, troubles));
     boolean placed = troubles.isEmpty();
     Optional<Instant> time = time(troubles);
-    Optional<Signal> signal = signals.read(known.map(Facts.Known::facts), troubles);
+    Optional<Signal> signal =
+        signals
+            .read(known.map(Facts.Known::facts), troubles)
+            .flatMap(read -> spreads.with(read, troubles));
     if (!placed) {
       return refused(row, troubles);
     }

@@ -1,7 +1,9 @@
 package org.spikewright.mapping;
 
 /**
- * What became of a file's rows. Data rows are the rows below the header that are not blank.
+ * What became of a file's rows. Data rows are the rows below the header that are not blank. Where a
+ * row holds several readings, each cell that should hold one counts as a row. Headers that come
+ * again within a table, titles of blocks, and what stands behind a declared end are skipped rows.
  *
  * @param rows data rows
  * @param readings rows that became a reading
