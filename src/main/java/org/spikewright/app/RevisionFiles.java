@@ -141,7 +141,8 @@ final class RevisionFiles {
         ledger.files(day, revision.arrivalLimit()),
         ledger.refused(day, revision.arrivalLimit()),
         SettingsLines.of(settings, station.mappings().good(), revision),
-        settings.criteria());
+        settings.criteria(),
+        source.evidence());
   }
 
   /** The settings that held when the revision was made, which may not be today's. */

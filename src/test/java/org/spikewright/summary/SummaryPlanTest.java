@@ -35,10 +35,12 @@ class SummaryPlanTest {
             "To repeat",
             "Series",
             "Plot",
+            "Noise",
             "Files",
             "Refused rows",
             "Settings",
-            "Plot data");
+            "Plot data",
+            "Noise data");
   }
 
   @Test
@@ -139,7 +141,8 @@ class SummaryPlanTest {
             night.files(),
             night.refused(),
             night.settings(),
-            night.criteria());
+            night.criteria(),
+            night.evidence());
     SummaryPlan.of(counted).sheets().forEach(SummaryPlanTest::rows);
     assertThat(walks).hasValue(2);
   }
@@ -147,7 +150,7 @@ class SummaryPlanTest {
   @Test
   void aNightWithoutSeriesHasEverySheet() {
     SummaryPlan plan = SummaryPlan.of(Nights.empty());
-    assertThat(plan.sheets()).hasSize(9);
+    assertThat(plan.sheets()).hasSize(11);
     assertThat(text(rows(sheet(plan, "Plot")).get(0).get(0))).isEqualTo("No series to plot");
     assertThat(text(sheet(plan, "To repeat").head().get(0).get(0))).isEqualTo("Nothing to repeat");
   }

@@ -131,7 +131,8 @@ class WholeOrAbsentTest {
         night.files(),
         night.refused(),
         night.settings(),
-        night.criteria());
+        night.criteria(),
+        night.evidence());
   }
 
   private List<String> names() throws IOException {
