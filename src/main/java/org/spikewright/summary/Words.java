@@ -82,7 +82,7 @@ final class Words {
   /** Whether a flag is one of the statistical tests that share the false-alarm rate. */
   static boolean isTested(FlagKind kind) {
     return switch (kind) {
-      case BENT, ODD_FLASK, NOISY, SUSPECTED_SLIP, ODD_SLOPE -> true;
+      case BENT, ODD_FLASK, ODD_LEVEL, NOISY, SUSPECTED_SLIP, ODD_SLOPE -> true;
       default -> false;
     };
   }
