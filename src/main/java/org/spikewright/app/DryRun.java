@@ -24,6 +24,7 @@ import org.spikewright.mapping.Rejection;
 import org.spikewright.mapping.RowMapper;
 import org.spikewright.mapping.Tally;
 import org.spikewright.quantity.Numbers;
+import org.spikewright.reading.BatchReading;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Subject;
@@ -89,23 +90,24 @@ final class DryRun {
   private boolean understood(Tally tally) {
     out.printf(
         Locale.ROOT,
-        "Rows     %d: %d readings, %d refused, %d skipped as the mapping says%n",
+        "Rows     %d: %d readings, %d refused, %d skipped as the mapping says%s%n",
         tally.rows(),
         tally.readings(),
         tally.rejections(),
-        tally.skipped());
+        tally.skipped(),
+        tally.besideSamples());
     firstReadings();
     int without = series();
     refusals();
     out.println();
-    boolean fit = tally.readings() > 0 && tally.rejections() == 0 && without == 0;
+    boolean fit = tally.isOfUse() && tally.rejections() == 0 && without == 0;
     out.println(fit ? "Fit for use." : "Not fit for use: " + why(tally, without) + ".");
     return fit;
   }
 
   private static String why(Tally tally, int without) {
     List<String> reasons = new ArrayList<>();
-    if (tally.readings() == 0) {
+    if (!tally.isOfUse() && tally.readings() == 0) {
       reasons.add("not one reading");
     }
     if (tally.rejections() > 0) {
@@ -274,6 +276,11 @@ final class DryRun {
     @Override
     public void reading(Reading reading) {
       readings.add(reading);
+    }
+
+    @Override
+    public void batchReading(BatchReading reading) {
+      // Counted in the tally; what it says about the batch stands in the summary.
     }
 
     @Override

@@ -158,7 +158,7 @@ final class Reception {
   private Arrived record(
       Delivery delivery, Tally tally, List<Rejection> first, Sighting file, Arriving arriving)
       throws IOException {
-    if (tally.readings() == 0) {
+    if (!tally.isOfUse()) {
       Refusal refusal = Refusal.withoutReadings(tally, first);
       return delivery.refuse(tally, refusal.words(), rejectedName(file));
     }
@@ -189,11 +189,12 @@ final class Reception {
     switch (arrived.outcome()) {
       case READ ->
           LOG.info(
-              "read file={} readings={} refused_rows={} skipped={} known={}",
+              "read file={} readings={} refused_rows={} skipped={} beside_samples={} known={}",
               arrived.name(),
               arrived.tally().readings(),
               arrived.tally().rejections(),
               arrived.tally().skipped(),
+              arrived.tally().checks() + arrived.tally().calibrations(),
               arrived.repeated());
       case REFUSED ->
           LOG.info(

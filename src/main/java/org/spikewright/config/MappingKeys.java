@@ -21,7 +21,8 @@ final class MappingKeys {
           Fact.MEASURED_AT,
           Fact.FLASK,
           Fact.INSTRUMENT,
-          Fact.RESULT_UNIT);
+          Fact.RESULT_UNIT,
+          Fact.CALIBRATION_CONCENTRATION);
 
   static final List<String> METHOD_IN_FIXED =
       List.of(

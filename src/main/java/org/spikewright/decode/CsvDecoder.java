@@ -5,7 +5,6 @@ import java.nio.file.Path;
 import java.util.Arrays;
 import java.util.Collections;
 import java.util.Optional;
-import org.apache.commons.csv.CSVRecord;
 import org.spikewright.table.Cell;
 import org.spikewright.table.Row;
 import org.spikewright.table.RowSink;
@@ -31,8 +30,8 @@ final class CsvDecoder {
     sink.begins(new TextForm(separator, found.how(), file.charset().name(), file.how()));
     Source source = new Source(shownName, Optional.empty());
     try (CsvRecords records = new CsvRecords(file, separator, shape.quote())) {
-      while (records.hasNext()) {
-        Row row = row(source, records.line(), records.next());
+      while (records.next()) {
+        Row row = row(source, records.line(), records.record());
         if (!sink.accept(row)) {
           return;
         }
@@ -40,10 +39,10 @@ final class CsvDecoder {
     }
   }
 
-  private static Row row(Source source, long line, CSVRecord csv) {
-    Cell[] cells = new Cell[csv.size()];
+  private static Row row(Source source, long line, String[] fields) {
+    Cell[] cells = new Cell[fields.length];
     for (int i = 0; i < cells.length; i++) {
-      String text = csv.get(i);
+      String text = fields[i];
       if (text.length() > Limits.FIELD_CHARS) {
         throw tooLong(line, i + 1);
       }

@@ -2,11 +2,11 @@ package org.spikewright.decode;
 
 import java.io.IOException;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
 import java.util.stream.Collectors;
-import org.apache.commons.csv.CSVRecord;
 import org.spikewright.table.HeaderCells;
 import org.spikewright.table.TextForm;
 
@@ -66,8 +66,8 @@ final class SeparatorSearch {
     Trial best = new Trial(separator, 0, all, List.of(), Optional.empty());
     List<String> above = List.of();
     try (CsvRecords records = new CsvRecords(file, separator, quote)) {
-      for (int row = 0; row < Limits.HEADER_ROWS && !best.fits() && records.hasNext(); row++) {
-        List<String> own = fields(records.next());
+      for (int row = 0; row < Limits.HEADER_ROWS && !best.fits() && records.next(); row++) {
+        List<String> own = fields(records.record());
         List<String> fields = header.rows() == 1 ? own : HeaderCells.joined(above, own);
         above = own;
         List<String> missing = header.missing(fields);
@@ -81,8 +81,8 @@ final class SeparatorSearch {
     }
   }
 
-  private static List<String> fields(CSVRecord csv) {
-    return csv.stream().map(String::strip).toList();
+  private static List<String> fields(String[] record) {
+    return Arrays.stream(record).map(String::strip).toList();
   }
 
   private static Unreadable noneFits(List<Trial> trials) {

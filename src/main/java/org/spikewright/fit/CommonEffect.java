@@ -124,11 +124,11 @@ record CommonEffect(
       told.add(new Told(part.coefficient(), se, Math.max(LEAST_DF, variance.df())));
       ownDf += part.df();
     }
-    return of(told, Math.max(ownDf, prior.get().series()))
+    return of(told, ownDf, prior.get().series())
         .filter(effect -> Double.isFinite(effect.coefficient() / effect.standardError()));
   }
 
-  private static Optional<CommonEffect> of(List<Told> told, int priorDf) {
+  private static Optional<CommonEffect> of(List<Told> told, int ownDf, int priorSeries) {
     double unit = told.stream().mapToDouble(Told::se).min().orElse(0);
     double[] share = shares(told, unit);
     if (!(unit > 0) || !Double.isFinite(share[0])) {
@@ -149,8 +149,13 @@ record CommonEffect(
     }
     double likeT = 4 + 6 * spread * spread / fourth;
     double shrink = likeT < Double.POSITIVE_INFINITY ? (likeT - 2) / likeT : 1;
+    double df = 1 / (1 / likeT + 1.0 / Math.max(ownDf, priorSeries));
+    if (ownDf == 0 && told.size() > 1) {
+      // No series has a scatter beside the column: that between the series takes its place.
+      df = told.size() - 1;
+      shrink = Math.max(1, scatter(told, centre) / df / spread);
+    }
     double se = unit * Math.sqrt(spread * shrink / weight);
-    double df = 1 / (1 / likeT + 1.0 / priorDf);
     double between = between(told, centre, spread);
     double betweenP = betweenP(told, centre, spread);
     return Optional.of(new CommonEffect(centre, se, df, meanT, told.size(), between, betweenP));
@@ -222,16 +227,22 @@ record CommonEffect(
     if (told.size() < 2) {
       return 1;
     }
-    double sum = 0;
     double kurtosis = 0;
     for (Told one : told) {
-      double r = clipped((one.coefficient() - centre) / one.se());
-      sum += r * r;
       kurtosis += 6 / (Math.max(one.df(), 4.5) - 4) / told.size();
     }
     double df = (told.size() - 1) * 2 / (2 + kurtosis);
-    double ratio = sum / spread / (told.size() - 1);
+    double ratio = scatter(told, centre) / spread / (told.size() - 1);
     return Gamma.regularizedGammaQ(df / 2, df * ratio / 2);
+  }
+
+  private static double scatter(List<Told> told, double centre) {
+    double sum = 0;
+    for (Told one : told) {
+      double r = clipped((one.coefficient() - centre) / one.se());
+      sum += r * r;
+    }
+    return sum;
   }
 
   double t() {

@@ -27,10 +27,13 @@ final class FisherF {
     if (below > MANY) {
       return chiSquareUpper(above * f, above);
     }
-    double share = below / (below + above * f);
-    return share < 0.5
-        ? Beta.regularizedBeta(share, below / 2, above / 2)
-        : 1 - Beta.regularizedBeta(above * f / (below + above * f), above / 2, below / 2);
+    double a = below / 2;
+    double b = above / 2;
+    double x = below / (below + above * f);
+    // On its own side of the mean the library's fraction keeps the digits of a small tail.
+    return x <= (a + 1) / (a + b + 2)
+        ? Beta.regularizedBeta(x, a, b)
+        : 1 - Beta.regularizedBeta(above * f / (below + above * f), b, a);
   }
 
   /** Probability of a chi-square of this or more. */

@@ -19,9 +19,9 @@ final class NoiseFit {
    * cannot tell σ_0 from ρ (three flasks of like samples), noise is constant, or where the method
    * has its lines weighted, proportional.
    */
-  private static final double LEAN_CONSTANT = 1;
+  private static final double LEAN_CONSTANT = 0.3;
 
-  private static final double LEAN_PROPORTIONAL = 6;
+  private static final double LEAN_PROPORTIONAL = 12;
 
   /** A group of clean deviations is brought down once in two hundred. */
   private static final double EDGE = 0.995;

@@ -9,7 +9,7 @@ import java.util.OptionalDouble;
  * @param addition the amount delivered, in base units: which level a flask is of
  * @param x the addition referred to the aliquot, in axis units
  * @param y the flask's mean signal after the volume factor; the signal as read is y over factor
- * @param factor the volume factor, above 0
+ * @param factor the volume factor, 1e-30 to 1e30; a series with another does not count
  * @param readings how many readings the mean is of
  * @param replicateVariance variance of single readings as read; NaN with fewer than two
  * @param minutes mean time of measurement since the lab day began; NaN where no time is known

@@ -22,6 +22,14 @@ final class PriorFit {
     0, 0.01, 0.02, 0.035, 0.05, 0.07, 0.1, 0.14, 0.2, 0.28, 0.4, 0.55, 0.75, 1
   };
 
+  private static final int FINE = 17;
+
+  /** A smaller 1/d_0 is none. */
+  private static final double LEAST = 1e-3;
+
+  /** Near here and below, 1/d_0 is even; above, its logarithm is. Chosen by simulated coverage. */
+  private static final double SOFT = 0.05;
+
   private static final int ROUNDS = 60;
 
   /** Logarithms of variances this far below the mean say nothing more. */
@@ -64,36 +72,74 @@ final class PriorFit {
   }
 
   private VariancePrior estimate() {
-    double[] logs = new double[LADDER.length];
-    double most = Double.NEGATIVE_INFINITY;
-    double s0 = start();
-    for (int i = 0; i < LADDER.length; i++) {
-      double[] best = best(1 / LADDER[i], s0, 1e-5);
-      logs[i] = best[1];
-      most = Math.max(most, logs[i]);
-      s0 = best[0];
+    Average average = average(LADDER);
+    if (average.narrow()) {
+      // Many series: the likelihood has room between the rungs.
+      average = average(between(average.below(), average.above()));
     }
-    double weight = 0;
-    double inverse = 0;
-    for (int i = 0; i < LADDER.length; i++) {
-      double likelihood = Math.exp(logs[i] - most) * step(i);
-      weight += likelihood;
-      inverse += likelihood * LADDER[i];
-    }
-    inverse /= weight;
-    double d0 = inverse > 1e-3 ? 1 / inverse : Double.POSITIVE_INFINITY;
-    return new VariancePrior(d0, best(d0, s0, 1e-10)[0], x.length);
+    double d0 = average.inverse() > LEAST ? 1 / average.inverse() : Double.POSITIVE_INFINITY;
+    return new VariancePrior(d0, best(d0, start(), 1e-10)[0], x.length);
   }
 
-  /** The width of the ladder about a rung, in a measure in which no d_0 is favoured. */
-  private static double step(int i) {
-    double below = i == 0 ? 0 : LADDER[i - 1];
-    double above = i == LADDER.length - 1 ? LADDER[i] : LADDER[i + 1];
-    return measure((LADDER[i] + above) / 2) - measure((LADDER[i] + below) / 2);
+  /**
+   * What a ladder comes to.
+   *
+   * @param inverse mean of 1/d_0
+   * @param narrow whether the likelihood lies between the rungs below and above the likeliest one
+   */
+  private record Average(double inverse, boolean narrow, double below, double above) {}
+
+  private Average average(double[] ladder) {
+    double[] likelihood = likelihoods(ladder);
+    double weight = 0;
+    double inverse = 0;
+    int best = 0;
+    for (int i = 0; i < ladder.length; i++) {
+      double share = likelihood[i] * step(ladder, i);
+      weight += share;
+      inverse += share * ladder[i];
+      best = likelihood[i] > likelihood[best] ? i : best;
+    }
+    int below = Math.max(0, best - 1);
+    int above = Math.min(ladder.length - 1, best + 1);
+    double inside = 0;
+    for (int i = below; i <= above; i++) {
+      inside += likelihood[i] * step(ladder, i);
+    }
+    return new Average(inverse / weight, inside > 0.99 * weight, ladder[below], ladder[above]);
+  }
+
+  private double[] likelihoods(double[] ladder) {
+    double[] likelihoods = new double[ladder.length];
+    double most = Double.NEGATIVE_INFINITY;
+    double s0 = start();
+    for (int i = 0; i < ladder.length; i++) {
+      double[] best = best(1 / ladder[i], s0, 1e-5);
+      likelihoods[i] = best[1];
+      most = Math.max(most, best[1]);
+      s0 = best[0];
+    }
+    for (int i = 0; i < ladder.length; i++) {
+      likelihoods[i] = Math.exp(likelihoods[i] - most);
+    }
+    return likelihoods;
+  }
+
+  private static double[] between(double below, double above) {
+    double[] ladder = new double[FINE];
+    Arrays.setAll(ladder, i -> below + (above - below) * i / (FINE - 1));
+    return ladder;
+  }
+
+  /** The width of the ladder about a rung, in a measure that favours many degrees of freedom. */
+  private static double step(double[] ladder, int i) {
+    double below = i == 0 ? ladder[0] : ladder[i - 1];
+    double above = i == ladder.length - 1 ? ladder[i] : ladder[i + 1];
+    return measure((ladder[i] + above) / 2) - measure((ladder[i] + below) / 2);
   }
 
   private static double measure(double inverse) {
-    return Math.log(inverse + 0.05);
+    return Math.log(inverse + SOFT);
   }
 
   private double start() {

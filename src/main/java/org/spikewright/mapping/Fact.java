@@ -37,6 +37,12 @@ public enum Fact {
   DIGEST_VOLUME("digest_volume", Kind.AMOUNT, Bound.ABOVE_ZERO, "50 mL", Dimension.VOLUME),
   DIGEST_MASS("digest_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "50 g", Dimension.MASS),
   DRY_MASS("dry_mass", Kind.AMOUNT, Bound.FRACTION, "85 %", Dimension.NUMBER),
+  CALIBRATION_CONCENTRATION(
+      "calibration_concentration",
+      Kind.AMOUNT,
+      Bound.NOT_NEGATIVE,
+      "5 µg/L",
+      Concentration.CONCENTRATIONS),
   BASELINE("baseline", Kind.AMOUNT, Bound.ANY, "0.003", Dimension.NUMBER),
   METHOD_BLANK("method_blank", Kind.AMOUNT, Bound.ANY, "0.1 µg/L", Concentration.CONCENTRATIONS),
   METHOD_BLANK_DILUTION(

@@ -37,6 +37,7 @@ final class RowLookup {
   private final int[] labelColumns;
   private final List<Optional<Matcher>> matches = new ArrayList<>();
   private Row row;
+  private boolean besideSamples;
 
   /** Binds the mapping's places to the columns of a header that has them all. */
   RowLookup(Places rules, Header header, Map<Fact, List<Outside>> around) {
@@ -69,9 +70,19 @@ final class RowLookup {
     return new InColumn(indexes, column.form(), String.join("' and '", column.headers()));
   }
 
+  /**
+   * Takes a row of a drift check or a calibration solution: a label that does not match the pattern
+   * of samples' labels is a name as it stands.
+   */
+  void beginBesideSamples(Row next) {
+    begin(next);
+    besideSamples = true;
+  }
+
   /** Takes the next row and matches its labels; returns what is wrong with them. */
   List<Trouble> begin(Row next) {
     row = next;
+    besideSamples = false;
     matches.clear();
     List<Trouble> troubles = List.of();
     for (int i = 0; i < labels.size(); i++) {
@@ -103,6 +114,17 @@ final class RowLookup {
       Optional<Given> given = at(candidates.get(i), i);
       if (given.isPresent()) {
         return given;
+      }
+    }
+    return besideSamples && fact == Fact.SAMPLE ? wholeLabel() : Optional.empty();
+  }
+
+  private Optional<Given> wholeLabel() {
+    for (int i = 0; i < labels.size(); i++) {
+      Cell cell = row.cell(labelColumns[i]);
+      if (matches.get(i).isEmpty() && !cell.isBlank()) {
+        return Optional.of(
+            new Given(List.of(cell), Form.PLAIN, labelColumns[i], 0, labels.get(i).header()));
       }
     }
     return Optional.empty();

@@ -4,15 +4,17 @@ import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import org.spikewright.mapping.MappedFile.Unmappable;
+import org.spikewright.reading.CheckReading;
 import org.spikewright.table.Row;
 import org.spikewright.table.RowSink;
 import org.spikewright.table.Source;
 import org.spikewright.table.TextForm;
 
 /**
- * Maps one file. Each row below a header that is not blank becomes exactly one reading, one
- * rejection or one declared skip; in a wide layout each of its cells that should hold a reading
- * does. Sheets come one after the other, each with its own header.
+ * Maps one file. Each row below a header that is not blank becomes exactly one reading, one reading
+ * beside the samples (drift check or calibration), one rejection or one declared skip; in a wide
+ * layout each of its cells that should hold a reading does. Sheets come one after the other, each
+ * with its own header.
  *
  * <p>What went to the sink counts only if {@link #finish()} says {@link MappedFile.Mapped}.
  */
@@ -32,6 +34,8 @@ public final class RowMapper implements RowSink {
   private long readings;
   private long rejections;
   private long skipped;
+  private long checks;
+  private long calibrations;
 
   RowMapper(Mapping mapping, String relativePath, MappedSink sink) {
     this.mapping = mapping;
@@ -91,6 +95,10 @@ public final class RowMapper implements RowSink {
     } else if (fate instanceof SheetMapper.Fate.Refused refused) {
       rejections++;
       sink.rejection(refused.rejection());
+    } else if (fate instanceof SheetMapper.Fate.OfBatch beside) {
+      checks += beside.reading() instanceof CheckReading ? 1 : 0;
+      calibrations += beside.reading() instanceof CheckReading ? 0 : 1;
+      sink.batchReading(beside.reading());
     } else {
       skipped++;
     }
@@ -118,7 +126,8 @@ public final class RowMapper implements RowSink {
           "export again, or take the file away if it is empty");
     }
     return new MappedFile.Mapped(
-        new Tally(rows, readings, rejections, skipped), List.copyOf(inWords()));
+        new Tally(rows, readings, rejections, skipped, checks, calibrations),
+        List.copyOf(inWords()));
   }
 
   private List<String> inWords() {

@@ -6,6 +6,11 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.stream.IntStream;
+import org.spikewright.analysis.BlankResult;
+import org.spikewright.analysis.CheckResult;
+import org.spikewright.analysis.ControlResult;
+import org.spikewright.analysis.DuplicateResult;
+import org.spikewright.analysis.Evidence;
 import org.spikewright.judgement.Criterion;
 import org.spikewright.judgement.Verdict;
 import org.spikewright.quantity.Numbers;
@@ -51,6 +56,7 @@ final class OverviewSheet {
     breakdown("By instrument", counts.instruments());
     Map<String, Map<Verdict, Integer>> analytes = largest(counts.analytes());
     int firstAnalyte = breakdown("By analyte", analytes);
+    controls();
     files();
     cautions();
     SheetPlan sheet =
@@ -210,6 +216,27 @@ final class OverviewSheet {
 
   private static int total(Map<Verdict, Integer> verdicts) {
     return verdicts.values().stream().mapToInt(Integer::intValue).sum();
+  }
+
+  private void controls() {
+    heading("Controls");
+    Evidence.Found found = night.evidence();
+    counted("", "in", "out", "not judged");
+    counted("controls", found.controls().stream().map(ControlResult::verdict).toList());
+    counted("duplicates", found.duplicates().stream().map(DuplicateResult::verdict).toList());
+    counted("blanks", found.blanks().stream().map(BlankResult::verdict).toList());
+    counted("drift checks", found.checks().stream().map(CheckResult::verdict).toList());
+    row(CellPlan.text("see Controls", Look.FAINT));
+    blank();
+  }
+
+  private void counted(String name, List<ControlResult.Verdict> verdicts) {
+    List<CellPlan> cells = new ArrayList<>();
+    cells.add(CellPlan.text(name));
+    for (ControlResult.Verdict verdict : ControlResult.Verdict.values()) {
+      cells.add(CellPlan.count(verdicts.stream().filter(verdict::equals).count()));
+    }
+    rows.add(cells);
   }
 
   private void files() {

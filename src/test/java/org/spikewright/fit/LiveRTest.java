@@ -46,6 +46,11 @@ class LiveRTest {
     assertSame("numbers-r.csv", run("numbers.R", STORED.resolve("numbers-series.csv").toString()));
   }
 
+  @Test
+  void the_priors_and_weighted_fits_are_those_that_the_script_makes() throws Exception {
+    assertSame("fit-night.csv", run("fit-night.R"));
+  }
+
   private List<CSVRecord> run(String script, String... arguments) throws Exception {
     assumeTrue(isInstalled(), "Rscript is not on the path: the stored numbers of R are not remade");
     Path out = folder.resolve(script + ".csv");

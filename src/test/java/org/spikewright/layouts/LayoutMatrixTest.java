@@ -28,6 +28,7 @@ import org.spikewright.mapping.Mapping;
 import org.spikewright.mapping.Rejection;
 import org.spikewright.mapping.RowMapper;
 import org.spikewright.quantity.Unit;
+import org.spikewright.reading.BatchReading;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
@@ -160,6 +161,11 @@ class LayoutMatrixTest {
     @Override
     public void reading(Reading reading) {
       readings.add(reading);
+    }
+
+    @Override
+    public void batchReading(BatchReading reading) {
+      throw new AssertionError("a reading beside the samples");
     }
 
     @Override

@@ -35,6 +35,7 @@ class SummaryPlanTest {
             "To repeat",
             "Series",
             "Plot",
+            "Controls",
             "Files",
             "Refused rows",
             "Settings",
@@ -147,7 +148,7 @@ class SummaryPlanTest {
   @Test
   void aNightWithoutSeriesHasEverySheet() {
     SummaryPlan plan = SummaryPlan.of(Nights.empty());
-    assertThat(plan.sheets()).hasSize(9);
+    assertThat(plan.sheets()).hasSize(10);
     assertThat(text(rows(sheet(plan, "Plot")).get(0).get(0))).isEqualTo("No series to plot");
     assertThat(text(sheet(plan, "To repeat").head().get(0).get(0))).isEqualTo("Nothing to repeat");
   }

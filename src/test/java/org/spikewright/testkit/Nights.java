@@ -11,6 +11,7 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
+import org.spikewright.analysis.Evidence;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
@@ -127,6 +128,26 @@ public final class Nights {
         refused,
         settings(),
         CriteriaBook.defaults());
+  }
+
+  /** The small night with what its series say about each other. */
+  public static Night with(Evidence.Found evidence) {
+    Night night = small();
+    return new Night(
+        night.labDay(),
+        night.revision(),
+        night.moment(),
+        night.inProgress(),
+        night.zone(),
+        night.laboratory(),
+        night.seriesCount(),
+        night.results(),
+        night.outcomes(),
+        night.files(),
+        night.refused(),
+        night.settings(),
+        night.criteria(),
+        evidence);
   }
 
   private static int urgency(Verdict verdict) {

@@ -41,7 +41,7 @@ class SchemaTest {
         parsed.forEach(part -> faults.addAll(faults(entry.getName(), part)));
       }
     }
-    assertThat(checked).as("9 sheets, 3 charts, 2 drawings, styles, workbook").isEqualTo(16);
+    assertThat(checked).as("10 sheets, 3 charts, 2 drawings, styles, workbook").isEqualTo(17);
     assertThat(faults).isEmpty();
   }
 
