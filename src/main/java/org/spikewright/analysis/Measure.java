@@ -61,7 +61,7 @@ record Measure(
         : OptionalDouble.empty();
   }
 
-  /** The one place that says which uncertainty of a result comparisons rest on. */
+  /** Comparisons rest on the fit alone: pools and budgets come after them, in the second walk. */
   private static Optional<Estimate> estimate(SeriesResult result) {
     OptionalDouble u = result.standardError();
     int df = result.line().residualDf();

@@ -11,8 +11,8 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.TreeMap;
 import org.spikewright.analysis.Analysis;
+import org.spikewright.analysis.DayFacts;
 import org.spikewright.analysis.Fitted;
-import org.spikewright.analysis.Recall;
 import org.spikewright.config.Settings;
 import org.spikewright.decode.FileDecoder;
 import org.spikewright.judgement.Judge;
@@ -194,7 +194,7 @@ final class DryRun {
         (subject, found) -> gathered.addAll(gathering.gather(subject, newest(found))));
     // An export alone: what earlier nights remember is the ledger's, which is not asked.
     for (Outcome outcome :
-        Analysis.of(Fitted.each(gathered), judge, settings.criteria(), Recall.NOTHING)) {
+        Analysis.of(Fitted.each(gathered), judge, DayFacts.of(settings.criteria()))) {
       without += outcome.result().isEmpty() ? 1 : 0;
       if (shown++ < SERIES_SHOWN || outcome.result().isEmpty()) {
         table.add(line(outcome));
