@@ -6,10 +6,12 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.stream.IntStream;
+import java.util.stream.Stream;
 import org.spikewright.quantity.Measured;
 import org.spikewright.quantity.NumberGrammar;
 import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
+import org.spikewright.reading.Role;
 import org.spikewright.table.Cell;
 import org.spikewright.table.Position;
 import org.spikewright.table.Row;
@@ -51,10 +53,11 @@ final class NumberEvidence {
   private final Mapping mapping;
   private final RowLookup lookup;
   private final RowFilter filter;
-  private final List<Fact> read;
+  private final List<Fact> ofFlask;
+  private final List<Fact> ofCheck;
+  private final List<Fact> ofCalibration;
   private final int[] columns;
   private final boolean inNames;
-  private final StockReader stocks;
   private final List<NumberGrammar> point;
   private final List<NumberGrammar> comma;
 
@@ -62,10 +65,16 @@ final class NumberEvidence {
     this.mapping = mapping;
     this.lookup = new RowLookup(mapping.places(), header, around);
     this.filter = new RowFilter(mapping.rows(), header);
-    this.read = NUMBERS.stream().filter(fact -> mapping.places().isRead(fact)).toList();
+    List<Fact> read = NUMBERS.stream().filter(fact -> mapping.places().isRead(fact)).toList();
+    this.ofFlask = read.stream().filter(fact -> fact != Fact.CALIBRATION_CONCENTRATION).toList();
+    this.ofCheck = read.stream().filter(fact -> fact.kind() == Fact.Kind.SIGNAL).toList();
+    // Where no concentration is mapped their rows are skipped.
+    this.ofCalibration =
+        read.contains(Fact.CALIBRATION_CONCENTRATION)
+            ? Stream.concat(ofCheck.stream(), Stream.of(Fact.CALIBRATION_CONCENTRATION)).toList()
+            : List.of();
     this.columns = columns(mapping.places(), header);
     this.inNames = read.stream().anyMatch(around::containsKey);
-    this.stocks = new StockReader(mapping.shelf().stocks(), mapping.notation());
     Optional<Character> thousands = mapping.notation().numbers().thousandsMark();
     this.point = grammars('.', ',', thousands);
     this.comma = grammars(',', '.', thousands);
@@ -94,13 +103,12 @@ final class NumberEvidence {
 
   /** The first number of a row that says something. */
   Optional<Witness> in(Row row) {
-    if (!mayHoldMarks(row)
-        || !(filter.kind(row) instanceof RowFilter.Kind.Measured)
-        || !lookup.begin(row).isEmpty()) {
+    if (!mayHoldMarks(row) || !(filter.kind(row) instanceof RowFilter.Kind.Measured measured)) {
       return Optional.empty();
     }
+    boolean isUnderstood = lookup.begin(row).isEmpty();
     Optional<Witness> either = Optional.empty();
-    for (Fact fact : read) {
+    for (Fact fact : read(measured.role(), isUnderstood)) {
       Optional<Given> given = lookup.find(fact);
       if (given.isPresent() && given.get().cell() instanceof Cell.Text text) {
         Witness witness = witness(fact, given.get(), text.text(), row);
@@ -112,6 +120,15 @@ final class NumberEvidence {
       }
     }
     return either;
+  }
+
+  /** The numbers that a row of this role is read for. */
+  private List<Fact> read(Role role, boolean isUnderstood) {
+    return switch (role) {
+      case SAMPLE, BLANK, CONTROL -> isUnderstood ? ofFlask : List.of();
+      case DRIFT_CHECK -> ofCheck;
+      case CALIBRATION -> ofCalibration;
+    };
   }
 
   /** Most rows can be told at a glance to say nothing. */
@@ -130,7 +147,8 @@ final class NumberEvidence {
 
   private Witness witness(Fact fact, Given given, String text, Row row) {
     Position position = given.index() < 0 ? row.position() : row.at(given.index());
-    if (!hasMark(text) || isWord(fact, text)) {
+    if (!hasMark(text)
+        || fact.kind() == Fact.Kind.SIGNAL && mapping.words().state(text).isPresent()) {
       return new Witness(Verdict.NOTHING, text, position, "");
     }
     Optional<Measured> byPoint = value(fact, given, point);
@@ -140,12 +158,6 @@ final class NumberEvidence {
         text.strip(),
         position,
         shown(byPoint) + " with a decimal point and " + shown(byComma) + " with a decimal comma");
-  }
-
-  /** A declared word, or the name of a stock. */
-  private boolean isWord(Fact fact, String text) {
-    return fact.kind() == Fact.Kind.SIGNAL && mapping.words().state(text).isPresent()
-        || fact == Fact.STOCK && stocks.named(text).isPresent();
   }
 
   private static Verdict verdict(Optional<Measured> byPoint, Optional<Measured> byComma) {

@@ -11,6 +11,7 @@ import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
+import org.spikewright.reading.Spread;
 import org.spikewright.reading.Subject;
 
 /**
@@ -61,8 +62,10 @@ public final class Drifts {
     double baseline = reading.facts().blanks().baseline().orElse(0);
     double factor = correction(reading).factorAt(reading.measuredAt().get());
     double corrected = baseline + (signal.value() - baseline) * factor;
+    Optional<Spread> spread =
+        signal.spread().map(read -> new Spread(read.sd() * Math.abs(factor), read.readings()));
     return new Recorded(
-        with(reading, new Signal.Value(corrected, signal.text())),
+        with(reading, new Signal.Value(corrected, signal.text(), signal.standard(), spread)),
         recorded.arrival(),
         recorded.firstArrivedAt(),
         recorded.superseded());

@@ -117,6 +117,10 @@ class DesignKeysTest {
         "standard | analyte        = \"Pb\" | analyte = \"Pb\";signal_unit = \"mg/L\" | plain signal",
         "standard | analyte        = \"Pb\" | analyte = \"Pb\";method_blank_dilution = \"2\" |"
             + " method_blank",
+        "standard | internal_standard = \"Standard\" | internal_standard = \"Standard\";"
+            + "signal_sd = \"SD\";readings = \"n\" | of the ratio",
+        "standard | [columns] | [table];carry_down = \"internal_standard\";[columns] | 'internal_standard'"
+            + " for carry_down",
         "electrode | charge = -1 | - | charge",
         "electrode | charge = -1 | charge = 0 | not 0",
         "electrode | slope  = -58 | slope = 58 | sign",

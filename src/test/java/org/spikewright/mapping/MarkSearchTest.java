@@ -130,6 +130,53 @@ class MarkSearchTest {
     assertThat(((MappedFile.Mapped) trial.file).workedOut().get(0)).contains("decimal comma");
   }
 
+  private static final String BESIDE =
+      """
+      name = "beside"
+      files = "*.csv"
+      [columns]
+      analyte = "El"
+      signal = "Abs"
+      internal_standard = "Y"
+      addition_volume = { header = "Added", unit = "mL" }
+      calibration_concentration = { header = "Std", unit = "mg/L" }
+      stock = "Stock"
+      [[label]]
+      column = "ID"
+      pattern = '(?<sample>W\\d+)'
+      [roles]
+      column = "Type"
+      sample = "S"
+      drift_check = "D"
+      calibration = "C"
+      [fixed]
+      design = "made up"
+      aliquot_volume = "10 mL"
+      final_volume = "50 mL"
+      addition_volume = "0 mL"
+      internal_standard_given = "on line"
+      [result]
+      unit = "mg/L"
+      """;
+
+  /** Rows tell by the numbers that they are read for, and by no others. */
+  @ParameterizedTest
+  @CsvSource({
+    "'S;W1;Cd;7;5,5;;;10 mg/L', comma",
+    "'S;W1;Cd;7;5;;1.5;10 mg/L|S;W1;Cd;7;5;0,5;;10 mg/L', comma",
+    "'D;Check;Cd;0,5;5;1.5;1.5;1.5|S;W1;Cd;7;5;;;10 mg/L', comma",
+    "'D;Check;Cd;7;0.5;;;|S;W1;Cd;7;5;;;10 mg/L', point",
+    "'C;Std 1;Cd;7;5;1.5;0,5;1.5|S;W1;Cd;7;5;;;10 mg/L', comma",
+    "'S;no label;Cd;0,5;5;;;10 mg/L|S;W1;Cd;7;5.5;;;10 mg/L', point"
+  })
+  void the_role_of_a_row_says_which_of_its_numbers_tell(String rows, String mark) {
+    Mapping mapping = Trial.mapping(BESIDE);
+    List<String> lines = new ArrayList<>(List.of("Type;ID;El;Abs;Y;Added;Std;Stock"));
+    lines.addAll(List.of(rows.split("\\|")));
+    Trial trial = Trial.text(mapping, "a.csv", ";", lines.toArray(String[]::new));
+    assertThat(((MappedFile.Mapped) trial.file).workedOut().get(0)).contains("decimal " + mark);
+  }
+
   @Test
   void a_declared_mark_wins_whatever_the_numbers_look_like() {
     assertThat(signals(read("decimal = \",\"", "W;Cd;1,234;;"))).containsExactly(1.234);

@@ -3,10 +3,12 @@ package org.spikewright.series;
 import static org.assertj.core.api.Assertions.assertThat;
 import static org.assertj.core.api.Assertions.within;
 
+import java.time.Instant;
 import java.util.ArrayList;
 import java.util.Collections;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalDouble;
 import java.util.Random;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
@@ -17,8 +19,10 @@ import org.spikewright.reading.Calculation;
 import org.spikewright.reading.CheckReading;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.MethodFacts;
+import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
+import org.spikewright.reading.Spread;
 import org.spikewright.testkit.Bench;
 import org.spikewright.testkit.ControlBench;
 
@@ -76,6 +80,43 @@ class DriftCorrectionTest {
     Signal signal = drifts.corrected(asked).get(0).reading().signal();
     assertThat(((Signal.Value) signal).value()).isCloseTo(0.5, within(1e-12));
     assertThat(signal.text()).isEqualTo("0.45");
+  }
+
+  /** A mean is corrected with its spread, which keeps its share of the mean. */
+  @Test
+  void theSpreadOfAMeanIsCorrectedWithIt() {
+    Drifts drifts =
+        new Drifts(
+            List.of(check(Bench.START, 1.0, 1), check(Bench.START.plusSeconds(600), 0.8, 2)));
+    Reading read = Bench.reading(corrected(Bench.madeUp(1)), "1", 0.45, 5);
+    Signal mean =
+        new Signal.Value(0.45, "0.45", OptionalDouble.empty(), Optional.of(new Spread(0.009, 3)));
+    Reading ofMean =
+        new Reading(
+            read.subject(),
+            read.batch(),
+            read.flask(),
+            read.flaskMapped(),
+            read.replicate(),
+            read.replicateMapped(),
+            read.measuredAt(),
+            mean,
+            read.facts(),
+            read.position());
+    Signal signal = drifts.corrected(List.of(Bench.recorded(ofMean))).get(0).reading().signal();
+    Spread spread = ((Signal.Value) signal).spread().orElseThrow();
+    assertThat(spread.sd()).isCloseTo(0.01, within(1e-12));
+    assertThat(spread.readings()).isEqualTo(3);
+  }
+
+  private static BatchReading check(Instant time, double signal, int row) {
+    return new CheckReading(
+        Bench.SUBJECT,
+        new Batch("run1.csv", false),
+        Optional.of(time),
+        1,
+        new Signal.Value(signal, Double.toString(signal)),
+        ControlBench.position(row));
   }
 
   private static FlaskFacts corrected(FlaskFacts plain) {
