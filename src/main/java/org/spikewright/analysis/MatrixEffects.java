@@ -6,6 +6,7 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.TreeMap;
+import java.util.function.Function;
 import java.util.stream.Collectors;
 import org.spikewright.fit.Equivalence;
 import org.spikewright.fit.OriginLine;
@@ -97,17 +98,23 @@ final class MatrixEffects {
     };
   }
 
+  /** Of volumes, or of masses where the flasks were weighed. */
   private static OptionalDouble ratio(
-      AdditionSeries series, java.util.function.Function<FlaskFacts, Optional<Measured>> volume) {
-    Unit litre = Unit.of("L");
+      AdditionSeries series, Function<FlaskFacts, Optional<Measured>> total) {
     double whole = 0;
     double part = 0;
     for (Flask flask : series.flasks()) {
-      whole += volume.apply(flask.facts()).map(v -> v.in(litre)).orElse(Double.NaN);
-      part += flask.facts().aliquot().map(v -> v.in(litre)).orElse(Double.NaN);
+      whole += inBase(total.apply(flask.facts()));
+      part += inBase(flask.facts().aliquot());
     }
     double ratio = whole / part;
     return ratio > 0 && Double.isFinite(ratio) ? OptionalDouble.of(ratio) : OptionalDouble.empty();
+  }
+
+  private static double inBase(Optional<Measured> measured) {
+    return measured
+        .map(m -> m.quantity().value() * m.quantity().unit().perBase())
+        .orElse(Double.NaN);
   }
 
   /** Readings of one solution are averaged first: they are no solutions of their own. */
