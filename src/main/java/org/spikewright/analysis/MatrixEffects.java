@@ -99,15 +99,19 @@ final class MatrixEffects {
 
   private static OptionalDouble ratio(
       AdditionSeries series, java.util.function.Function<FlaskFacts, Optional<Measured>> volume) {
-    Unit litre = Unit.of("L");
     double whole = 0;
     double part = 0;
     for (Flask flask : series.flasks()) {
-      whole += volume.apply(flask.facts()).map(v -> v.in(litre)).orElse(Double.NaN);
-      part += flask.facts().aliquot().map(v -> v.in(litre)).orElse(Double.NaN);
+      whole += volume.apply(flask.facts()).map(MatrixEffects::inBase).orElse(Double.NaN);
+      part += flask.facts().aliquot().map(MatrixEffects::inBase).orElse(Double.NaN);
     }
     double ratio = whole / part;
     return ratio > 0 && Double.isFinite(ratio) ? OptionalDouble.of(ratio) : OptionalDouble.empty();
+  }
+
+  /** A volume in litres, a mass in grams: the flasks of a design have either. */
+  private static double inBase(Measured amount) {
+    return amount.quantity().value() * amount.quantity().unit().perBase();
   }
 
   /** Readings of one solution are averaged first: they are no solutions of their own. */

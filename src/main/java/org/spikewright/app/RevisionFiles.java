@@ -142,6 +142,7 @@ final class RevisionFiles {
         ledger.refused(day, revision.arrivalLimit()),
         SettingsLines.of(settings, station.mappings().good(), revision),
         settings.criteria(),
+        source.learnt().pools(),
         source.learnt().batches().found());
   }
 

@@ -75,7 +75,7 @@ final class ControlsSheet {
   }
 
   static SheetPlan of(Night night) {
-    return new ControlsSheet(night.evidence()).plan();
+    return new ControlsSheet(night.controls()).plan();
   }
 
   private SheetPlan plan() {

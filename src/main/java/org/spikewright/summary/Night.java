@@ -5,6 +5,7 @@ import java.time.LocalDate;
 import java.time.ZoneId;
 import java.util.List;
 import org.spikewright.analysis.Evidence;
+import org.spikewright.analysis.NightEvidence;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.Verdict;
@@ -26,7 +27,8 @@ import org.spikewright.judgement.Verdict;
  * @param refused by arrival and place
  * @param settings in order; the limits follow from {@code criteria} and need not be among them
  * @param criteria the limits of judgement
- * @param evidence what the night's controls, blanks, checks and series say about each other
+ * @param evidence what the lab day's pools say
+ * @param controls what the night's controls, blanks, checks and series say about each other
  */
 public record Night(
     LocalDate labDay,
@@ -42,39 +44,8 @@ public record Night(
     Iterable<RefusedRow> refused,
     List<Setting> settings,
     CriteriaBook criteria,
-    Evidence.Found evidence) {
-
-  /** A night whose series say nothing about each other. */
-  public Night(
-      LocalDate labDay,
-      int revision,
-      Instant moment,
-      boolean inProgress,
-      ZoneId zone,
-      String laboratory,
-      int seriesCount,
-      Iterable<ResultRow> results,
-      Iterable<Outcome> outcomes,
-      List<FileEntry> files,
-      Iterable<RefusedRow> refused,
-      List<Setting> settings,
-      CriteriaBook criteria) {
-    this(
-        labDay,
-        revision,
-        moment,
-        inProgress,
-        zone,
-        laboratory,
-        seriesCount,
-        results,
-        outcomes,
-        files,
-        refused,
-        settings,
-        criteria,
-        Evidence.NONE.found());
-  }
+    NightEvidence evidence,
+    Evidence.Found controls) {
 
   /** Up to so many series, the Series sheet holds every one. */
   static final int EVERY_SERIES = 2000;

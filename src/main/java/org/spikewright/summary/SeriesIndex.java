@@ -23,6 +23,7 @@ import org.spikewright.series.SeriesKey;
  * @param mostFlasks the largest number of flask rows of a series
  * @param differing how many live checks differ from the stored numbers
  * @param forReview how many series for review have something to prepare
+ * @param pools flasks of each pool beside its noise
  * @param plotted the flasks of the series that the Plot sheet shows first
  */
 record SeriesIndex(
@@ -31,6 +32,7 @@ record SeriesIndex(
     int mostFlasks,
     int differing,
     int forReview,
+    PoolFlasks pools,
     List<FlaskLine> plotted) {
 
   /** No series begins below this row, so that the sheet never continues on a second one. */
@@ -77,6 +79,7 @@ record SeriesIndex(
   static SeriesIndex of(Night night, Optional<SeriesKey> toPlot) {
     Map<SeriesKey, Entry> entries = new HashMap<>();
     List<FlaskLine> plotted = List.of();
+    PoolFlasks pools = new PoolFlasks();
     int row = SeriesSheet.HEAD_ROWS + 1;
     int mostFlasks = 0;
     int differing = 0;
@@ -95,6 +98,7 @@ record SeriesIndex(
           repeat.filter(advice -> !(advice instanceof RepeatAdvice.Nothing)).isPresent();
       plans += planned ? 1 : 0;
       forReview += planned && outcome.verdict() == Verdict.REVIEW ? 1 : 0;
+      outcome.result().ifPresent(pools::add);
       entries.put(outcome.gathered().key(), entry(outcome, block, repeat));
       mostFlasks = Math.max(mostFlasks, block.flasks().size());
       differing += block.differing();
@@ -103,7 +107,7 @@ record SeriesIndex(
       }
       row += block.height();
     }
-    return new SeriesIndex(entries, row - 1, mostFlasks, differing, forReview, plotted);
+    return new SeriesIndex(entries, row - 1, mostFlasks, differing, forReview, pools, plotted);
   }
 
   private static Entry entry(Outcome outcome, SeriesBlock block, Optional<RepeatAdvice> repeat) {

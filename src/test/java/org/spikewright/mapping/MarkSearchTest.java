@@ -207,8 +207,8 @@ class MarkSearchTest {
               }
 
               @Override
-              public void batchReading(BatchReading reading) {
-                throw new AssertionError("a reading beside the samples");
+              public void batchReading(BatchReading beside) {
+                throw new AssertionError("nothing beside the samples is expected: " + beside);
               }
 
               @Override

@@ -8,6 +8,7 @@ import java.util.concurrent.atomic.AtomicInteger;
 import org.junit.jupiter.api.Test;
 import org.spikewright.judgement.Verdict;
 import org.spikewright.testkit.Nights;
+import org.spikewright.testkit.PooledNights;
 
 class SummaryPlanTest {
 
@@ -35,11 +36,13 @@ class SummaryPlanTest {
             "To repeat",
             "Series",
             "Plot",
+            "Noise",
             "Controls",
             "Files",
             "Refused rows",
             "Settings",
-            "Plot data");
+            "Plot data",
+            "Noise data");
   }
 
   @Test
@@ -78,6 +81,26 @@ class SummaryPlanTest {
     SeriesIndex index = SeriesIndex.of(Nights.large(300), java.util.Optional.empty());
     assertThat(index.entries()).hasSize(300);
     assertThat(index.differing()).isZero();
+  }
+
+  @Test
+  void storedAndLiveNumbersAgreeOnWeightedLinesAndOnTheIntervalsOfPools() {
+    Night night = PooledNights.closed();
+    SeriesIndex index = SeriesIndex.of(night, java.util.Optional.empty());
+    assertThat(index.differing()).isZero();
+    int weighted = 0;
+    int pooled = 0;
+    for (var outcome : night.outcomes()) {
+      SeriesBlock block = SeriesBlock.of(outcome, 10);
+      assertThat(block.rows()).hasSize(block.height());
+      if (block.live().isPresent()) {
+        LiveCells live = block.live().get();
+        weighted += live.quantities().get(0).formula().startsWith("SUMPRODUCT") ? 1 : 0;
+        pooled += live.pooled().stream().filter(LiveCells.Quantity::isChecked).count() == 7 ? 1 : 0;
+      }
+    }
+    assertThat(weighted).isEqualTo(PooledNights.WEIGHTED);
+    assertThat(pooled).isEqualTo(PooledNights.LINES);
   }
 
   @Test
@@ -140,7 +163,9 @@ class SummaryPlanTest {
             night.files(),
             night.refused(),
             night.settings(),
-            night.criteria());
+            night.criteria(),
+            night.evidence(),
+            night.controls());
     SummaryPlan.of(counted).sheets().forEach(SummaryPlanTest::rows);
     assertThat(walks).hasValue(2);
   }
@@ -148,7 +173,7 @@ class SummaryPlanTest {
   @Test
   void aNightWithoutSeriesHasEverySheet() {
     SummaryPlan plan = SummaryPlan.of(Nights.empty());
-    assertThat(plan.sheets()).hasSize(10);
+    assertThat(plan.sheets()).hasSize(12);
     assertThat(text(rows(sheet(plan, "Plot")).get(0).get(0))).isEqualTo("No series to plot");
     assertThat(text(sheet(plan, "To repeat").head().get(0).get(0))).isEqualTo("Nothing to repeat");
   }
