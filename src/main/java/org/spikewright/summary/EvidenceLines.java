@@ -29,7 +29,7 @@ final class EvidenceLines {
     KnownAdditions.Fitted fit = result.fit();
     String unit = " " + result.series().toResult().unit().symbol();
     StringBuilder curve = new StringBuilder("Curve of the electrode: slope ");
-    curve.append(Numbers.rounded(fit.slope(), 4)).append(" mV per decade");
+    curve.append(Numbers.rounded(fit.slope(), 4).replace('-', '−')).append(" mV per decade");
     if (fit.slopeToTheory().isPresent()) {
       double share = 100 * fit.slopeToTheory().getAsDouble();
       curve.append(String.format(Locale.ROOT, ", %.1f %% of theory", share));

@@ -54,17 +54,17 @@ final class PoolCells {
     LiveCells.Size size = new LiveCells.Size(line.topSignal() / 1000, at.topSignal() + "/1000");
     String digits = Formats.significant(variance.sd(), 6);
     return List.of(
-        given("Pool's sd s_0", lentSd, digits),
+        given("Pool's s_0", lentSd, digits),
         given("Pool's d_0", lentDf, Formats.significant(lentDf, 4)),
         new LiveCells.Quantity(
-            "Moderated sd",
+            "Sd by pool",
             FlaskLine.finite(variance.sd()),
             moderatedSd(),
             moderated(),
             size,
             digits),
         new LiveCells.Quantity(
-            "Degrees of freedom",
+            "df by pool",
             FlaskLine.finite(variance.df()),
             lentDf + line.n() - 2,
             "C" + stored + "+" + ownDf(),

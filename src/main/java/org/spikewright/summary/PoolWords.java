@@ -81,6 +81,12 @@ record PoolWords(PoolKey key, PoolEvidence pool, PoolFlasks flasks) {
     if (pool.gainFromWeights().isEmpty()) {
       return "";
     }
+    if (!pool.levels().isEmpty()) {
+      return "settle the level that is off first: here it passes for noise";
+    }
+    if (pool.sharedBend().isPresent()) {
+      return "settle the shared bend first: here it passes for noise";
+    }
     double gain = pool.gainFromWeights().getAsDouble();
     String much = percent(gain);
     if (pool.options().weighting() == Weighting.BY_NOISE) {

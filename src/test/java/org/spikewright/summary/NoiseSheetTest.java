@@ -99,7 +99,10 @@ class NoiseSheetTest {
 
   @Test
   void weightsAreAdvisedWhereTheyGain() {
-    assertThat(text(linesOf("furnace, Pb, made up").get(0).get(12))).isEqualTo("equal weights fit");
+    assertThat(text(linesOf("furnace, Pb, made up").get(0).get(12)))
+        .isEqualTo("settle the shared bend first: here it passes for noise");
+    assertThat(text(linesOf("furnace, Cd, made up").get(0).get(12)))
+        .isEqualTo("settle the level that is off first: here it passes for noise");
     assertThat(text(linesOf("furnace, Zn, made up").get(0).get(12)))
         .matches("weights = \"pool\" is set: it narrows the usual interval by \\d+ %");
     assertThat(text(linesOf("furnace, Ni, made up").get(0).get(12)))

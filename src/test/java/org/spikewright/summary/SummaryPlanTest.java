@@ -51,7 +51,7 @@ class SummaryPlanTest {
     List<List<CellPlan>> series = rows(sheet(plan, "Series"));
     int links = 0;
     for (List<CellPlan> row : sheet(plan, "Results").rows()) {
-      CellPlan.Link link = (CellPlan.Link) row.get(18);
+      CellPlan.Link link = (CellPlan.Link) row.get(20);
       List<CellPlan> heading = series.get(link.row() - 1);
       assertThat(text(heading.get(0))).isEqualTo(text(row.get(3)));
       assertThat(text(heading.get(1))).startsWith(text(row.get(0)) + " · " + text(row.get(1)));
