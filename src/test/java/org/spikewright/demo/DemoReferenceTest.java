@@ -64,12 +64,13 @@ class DemoReferenceTest {
   }
 
   @Test
-  void the_bent_series_is_far_off_though_its_correlation_is_high() {
+  void the_bent_series_is_found_out_though_its_correlation_is_high() {
     CSVRecord row = only(Scenario.BENT);
     CSVRecord r = of(row);
+    assertThat(number(r, "bend_p_one_sided")).isLessThan(ALARM);
     assertThat(number(r, "native") / number(r, "bent_native")).isGreaterThan(1.10);
     assertThat(number(r, "result") / number(row, "true_concentration")).isBetween(1.17, 1.27);
-    assertThat(number(r, "r")).isGreaterThan(0.999);
+    assertThat(number(r, "r")).isGreaterThan(0.998);
     assertThat(oddP(r)).isGreaterThan(ALARM);
   }
 
