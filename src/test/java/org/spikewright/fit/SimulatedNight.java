@@ -8,11 +8,12 @@ import java.util.SplittableRandom;
 import java.util.function.DoubleUnaryOperator;
 
 /** Makes nights of series with known truth. */
-final class SimulatedNight {
+public final class SimulatedNight {
   /** Native concentration of every series; sensitivities differ by some percent. */
-  static final double TRUTH = 1;
+  public static final double TRUTH = 1;
 
-  static final double TOP = 2;
+  /** The top addition of every series. */
+  public static final double TOP = 2;
 
   /**
    * What a night is made of.
@@ -23,16 +24,17 @@ final class SimulatedNight {
    * @param spread standard deviation of the logarithm of the noise between series
    * @param proportional whether the noise is a share of each flask's own signal instead
    */
-  record Plan(int series, int flasks, double noise, double spread, boolean proportional) {}
+  public record Plan(int series, int flasks, double noise, double spread, boolean proportional) {}
 
   private SimulatedNight() {}
 
-  static List<PooledSeries> straight(SplittableRandom random, Plan plan) {
+  /** A night of straight lines. */
+  public static List<PooledSeries> straight(SplittableRandom random, Plan plan) {
     return bent(random, plan, 0, 0);
   }
 
   /** The first {@code bent} series show L − k·L² of the linear signal L in native units. */
-  static List<PooledSeries> bent(SplittableRandom random, Plan plan, int bent, double k) {
+  public static List<PooledSeries> bent(SplittableRandom random, Plan plan, int bent, double k) {
     List<PooledSeries> night = new ArrayList<>();
     for (int j = 0; j < plan.series; j++) {
       double curvature = j < bent ? k : 0;
@@ -56,7 +58,8 @@ final class SimulatedNight {
     return pooled(x, y);
   }
 
-  static PooledSeries pooled(double[] x, double[] y) {
+  /** A series of these points, read once each, at no known time. */
+  public static PooledSeries pooled(double[] x, double[] y) {
     int n = x.length;
     double[] none = new double[n];
     Arrays.fill(none, Double.NaN);
@@ -74,7 +77,7 @@ final class SimulatedNight {
   }
 
   /** The curvature k for which a straight line through noise-free flasks is off by a share. */
-  static double curvatureFor(double bias, int flasks) {
+  public static double curvatureFor(double bias, int flasks) {
     double low = 0;
     double high = 0.12;
     for (int step = 0; step < 100; step++) {
@@ -104,7 +107,8 @@ final class SimulatedNight {
     return (estimate.upper95().orElse(1e9) - estimate.lower95().orElse(0)) / 2;
   }
 
-  static double median(double[] values) {
+  /** The middle of some values. */
+  public static double median(double[] values) {
     double[] sorted = values.clone();
     Arrays.sort(sorted);
     return sorted[sorted.length / 2];

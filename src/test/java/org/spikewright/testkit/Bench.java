@@ -148,8 +148,13 @@ public final class Bench {
 
   /** What gathering makes of readings, with pauses up to 4 h. */
   public static List<Gathered> gather(List<Recorded> readings) {
+    return gather(SUBJECT, readings);
+  }
+
+  /** What gathering makes of the readings of a subject, with pauses up to 4 h. */
+  public static List<Gathered> gather(Subject subject, List<Recorded> readings) {
     return new Gathering(new GatheringRules(CALENDAR, Duration.ofHours(4)))
-        .gather(SUBJECT, readings);
+        .gather(subject, readings);
   }
 
   /** The one series that gathering makes of readings. */
