@@ -1,28 +1,28 @@
 package org.spikewright.judgement;
 
-/** The flags, most serious family first; the name is stable and stands in the results file. */
+/** The flags, causes before consequences; the name is stable and stands in the results file. */
 public enum FlagKind {
   NO_SERIES("no-series"),
   NO_ADDITIONS("no-additions"),
   SLOPE_NOT_ESTABLISHED("slope-not-established"),
   BENT("bent"),
+  SUSPECTED_SLIP("suspected-slip"),
   ODD_FLASK("odd-flask"),
   ODD_LEVEL("odd-level"),
   NOISY("noisy"),
-  SUSPECTED_SLIP("suspected-slip"),
   ODD_SLOPE("odd-slope"),
   SHARED_BEND("shared-bend"),
   LEVEL_OFF("level-off"),
   NIGHT_DRIFT("night-drift"),
   ELECTRODE_SLOPE("electrode-slope"),
-  UNCERTAIN("uncertain"),
-  LOW_CORRELATION("low-correlation"),
-  BEND_ALLOWANCE("bend-allowance"),
   NO_UNSPIKED_FLASK("no-unspiked-flask"),
   FEW_FLASKS("few-flasks"),
   ADDITIONS_TOO_SMALL("additions-too-small"),
   ADDITIONS_TOO_LARGE("additions-too-large"),
   UNEVEN_ADDITIONS("uneven-additions"),
+  UNCERTAIN("uncertain"),
+  LOW_CORRELATION("low-correlation"),
+  BEND_ALLOWANCE("bend-allowance"),
   OVER_RANGE("over-range"),
   LEFT_OUT("left-out"),
   OUTSIDE_WORKING_RANGE("outside-working-range"),
