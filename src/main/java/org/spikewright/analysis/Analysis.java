@@ -56,7 +56,8 @@ public final class Analysis implements Iterable<Outcome> {
     };
   }
 
-  private Outcome outcome(Fitted fitted) {
+  /** What the night says about one series. */
+  public Outcome outcome(Fitted fitted) {
     return fitted.gathered() instanceof AdditionSeries found
         ? judge.judge(found, fitted.fit().orElseThrow(), learnt)
         : judge.judge((Ungrouped) fitted.gathered());
