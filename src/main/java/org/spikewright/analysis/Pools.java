@@ -55,13 +55,25 @@ final class Pools {
       }
     }
 
-    List<PooledSeries> least(int most) {
+    /** By key. */
+    List<PooledSeries> series() {
       return members.stream()
-          .sorted(BY_HASH)
-          .limit(most)
           .sorted(Comparator.comparing(Member::key))
           .map(Member::series)
           .toList();
+    }
+
+    /** So many of them, evenly by key, so that how samples are called does not choose. */
+    List<PooledSeries> some(int most) {
+      List<PooledSeries> all = series();
+      if (all.size() <= most) {
+        return all;
+      }
+      List<PooledSeries> some = new ArrayList<>(most);
+      for (int i = 0; i < most; i++) {
+        some.add(all.get((int) ((long) i * all.size() / most)));
+      }
+      return some;
     }
   }
 
@@ -93,7 +105,7 @@ final class Pools {
     Map<String, List<PooledSeries>> before = new TreeMap<>();
     pools.forEach(
         (key, pool) -> {
-          List<PooledSeries> series = pool.least(LARGEST);
+          List<PooledSeries> series = pool.series();
           List<PooledSeries> remembered = recall.memory().of(key);
           own.put(key, PoolEvidence.of(series, remembered, options(pool.method, book)));
           join(tonight, key.instrument(), series);
@@ -131,7 +143,7 @@ final class Pools {
   /** What later nights remember, by pool. */
   Map<PoolKey, List<PooledSeries>> toRemember() {
     Map<PoolKey, List<PooledSeries>> remembered = new TreeMap<>();
-    pools.forEach((key, pool) -> remembered.put(key, new ArrayList<>(pool.least(REMEMBERED))));
+    pools.forEach((key, pool) -> remembered.put(key, pool.some(REMEMBERED)));
     return remembered;
   }
 }
