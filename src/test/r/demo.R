@@ -18,7 +18,7 @@ furnace <- function(path) {
   header <- grep("^Sample label;", lines)[1]
   table <- read.table(text = lines[header:length(lines)], sep = ";", quote = '"', header = TRUE,
                       check.names = FALSE, colClasses = "character", comment.char = "")
-  table <- table[table$Type == "Sample", ]
+  table <- table[table$Type %in% c("Sample", "Control", "Blank"), ]
   data.frame(instrument = "furnace", sample = table[["Sample label"]], analyte = table$Element,
              flask = table$Position, addition = as.numeric(table[["Spike (µL)"]]),
              signal = sub(",", ".", table[["Peak area (s)"]], fixed = TRUE),

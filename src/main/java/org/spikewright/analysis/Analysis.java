@@ -1,75 +1,42 @@
 package org.spikewright.analysis;
 
 import java.util.Iterator;
-import java.util.List;
-import java.util.Map;
-import java.util.Optional;
-import org.spikewright.fit.PooledSeries;
-import org.spikewright.judgement.Around;
-import org.spikewright.judgement.CriteriaBook;
-import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
-import org.spikewright.judgement.PoolView;
-import org.spikewright.judgement.SeriesResult;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.series.Ungrouped;
 
 /**
  * A lab day's series, judged with what the night knows. The series are walked once to learn what
  * they say together, and again whenever the outcomes are walked; both walks give the same whenever
- * they are made, since everything is a pure function of the series and of what is recalled.
+ * they are made, since everything is a pure function of the series and of what is known beside
+ * them.
  */
 public final class Analysis implements Iterable<Outcome> {
   private final Iterable<Fitted> series;
   private final Judge judge;
-  private final NightEvidence evidence;
-  private final Map<PoolKey, List<PooledSeries>> toRemember;
-
-  private Analysis(
-      Iterable<Fitted> series,
-      Judge judge,
-      NightEvidence evidence,
-      Map<PoolKey, List<PooledSeries>> toRemember) {
-    this.series = series;
-    this.judge = judge;
-    this.evidence = evidence;
-    this.toRemember = toRemember;
-  }
+  private final Learnt learnt;
 
   /**
-   * Looks at a lab day.
+   * An analysis by what was learnt before.
    *
    * @param series of one lab day, ordered by key; can be walked more than once
    * @param judge of the revision
-   * @param book the limits by which the night's own tests are made
-   * @param recall what is known of the day and of those before it
    */
-  public static Analysis of(
-      Iterable<Fitted> series, Judge judge, CriteriaBook book, Recall recall) {
-    Pools pools = new Pools();
-    for (Fitted fitted : series) {
-      Optional<SeriesResult> result = fitted.result();
-      result.ifPresent(found -> pools.add(found.series(), found));
-    }
-    NightEvidence evidence = recall.stored().orElseGet(() -> pools.evidence(book, recall));
-    return new Analysis(series, judge, evidence, pools.toRemember());
+  public Analysis(Iterable<Fitted> series, Judge judge, Learnt learnt) {
+    this.series = series;
+    this.judge = judge;
+    this.learnt = learnt;
   }
 
-  /** The outcomes of series of a lab day whose evidence is known already. */
-  public static Iterable<Outcome> with(
-      Iterable<Fitted> series, Judge judge, NightEvidence evidence) {
-    return new Analysis(series, judge, evidence, Map.of());
+  /** Looks at a lab day. */
+  public static Analysis of(Iterable<Fitted> series, Judge judge, DayFacts facts) {
+    return new Analysis(series, judge, Learnt.of(series, facts));
   }
 
-  /** What the night knows. */
-  public NightEvidence evidence() {
-    return evidence;
-  }
-
-  /** What later nights are to remember, by pool. */
-  public Map<PoolKey, List<PooledSeries>> toRemember() {
-    return toRemember;
+  /** What the first walk has learnt. */
+  public Learnt learnt() {
+    return learnt;
   }
 
   /** The outcomes, in the order of the series. */
@@ -92,21 +59,7 @@ public final class Analysis implements Iterable<Outcome> {
   /** What the night says about one series. */
   public Outcome outcome(Fitted fitted) {
     return fitted.gathered() instanceof AdditionSeries found
-        ? judge.judge(found, fitted.fit().orElseThrow(), around())
+        ? judge.judge(found, fitted.fit().orElseThrow(), learnt)
         : judge.judge((Ungrouped) fitted.gathered());
-  }
-
-  private Around around() {
-    return new Around() {
-      @Override
-      public PoolView pool(AdditionSeries one) {
-        return evidence.of(one);
-      }
-
-      @Override
-      public List<Flag> flags(AdditionSeries one, SeriesResult result) {
-        return List.of();
-      }
-    };
   }
 }

@@ -23,7 +23,7 @@ public record PoolKey(String instrument, String analyte, String line, Design des
           .thenComparing(PoolKey::design);
 
   /** The pool of a series. */
-  static PoolKey of(AdditionSeries series) {
+  public static PoolKey of(AdditionSeries series) {
     Subject subject = series.key().subject();
     return new PoolKey(subject.instrument(), subject.analyte(), subject.line(), series.design());
   }

@@ -6,10 +6,12 @@ import java.util.Deque;
 import java.util.Iterator;
 import java.util.List;
 import java.util.NoSuchElementException;
+import java.util.Optional;
 import java.util.Set;
 import org.spikewright.ledger.LedgerView;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Subject;
+import org.spikewright.series.Drifts;
 import org.spikewright.series.Gathered;
 import org.spikewright.series.Gathering;
 
@@ -26,6 +28,7 @@ final class DaySeries implements Iterable<Gathered> {
   private final LocalDate day;
   private final long upTo;
   private final List<Subject> subjects;
+  private Optional<Drifts> drifts = Optional.empty();
 
   /**
    * The series of a day.
@@ -49,6 +52,14 @@ final class DaySeries implements Iterable<Gathered> {
   DaySeries of(Set<Subject> wanted) {
     List<Subject> some = subjects.stream().filter(wanted::contains).toList();
     return new DaySeries(ledger, gathering, day, upTo, some);
+  }
+
+  /** Read once, when the first series is asked for: most days have no drift checks. */
+  private Drifts drifts() {
+    if (drifts.isEmpty()) {
+      drifts = Optional.of(new Drifts(ledger.besideSamples(day, upTo)));
+    }
+    return drifts.get();
   }
 
   @Override
@@ -78,9 +89,11 @@ final class DaySeries implements Iterable<Gathered> {
   }
 
   private void gather(List<Subject> some, Deque<Gathered> ready) {
+    Drifts corrected = drifts();
     List<List<Recorded>> readings = ledger.readings(some, day, upTo);
     for (int i = 0; i < some.size(); i++) {
-      for (Gathered gathered : gathering.gather(some.get(i), readings.get(i))) {
+      for (Gathered gathered :
+          gathering.gather(some.get(i), corrected.corrected(readings.get(i)))) {
         if (gathered.key().labDay().equals(day)) {
           ready.add(gathered);
         }

@@ -111,9 +111,11 @@ final class DemoCommand implements Callable<Integer> {
     out.println("The workbook: " + issued.workbook());
     out.println("  Overview      the night in one screen");
     out.println("  Results       one row a result, those that need a person first");
-    out.println("  To repeat     which series cannot be reported, and why");
+    out.println("  To repeat     which series need work at the bench, and what to prepare");
     out.println("  Series        every flask, with live formulas beside the stored numbers");
     out.println("  Plot          one series, chosen from a list");
+    out.println("  Noise         what the night's series say together: scatter, bends, levels off");
+    out.println("  Controls      controls, blanks and drift checks, and the batches they speak of");
     out.println("  Files, Refused rows, Settings");
   }
 

@@ -11,8 +11,8 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.TreeMap;
 import org.spikewright.analysis.Analysis;
+import org.spikewright.analysis.DayFacts;
 import org.spikewright.analysis.Fitted;
-import org.spikewright.analysis.Recall;
 import org.spikewright.config.Settings;
 import org.spikewright.decode.FileDecoder;
 import org.spikewright.judgement.Judge;
@@ -24,6 +24,7 @@ import org.spikewright.mapping.Rejection;
 import org.spikewright.mapping.RowMapper;
 import org.spikewright.mapping.Tally;
 import org.spikewright.quantity.Numbers;
+import org.spikewright.reading.BatchReading;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Subject;
@@ -63,7 +64,7 @@ final class DryRun {
     out.println("Export   " + name);
     out.println("Mapping  " + mapping.name() + ", instrument " + mapping.instrument());
     RowMapper mapper = mapping.open(name, new Kept());
-    Optional<DecodeFault> fault = FileDecoder.read(export, name, mapping.shape(), mapper::accept);
+    Optional<DecodeFault> fault = FileDecoder.read(export, name, mapping.shape(), mapper);
     MappedFile mapped = mapper.finish();
     boolean fit;
     if (fault.isPresent()) {
@@ -71,6 +72,7 @@ final class DryRun {
     } else if (mapped instanceof MappedFile.Unmappable unmappable) {
       fit = refused(Refusal.of(unmappable));
     } else {
+      ((MappedFile.Mapped) mapped).workedOut().forEach(line -> out.println("Taken    " + line));
       fit = understood(((MappedFile.Mapped) mapped).tally());
     }
     out.flush();
@@ -88,23 +90,24 @@ final class DryRun {
   private boolean understood(Tally tally) {
     out.printf(
         Locale.ROOT,
-        "Rows     %d: %d readings, %d refused, %d skipped as the mapping says%n",
+        "Rows     %d: %d readings, %d refused, %d skipped as the mapping says%s%n",
         tally.rows(),
         tally.readings(),
         tally.rejections(),
-        tally.skipped());
+        tally.skipped(),
+        tally.besideSamples());
     firstReadings();
     int without = series();
     refusals();
     out.println();
-    boolean fit = tally.readings() > 0 && tally.rejections() == 0 && without == 0;
+    boolean fit = tally.isOfUse() && tally.rejections() == 0 && without == 0;
     out.println(fit ? "Fit for use." : "Not fit for use: " + why(tally, without) + ".");
     return fit;
   }
 
   private static String why(Tally tally, int without) {
     List<String> reasons = new ArrayList<>();
-    if (tally.readings() == 0) {
+    if (!tally.isOfUse() && tally.readings() == 0) {
       reasons.add("not one reading");
     }
     if (tally.rejections() > 0) {
@@ -191,7 +194,7 @@ final class DryRun {
         (subject, found) -> gathered.addAll(gathering.gather(subject, newest(found))));
     // An export alone: what earlier nights remember is the ledger's, which is not asked.
     for (Outcome outcome :
-        Analysis.of(Fitted.each(gathered), judge, settings.criteria(), Recall.NOTHING)) {
+        Analysis.of(Fitted.each(gathered), judge, DayFacts.of(settings.criteria()))) {
       without += outcome.result().isEmpty() ? 1 : 0;
       if (shown++ < SERIES_SHOWN || outcome.result().isEmpty()) {
         table.add(line(outcome));
@@ -273,6 +276,11 @@ final class DryRun {
     @Override
     public void reading(Reading reading) {
       readings.add(reading);
+    }
+
+    @Override
+    public void batchReading(BatchReading reading) {
+      // Counted in the tally; what it says about the batch stands in the summary.
     }
 
     @Override

@@ -6,6 +6,7 @@ import java.util.concurrent.ArrayBlockingQueue;
 import java.util.concurrent.BlockingQueue;
 import org.spikewright.mapping.MappedSink;
 import org.spikewright.mapping.Rejection;
+import org.spikewright.reading.BatchReading;
 import org.spikewright.reading.Reading;
 
 /**
@@ -35,6 +36,11 @@ final class Handover implements MappedSink, AutoCloseable {
 
   @Override
   public void reading(Reading reading) {
+    add(reading);
+  }
+
+  @Override
+  public void batchReading(BatchReading reading) {
     add(reading);
   }
 
@@ -121,6 +127,8 @@ final class Handover implements MappedSink, AutoCloseable {
       for (Object mapped : full) {
         if (mapped instanceof Reading reading) {
           next.reading(reading);
+        } else if (mapped instanceof BatchReading beside) {
+          next.batchReading(beside);
         } else {
           next.rejection((Rejection) mapped);
         }

@@ -3,7 +3,7 @@ package org.spikewright.app;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
-import org.spikewright.analysis.NightEvidence;
+import org.spikewright.analysis.Learnt;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.series.AdditionSeries;
 import org.spikewright.summary.ResultRow;
@@ -21,7 +21,7 @@ final class KeptNight {
   private final long mostReadings = mostReadings();
   private List<Outcome> outcomes = new ArrayList<>();
   private List<ResultRow> rows = new ArrayList<>();
-  private NightEvidence evidence = NightEvidence.NONE;
+  private Learnt learnt = Learnt.NOTHING;
   private long readings;
 
   /** So many readings may stay in memory. */
@@ -40,19 +40,19 @@ final class KeptNight {
     }
   }
 
-  void knows(NightEvidence night) {
-    evidence = night;
+  void knows(Learnt night) {
+    learnt = night;
   }
 
   /** What the night knows. */
-  NightEvidence evidence() {
-    return evidence;
+  Learnt learnt() {
+    return learnt;
   }
 
   /** What was kept; empty when it was too much. */
   Optional<NightSource> source() {
     return readings <= mostReadings
-        ? Optional.of(NightSource.kept(outcomes, rows, evidence))
+        ? Optional.of(NightSource.kept(outcomes, rows, learnt))
         : Optional.empty();
   }
 }

@@ -5,9 +5,10 @@ import java.util.HashSet;
 import java.util.List;
 import java.util.Set;
 import org.spikewright.analysis.Analysis;
+import org.spikewright.analysis.DayFacts;
 import org.spikewright.analysis.Fitted;
-import org.spikewright.analysis.NightEvidence;
-import org.spikewright.analysis.Recall;
+import org.spikewright.analysis.Learnt;
+import org.spikewright.app.NightAnalysis.RevisionMoment;
 import org.spikewright.config.Settings;
 import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
@@ -25,7 +26,7 @@ import org.spikewright.summary.ResultRow;
  * @param detailed of the series that the workbook shows flask by flask, by key
  * @param byKey the results by key
  * @param worstFirst the results that need a person first
- * @param evidence what the night knows
+ * @param learnt what the night knows
  * @param inMemory whether it may be walked by several threads
  */
 record NightSource(
@@ -33,31 +34,31 @@ record NightSource(
     Iterable<Outcome> detailed,
     Iterable<ResultRow> byKey,
     Iterable<ResultRow> worstFirst,
-    NightEvidence evidence,
+    Learnt learnt,
     boolean inMemory) {
 
   /** From what was judged a moment ago. */
-  static NightSource kept(List<Outcome> outcomes, List<ResultRow> rows, NightEvidence evidence) {
+  static NightSource kept(List<Outcome> outcomes, List<ResultRow> rows, Learnt learnt) {
     return new NightSource(
         outcomes,
         outcomes.stream().filter(o -> Night.isDetailed(rows.size(), o.verdict())).toList(),
         rows,
         rows.stream().sorted(ResultOrder.BY_SEVERITY.comparator()).toList(),
-        evidence,
+        learnt,
         true);
   }
 
   /** From the ledger, looked at and judged again: everything follows from what it fixed. */
   static NightSource from(LedgerView ledger, Settings settings, RevisionRecord revision) {
-    Iterable<Fitted> series = Fitted.each(series(ledger, settings, revision));
-    Recall recall = ledger.recall(revision.labDay(), revision.inProgress());
-    Analysis analysis = NightAnalysis.of(series, settings, revision.moment(), recall);
-    return from(ledger, settings, revision, analysis.evidence());
+    DayFacts facts =
+        NightAnalysis.facts(ledger, settings, revision.labDay(), RevisionMoment.of(revision));
+    Learnt learnt = Learnt.of(Fitted.each(series(ledger, settings, revision)), facts);
+    return from(ledger, settings, revision, learnt);
   }
 
   /** From the ledger, judged again with what the night is known to know. */
   static NightSource from(
-      LedgerView ledger, Settings settings, RevisionRecord revision, NightEvidence evidence) {
+      LedgerView ledger, Settings settings, RevisionRecord revision, Learnt learnt) {
     LocalDate day = revision.labDay();
     Judge judge = NightAnalysis.judge(settings, revision.moment());
     DaySeries series = series(ledger, settings, revision);
@@ -70,11 +71,11 @@ record NightSource(
       }
     }
     return new NightSource(
-        Analysis.with(Fitted.each(series), judge, evidence),
-        Analysis.with(Fitted.each(series.of(detailed)), judge, evidence),
+        new Analysis(Fitted.each(series), judge, learnt),
+        new Analysis(Fitted.each(series.of(detailed)), judge, learnt),
         ledger.results(day, revision.revision(), ResultOrder.BY_KEY),
         worstFirst,
-        evidence,
+        learnt,
         false);
   }
 

@@ -11,8 +11,11 @@ import java.util.stream.Stream;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
 import org.spikewright.analysis.Analysis;
-import org.spikewright.analysis.Recall;
+import org.spikewright.analysis.DayFacts;
+import org.spikewright.analysis.Learnt;
+import org.spikewright.app.NightAnalysis.RevisionMoment;
 import org.spikewright.config.Settings;
+import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.ledger.Ledger;
 import org.spikewright.ledger.RevisionRecord;
@@ -101,7 +104,7 @@ final class NightlySummary {
     return Optional.of(
         source.isPresent()
             ? files.write(revision.get(), source.get())
-            : files.write(revision.get(), kept.evidence()));
+            : files.write(revision.get(), kept.learnt()));
   }
 
   /** Judges a lab day's series and records what is new; empty when nothing is, or at a stop. */
@@ -119,14 +122,17 @@ final class NightlySummary {
             settings.text(),
             Version.NUMBER);
     DaySeries series = NightAnalysis.series(ledger, settings, day, start.arrivalLimit());
-    Recall recall = ledger.recall(day, inProgress);
+    DayFacts facts = NightAnalysis.facts(ledger, settings, day, RevisionMoment.of(start));
+    Judge judge = NightAnalysis.judge(settings, start.moment());
     try (RevisionWriter writer = ledger.startRevision(start);
         FittedDay fitted =
             new FittedDay(series, stop, count -> progress.at("fitting series", count))) {
-      Analysis analysis = NightAnalysis.of(fitted, settings, start.moment(), recall);
-      if (recall.stored().isEmpty() && !inProgress) {
-        writer.pools(analysis.evidence(), analysis.toRemember());
+      Analysis analysis = Analysis.of(fitted, judge, facts);
+      Learnt learnt = analysis.learnt();
+      if (facts.recall().stored().isEmpty() && !inProgress) {
+        writer.pools(learnt.pools(), learnt.toRemember());
       }
+      writer.controls(learnt.batches().found().points());
       Optional<Instant> waitingUntil = record(analysis, writer, kept);
       return stop.isRequested() ? Optional.empty() : writer.commit(waitingUntil);
     }
@@ -144,7 +150,7 @@ final class NightlySummary {
       waitingUntil = earlier(waitingUntil, outcome.waitingUntil());
       progress.at("judging series", ++count);
     }
-    kept.knows(analysis.evidence());
+    kept.knows(analysis.learnt());
     return waitingUntil;
   }
 

@@ -25,6 +25,9 @@ import org.spikewright.mapping.RowMapper;
 import org.spikewright.mapping.Tally;
 import org.spikewright.reading.Subject;
 import org.spikewright.table.DecodeFault;
+import org.spikewright.table.Row;
+import org.spikewright.table.RowSink;
+import org.spikewright.table.TextForm;
 
 /** Takes one settled file in: known already, refused, or read in one transaction. */
 final class Reception {
@@ -125,9 +128,17 @@ final class Reception {
               file.path(),
               file.name(),
               mapping.shape(),
-              row -> {
-                progress.at(reading, row.number());
-                return mapper.accept(row) && !stop.isRequested();
+              new RowSink() {
+                @Override
+                public boolean accept(Row row) {
+                  progress.at(reading, row.number());
+                  return mapper.accept(row) && !stop.isRequested();
+                }
+
+                @Override
+                public void begins(TextForm form) {
+                  mapper.begins(form);
+                }
               });
       if (stop.isRequested() || changed(file, content)) {
         return new Received.LetGo();
@@ -135,6 +146,7 @@ final class Reception {
       sink.finish();
       MappedFile mapped = mapper.finish();
       if (fault.isEmpty() && mapped instanceof MappedFile.Mapped done) {
+        LOG.info("taken file={} as=\"{}\"", file.name(), String.join("; ", done.workedOut()));
         return recorded(record(delivery, done.tally(), sink.first(), file, arriving));
       }
       refusal =
@@ -146,7 +158,7 @@ final class Reception {
   private Arrived record(
       Delivery delivery, Tally tally, List<Rejection> first, Sighting file, Arriving arriving)
       throws IOException {
-    if (tally.readings() == 0) {
+    if (!tally.isOfUse()) {
       Refusal refusal = Refusal.withoutReadings(tally, first);
       return delivery.refuse(tally, refusal.words(), rejectedName(file));
     }
@@ -177,11 +189,12 @@ final class Reception {
     switch (arrived.outcome()) {
       case READ ->
           LOG.info(
-              "read file={} readings={} refused_rows={} skipped={} known={}",
+              "read file={} readings={} refused_rows={} skipped={} beside_samples={} known={}",
               arrived.name(),
               arrived.tally().readings(),
               arrived.tally().rejections(),
               arrived.tally().skipped(),
+              arrived.tally().checks() + arrived.tally().calibrations(),
               arrived.repeated());
       case REFUSED ->
           LOG.info(

@@ -6,7 +6,7 @@ import java.util.concurrent.ExecutionException;
 import java.util.concurrent.FutureTask;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
-import org.spikewright.analysis.NightEvidence;
+import org.spikewright.analysis.Learnt;
 import org.spikewright.config.Loaded;
 import org.spikewright.config.Settings;
 import org.spikewright.ledger.Ledger;
@@ -40,8 +40,8 @@ final class RevisionFiles {
     return write(revision, NightSource.from(ledger, settingsOf(revision), revision));
   }
 
-  NightlySummary.Issued write(RevisionRecord revision, NightEvidence evidence) throws WriteFault {
-    return write(revision, NightSource.from(ledger, settingsOf(revision), revision, evidence));
+  NightlySummary.Issued write(RevisionRecord revision, Learnt learnt) throws WriteFault {
+    return write(revision, NightSource.from(ledger, settingsOf(revision), revision, learnt));
   }
 
   NightlySummary.Issued write(RevisionRecord revision, NightSource source) throws WriteFault {
@@ -141,7 +141,9 @@ final class RevisionFiles {
         ledger.files(day, revision.arrivalLimit()),
         ledger.refused(day, revision.arrivalLimit()),
         SettingsLines.of(settings, station.mappings().good(), revision),
-        settings.criteria());
+        settings.criteria(),
+        source.learnt().pools(),
+        source.learnt().batches().found());
   }
 
   /** The settings that held when the revision was made, which may not be today's. */

@@ -33,7 +33,9 @@ final class RowsText {
             + arrived.tally().rejections()
             + " rows not used, "
             + arrived.tally().skipped()
-            + " skipped as the mapping says.");
+            + " skipped as the mapping says"
+            + arrived.tally().besideSamples()
+            + ".");
     lines.add("What was usable counts. To mend a row, correct it in the export and drop the file");
     lines.add("again: readings that are known already are not counted twice.");
     if (!arrived.reason().isEmpty()) {

@@ -37,11 +37,40 @@ final class MappingCheck {
     if (needs.fixedHas("design")) {
       new DesignCheck(needs, method, places).check();
     }
+    means();
     digest();
     if (!named.has(Fact.METHOD_BLANK)) {
       needs.refuse(Fact.METHOD_BLANK_DILUTION, "without method_blank", "method_blank beside it");
     }
     units();
+  }
+
+  private void means() {
+    needs.together(Fact.SIGNAL_SD, Fact.READINGS);
+    needs.together(Fact.READINGS, Fact.SIGNAL_SD);
+    if (method.fitReadings()) {
+      needs.refuse(
+          Fact.SIGNAL_SD,
+          "beside unit = \"reading\" in [method]",
+          "unit = \"flask\": of readings whose mean alone is known none can be a point");
+    }
+    if (named.has(Fact.INTERNAL_STANDARD)) {
+      needs.refuse(
+          Fact.SIGNAL_SD,
+          "beside internal_standard",
+          "mean and standard deviation of the ratio as signal and signal_sd, or single readings: how"
+              + " the ratio scatters does not follow from how the signal does");
+    }
+    PerAnalyte<Measured> fixed =
+        places.fixedAmounts().getOrDefault(Fact.READINGS, PerAnalyte.none());
+    boolean odd =
+        fixed.values().anyMatch(n -> n.quantity().value() != Math.rint(n.quantity().value()));
+    if (odd || !fixed.each().isEmpty()) {
+      faults.add(
+          root.at("fixed", Fact.READINGS.word()),
+          "readings in [fixed] that are no whole number, or not one for all",
+          "one whole number, such as readings = 3");
+    }
   }
 
   private void digest() {

@@ -5,6 +5,7 @@ import java.time.ZoneId;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import org.spikewright.mapping.Fact;
 import org.spikewright.mapping.Mapping;
 import org.spikewright.mapping.MethodRule;
 import org.spikewright.mapping.Notation;
@@ -77,9 +78,11 @@ public final class MappingFile {
         UnitsSection.read(root.section("units", MappingKeys.KEYS.get("units")), table.numbers());
     Named named = new Named();
     Optional<Section> fixed = root.section("fixed", MappingKeys.KEYS.get("fixed"));
+    PlacesSection reader = new PlacesSection(notation, around.zone(), named);
+    LayoutSection.Layout layout = LayoutSection.read(root, reader, named);
     Optional<FixedSection> fixedReader =
         fixed.map(section -> new FixedSection(section, notation, named, around.shelf().stocks()));
-    Places places = places(root, fixedReader, new PlacesSection(notation, around.zone(), named));
+    Places places = places(root, fixedReader, reader, layout.groups());
     RowRules rows = RowsSection.rules(root, fixed, table.extraCells());
     MethodRule method = new MethodSection(root, fixed, notation).rule(name);
     new MappingCheck(root, named, method, places).check();
@@ -90,8 +93,9 @@ public final class MappingFile {
         text.sha256(),
         text.text(),
         files(root),
-        table.shapeFor(Mapping.neededHeaders(places, rows)),
-        table.header(),
+        table.shapeFor(
+            Mapping.neededHeaders(places, rows, layout.rule()), layout.rule(), places.sheetName()),
+        table.rules(layout.rule(), root, places),
         notation,
         places,
         RowsSection.words(root.section("words", MappingKeys.KEYS.get("words"))),
@@ -107,12 +111,19 @@ public final class MappingFile {
     return root.text(key, expected).map(String::strip).orElse("");
   }
 
-  private static Places places(Section root, Optional<FixedSection> fixed, PlacesSection reader) {
+  private static Places places(
+      Section root,
+      Optional<FixedSection> fixed,
+      PlacesSection reader,
+      Map<Fact, Places.Group> headers) {
     Optional<Section> columns = root.section("columns", MappingKeys.KEYS.get("columns"));
     return new Places(
         columns.map(reader::columns).orElse(Map.of()),
         reader.labels(root.sections("label", MappingKeys.KEYS.get("label"))),
-        reader.fileName(root.section("file", MappingKeys.KEYS.get("file"))),
+        headers,
+        reader.name(root.section("block", MappingKeys.KEYS.get("block"))),
+        reader.name(root.section("sheet", MappingKeys.KEYS.get("sheet"))),
+        reader.name(root.section("file", MappingKeys.KEYS.get("file"))),
         fixed.map(FixedSection::names).orElse(Map.of()),
         fixed.map(FixedSection::amounts).orElse(Map.of()),
         fixed.map(FixedSection::stocks).orElse(PerAnalyte.none()));

@@ -16,11 +16,13 @@ final class MappingKeys {
   private static final List<Fact> NEVER_FIXED =
       List.of(
           Fact.SIGNAL,
+          Fact.SIGNAL_SD,
           Fact.INTERNAL_STANDARD,
           Fact.MEASURED_AT,
           Fact.FLASK,
           Fact.INSTRUMENT,
-          Fact.RESULT_UNIT);
+          Fact.RESULT_UNIT,
+          Fact.CALIBRATION_CONCENTRATION);
 
   static final List<String> METHOD_IN_FIXED =
       List.of(
@@ -42,9 +44,12 @@ final class MappingKeys {
                   "instrument",
                   "files",
                   "table",
+                  "layout",
                   "columns",
                   "fixed",
                   "label",
+                  "block",
+                  "sheet",
                   "file",
                   "words",
                   "skip",
@@ -61,11 +66,20 @@ final class MappingKeys {
                   "quote",
                   "encoding",
                   "header",
+                  "header_rows",
+                  "units_row",
+                  "footer",
+                  "tables",
+                  "carry_down",
                   "sheet",
                   "extra_cells")),
+          Map.entry(
+              "layout", and(List.of("kind", "columns", "pattern", "beside"), words(inText()))),
           Map.entry("columns", words(Arrays.asList(Fact.values()))),
           Map.entry("fixed", fixed()),
           Map.entry("label", and(List.of("column", "pattern"), words(inText()))),
+          Map.entry("block", and(List.of("pattern"), words(inText()))),
+          Map.entry("sheet", and(List.of("pattern"), words(inText()))),
           Map.entry("file", and(List.of("pattern"), words(inText()))),
           Map.entry("words", List.of("over_range", "below_range", "missing")),
           Map.entry("roles", roles()),
@@ -96,15 +110,27 @@ final class MappingKeys {
 
   /** The facts that a label or a file name may hold. */
   static List<Fact> inText() {
-    return Arrays.stream(Fact.values()).filter(fact -> fact.kind() != Kind.SIGNAL).toList();
+    return Arrays.stream(Fact.values())
+        .filter(fact -> fact.kind() != Kind.SIGNAL && fact.kind() != Kind.SPREAD)
+        .toList();
   }
 
   /** The keys of a column or a group, by what the fact is. */
   static List<String> placeKeys(Fact fact, String place) {
-    if (fact.kind() == Kind.AMOUNT) {
+    if (fact.kind() == Kind.AMOUNT || fact == Fact.SIGNAL_SD) {
       return List.of(place, "unit");
     }
     return fact.kind() == Kind.TIME ? List.of(place, "format", "zone") : List.of(place);
+  }
+
+  /** The facts that a column beside another may hold. */
+  static List<Fact> beside() {
+    return Arrays.stream(Fact.values()).filter(fact -> fact != Fact.SIGNAL).toList();
+  }
+
+  /** The words of facts. */
+  static List<String> words(List<Fact> facts) {
+    return facts.stream().map(Fact::word).toList();
   }
 
   /** The key of a role under {@code [roles]}. */
@@ -118,10 +144,6 @@ final class MappingKeys {
 
   private static List<String> fixed() {
     return and(METHOD_IN_FIXED, words(fixable()));
-  }
-
-  private static List<String> words(List<Fact> facts) {
-    return facts.stream().map(Fact::word).toList();
   }
 
   private static List<String> and(List<String> some, List<String> more) {

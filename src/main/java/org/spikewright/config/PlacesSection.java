@@ -21,7 +21,7 @@ import org.spikewright.mapping.TimeForm;
 import org.spikewright.quantity.Unit;
 import org.tomlj.TomlTable;
 
-/** Reads {@code [columns]}, {@code [label]} and {@code [file]}: where facts stand. */
+/** Reads {@code [columns]}, {@code [label]} and sections of names: where facts stand. */
 final class PlacesSection {
   private static final Pattern GROUP_NAME = Pattern.compile("\\(\\?<([a-zA-Z][a-zA-Z0-9]*)>");
 
@@ -70,19 +70,20 @@ final class PlacesSection {
   }
 
   private static String example(Fact fact, String key) {
-    return fact.kind() == Kind.AMOUNT
+    return fact.kind() == Kind.AMOUNT || fact == Fact.SIGNAL_SD
         ? "{ " + key + " = \"…\", unit = \"…\" }"
         : "{ " + key + " = \"…\" }";
   }
 
-  private Form form(Fact fact, Optional<Section> inner) {
+  /** How a fact is written: its unit, or its format and zone. */
+  Form form(Fact fact, Optional<Section> inner) {
     if (fact.kind() == Kind.TIME) {
       Optional<ZoneId> zone = inner.flatMap(section -> Zones.zone(section, "zone"));
       return new Form(
           Optional.empty(),
           Optional.of(new TimeForm(inner.flatMap(this::pattern), zone.orElse(defaultZone))));
     }
-    if (fact.kind() != Kind.AMOUNT) {
+    if (fact.kind() != Kind.AMOUNT && fact != Fact.SIGNAL_SD) {
       return Form.PLAIN;
     }
     Optional<Unit> unit = inner.flatMap(section -> unit(section, fact));
@@ -134,16 +135,18 @@ final class PlacesSection {
     return labels;
   }
 
-  List<Places.FileName> fileName(Optional<Section> section) {
+  /** Facts in a name: {@code [file]}, {@code [sheet]} or {@code [block]}. */
+  List<Places.Named> name(Optional<Section> section) {
     if (section.isEmpty()) {
       return List.of();
     }
     Optional<Pattern> pattern = regex(section.get());
     Map<Fact, Places.Group> groups = groups(section.get(), pattern);
-    return pattern.map(found -> List.of(new Places.FileName(found, groups))).orElse(List.of());
+    return pattern.map(found -> List.of(new Places.Named(found, groups))).orElse(List.of());
   }
 
-  private static Optional<Pattern> regex(Section section) {
+  /** The pattern of a section that must have one; empty, with a fault, where it has none. */
+  static Optional<Pattern> regex(Section section) {
     String expected = "a regular expression with named groups, such as '(?<id>[A-Z]+-\\d+).*'";
     Optional<String> text = section.text("pattern", expected);
     if (!section.has("pattern")) {
@@ -166,8 +169,20 @@ final class PlacesSection {
     }
   }
 
-  private Map<Fact, Places.Group> groups(Section section, Optional<Pattern> pattern) {
+  /**
+   * The facts in the groups of a pattern: those that the section names, and those whose word is the
+   * name of a group.
+   */
+  Map<Fact, Places.Group> groups(Section section, Optional<Pattern> pattern) {
     Map<Fact, Places.Group> groups = new EnumMap<>(Fact.class);
+    for (String group : groupNames(pattern)) {
+      Optional<Fact> fact = Fact.of(group).filter(MappingKeys.inText()::contains);
+      if (fact.isPresent() && !section.has(group)) {
+        named.add(fact.get(), section.at("pattern"));
+        Form form = form(fact.get(), Optional.empty());
+        groups.put(fact.get(), new Places.Group(group, form));
+      }
+    }
     for (Fact fact : MappingKeys.inText()) {
       if (section.has(fact.word())) {
         named.add(fact, section.at(fact.word()));
@@ -195,16 +210,24 @@ final class PlacesSection {
     return name.map(group -> new Places.Group(group, form));
   }
 
+  /** The names of a pattern's groups. */
+  static Set<String> groupNames(Optional<Pattern> pattern) {
+    Set<String> known = new TreeSet<>();
+    if (pattern.isPresent()) {
+      Matcher names = GROUP_NAME.matcher(pattern.get().pattern());
+      while (names.find()) {
+        known.add(names.group(1));
+      }
+    }
+    return known;
+  }
+
   private static void checkGroup(
       Section section, String key, String group, Optional<Pattern> pattern) {
     if (pattern.isEmpty()) {
       return;
     }
-    Set<String> known = new TreeSet<>();
-    Matcher names = GROUP_NAME.matcher(pattern.get().pattern());
-    while (names.find()) {
-      known.add(names.group(1));
-    }
+    Set<String> known = groupNames(pattern);
     if (!known.contains(group)) {
       section
           .faults()

@@ -30,14 +30,15 @@ final class Requirements {
   /** A fact must stand somewhere. */
   void require(Fact fact, String why) {
     boolean explained =
-        List.of("[columns]", "[fixed]", "[label]", "[file]").stream()
+        List.of("[columns]", "[fixed]", "[label]", "[layout]", "[block]", "[sheet]", "[file]")
+            .stream()
             .anyMatch(section -> faults.isExplained(section, fact.word()));
     if (!named.has(fact) && !explained) {
       faults.add(
           root.at("columns"),
           "no "
               + fact.word()
-              + " in [columns], [label], [file]"
+              + " in [columns], [layout], [label], [block], [sheet], [file]"
               + (MappingKeys.fixable().contains(fact) ? " or [fixed]" : ""),
           fact.expectation() + "; " + why);
     }

@@ -3,6 +3,7 @@ package org.spikewright.config;
 import java.nio.file.Path;
 import java.time.Duration;
 import java.time.LocalTime;
+import org.spikewright.analysis.ControlBook;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.reading.LabCalendar;
 import org.spikewright.reading.Shelf;
@@ -24,10 +25,10 @@ import org.spikewright.reading.Shelf;
  * @param waitForFlasks how long a series short of its flasks is waited for
  * @param criteria the limits of judgement
  * @param shelf the stocks and the glassware that mappings may name
- * @param sha256 in hexadecimal, of the file's bytes; with tables of stocks or glassware, of {@code
- *     text}
- * @param text the file's text; with tables of stocks or glassware the texts of all, one after the
- *     other, which {@link #read} takes apart again
+ * @param controls what the laboratory knows of its controls
+ * @param sha256 in hexadecimal, of the file's bytes; with tables beside it, of {@code text}
+ * @param text the file's text; with tables beside it the texts of all, one after the other, which
+ *     {@link #read} takes apart again
  */
 public record Settings(
     Path watch,
@@ -44,6 +45,7 @@ public record Settings(
     Duration waitForFlasks,
     CriteriaBook criteria,
     Shelf shelf,
+    ControlBook controls,
     String sha256,
     String text) {
 

@@ -9,9 +9,11 @@ import java.time.LocalTime;
 import java.time.ZoneId;
 import java.time.ZoneOffset;
 import java.util.ArrayList;
+import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import org.spikewright.analysis.ControlBook;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.judgement.RepeatCaps;
 import org.spikewright.reading.LabCalendar;
@@ -27,7 +29,15 @@ final class SettingsFile {
       Map.of(
           "", List.of("folders", "laboratory", "schedule", "series", "criteria", "repeat"),
           "folders",
-              List.of("watch", "mappings", "summaries", "ledger", "leave", "stocks", "glassware"),
+              List.of(
+                  "watch",
+                  "mappings",
+                  "summaries",
+                  "ledger",
+                  "leave",
+                  "stocks",
+                  "glassware",
+                  "controls"),
           "laboratory", List.of("name", "zone", "day_begins"),
           "schedule", List.of("nightly", "look_every", "settle"),
           "series", List.of("longest_pause", "wait_for_flasks"),
@@ -53,18 +63,19 @@ final class SettingsFile {
       return new Loaded.Faulty<>(file, faults.inOrder());
     }
     SettingsFile reader = of(file, text.get(), faults);
-    ShelfReader shelf = new ShelfReader();
-    Optional<TomlText> stocks = reader.table(ShelfReader.STOCKS, shelf);
-    Optional<TomlText> glassware = reader.table(ShelfReader.GLASSWARE, shelf);
-    return reader.loaded(new SettingsText(text.get(), stocks, glassware), shelf);
+    TablesReader tables = new TablesReader();
+    Map<String, TomlText> texts = new HashMap<>();
+    for (String name : SettingsText.TABLES) {
+      reader.table(name, tables).ifPresent(table -> texts.put(name, table));
+    }
+    return reader.loaded(new SettingsText(text.get(), texts), tables);
   }
 
   static Loaded<Settings> read(Path file, String text) {
     SettingsText parts = SettingsText.of(text);
     SettingsFile reader = of(file, parts.main(), new Faults(file.toString()));
-    reader.tableFile(ShelfReader.STOCKS);
-    reader.tableFile(ShelfReader.GLASSWARE);
-    return reader.loaded(parts, new ShelfReader());
+    SettingsText.TABLES.forEach(reader::tableFile);
+    return reader.loaded(parts, new TablesReader());
   }
 
   private static SettingsFile of(Path file, TomlText text, Faults faults) {
@@ -73,15 +84,15 @@ final class SettingsFile {
     return new SettingsFile(file, root, faults);
   }
 
-  private Loaded<Settings> loaded(SettingsText text, ShelfReader reader) {
-    Settings settings = settings(text.joined(), reader.read(text));
+  private Loaded<Settings> loaded(SettingsText text, TablesReader reader) {
+    Settings settings = settings(text.joined(), reader.shelf(text), reader.controls(text));
     List<ConfigFault> all = new ArrayList<>(faults.inOrder());
     all.addAll(reader.faults());
     return all.isEmpty() ? new Loaded.Good<>(settings) : new Loaded.Faulty<>(file, all);
   }
 
   /** The table that a key names, which must be there, or the one of its usual name if it is. */
-  private Optional<TomlText> table(String key, ShelfReader reader) {
+  private Optional<TomlText> table(String key, TablesReader reader) {
     Optional<Path> path = tableFile(key);
     if (path.isPresent() && !Files.isRegularFile(path.get())) {
       if (folders.isPresent() && folders.get().has(key)) {
@@ -108,7 +119,7 @@ final class SettingsFile {
   }
 
   /** The settings; where a fault was found, some of its values only stand in. */
-  private Settings settings(TomlText text, Shelf shelf) {
+  private Settings settings(TomlText text, Shelf shelf, ControlBook controls) {
     Path watch = path("watch");
     Path mappings = path("mappings");
     Path summaries = path("summaries");
@@ -140,6 +151,7 @@ final class SettingsFile {
                     .map(RepeatSection::caps)
                     .orElse(RepeatCaps.DEFAULTS)),
         shelf,
+        controls,
         text.sha256(),
         text.text());
   }

@@ -1,53 +1,66 @@
 package org.spikewright.config;
 
+import java.util.Collections;
+import java.util.LinkedHashMap;
+import java.util.List;
+import java.util.Map;
 import java.util.Optional;
 
 /**
- * The texts that make up the settings: the configuration and the tables of stocks and glassware. As
- * one text they are kept with each revision; lines that only stand between them tell them apart.
+ * The texts that make up the settings: the configuration and the tables beside it. As one text they
+ * are kept with each revision; lines that only stand between them tell them apart.
  *
  * @param main the configuration
- * @param stocks the table of stocks, where there is one
- * @param glassware the table of glassware, where there is one
+ * @param tables by name, those that are there
  */
-record SettingsText(TomlText main, Optional<TomlText> stocks, Optional<TomlText> glassware) {
+record SettingsText(TomlText main, Map<String, TomlText> tables) {
+  static final String STOCKS = "stocks";
+  static final String GLASSWARE = "glassware";
+  static final String CONTROLS = "controls";
+
+  /** The tables that may stand beside the configuration, each also the key of its file's name. */
+  static final List<String> TABLES = List.of(STOCKS, GLASSWARE, CONTROLS);
+
   /** No file may have a line that begins like this. */
   static final String MARK = "####:";
 
-  private static final String STOCKS = MARK + " stocks\n";
-  private static final String GLASSWARE = MARK + " glassware\n";
+  /** Takes a copy in order. */
+  SettingsText {
+    tables = Collections.unmodifiableMap(new LinkedHashMap<>(tables));
+  }
 
   /** Takes a text apart that {@link #joined()} made; a text without marks is the configuration. */
   static SettingsText of(String text) {
-    int glassware = lineAt(text, GLASSWARE);
-    int stocks = lineAt(text, STOCKS);
-    int endOfStocks = glassware < 0 ? text.length() : glassware;
-    int endOfMain = stocks < 0 ? endOfStocks : stocks;
-    return new SettingsText(
-        TomlText.of(text.substring(0, endOfMain)),
-        part(text, stocks, STOCKS, endOfStocks),
-        part(text, glassware, GLASSWARE, text.length()));
+    Map<String, TomlText> tables = new LinkedHashMap<>();
+    int end = text.length();
+    for (int i = TABLES.size() - 1; i >= 0; i--) {
+      String mark = mark(TABLES.get(i));
+      int at = text.lastIndexOf("\n" + mark, end - 1);
+      if (at >= 0) {
+        tables.put(TABLES.get(i), TomlText.of(text.substring(at + 1 + mark.length(), end)));
+        end = at + 1;
+      }
+    }
+    return new SettingsText(TomlText.of(text.substring(0, end)), tables);
   }
 
-  private static Optional<TomlText> part(String text, int from, String mark, int to) {
-    return from < 0
-        ? Optional.empty()
-        : Optional.of(TomlText.of(text.substring(from + mark.length(), to)));
+  private static String mark(String table) {
+    return MARK + " " + table + "\n";
   }
 
-  private static int lineAt(String text, String mark) {
-    int at = text.indexOf("\n" + mark);
-    return at < 0 ? -1 : at + 1;
+  Optional<TomlText> table(String name) {
+    return Optional.ofNullable(tables.get(name));
   }
 
   /** The configuration as it is where it stands alone; else all, each after its mark. */
   TomlText joined() {
-    if (stocks.isEmpty() && glassware.isEmpty()) {
+    if (tables.isEmpty()) {
       return main;
     }
     StringBuilder all = new StringBuilder(ended(main.text()));
-    stocks.ifPresent(text -> all.append(STOCKS).append(ended(text.text())));
-    glassware.ifPresent(text -> all.append(GLASSWARE).append(ended(text.text())));
+    for (String name : TABLES) {
+      table(name).ifPresent(text -> all.append(mark(name)).append(ended(text.text())));
+    }
     return TomlText.of(all.toString());
   }
 

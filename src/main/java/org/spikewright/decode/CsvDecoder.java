@@ -5,12 +5,12 @@ import java.nio.file.Path;
 import java.util.Arrays;
 import java.util.Collections;
 import java.util.Optional;
-import org.apache.commons.csv.CSVRecord;
 import org.spikewright.table.Cell;
 import org.spikewright.table.Row;
 import org.spikewright.table.RowSink;
 import org.spikewright.table.Source;
 import org.spikewright.table.TableShape;
+import org.spikewright.table.TextForm;
 
 /** Reads text files: CSV, TSV and their like. */
 final class CsvDecoder {
@@ -22,14 +22,16 @@ final class CsvDecoder {
    */
   static void read(Path path, String shownName, TableShape shape, RowSink sink) throws IOException {
     TextFile file = TextFile.of(path, shape.encoding());
-    char separator =
+    SeparatorSearch.Found found =
         shape.separator().isPresent()
-            ? shape.separator().get()
-            : SeparatorSearch.in(file, shape.quote(), shape.headerWords());
+            ? new SeparatorSearch.Found(shape.separator().get(), "as declared")
+            : SeparatorSearch.in(file, shape.quote(), shape.header());
+    char separator = found.separator();
+    sink.begins(new TextForm(separator, found.how(), file.charset().name(), file.how()));
     Source source = new Source(shownName, Optional.empty());
     try (CsvRecords records = new CsvRecords(file, separator, shape.quote())) {
-      while (records.hasNext()) {
-        Row row = row(source, records.line(), records.next());
+      while (records.next()) {
+        Row row = row(source, records.line(), records.record());
         if (!sink.accept(row)) {
           return;
         }
@@ -37,10 +39,10 @@ final class CsvDecoder {
     }
   }
 
-  private static Row row(Source source, long line, CSVRecord csv) {
-    Cell[] cells = new Cell[csv.size()];
+  private static Row row(Source source, long line, String[] fields) {
+    Cell[] cells = new Cell[fields.length];
     for (int i = 0; i < cells.length; i++) {
-      String text = csv.get(i);
+      String text = fields[i];
       if (text.length() > Limits.FIELD_CHARS) {
         throw tooLong(line, i + 1);
       }

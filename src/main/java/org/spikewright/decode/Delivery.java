@@ -2,22 +2,35 @@ package org.spikewright.decode;
 
 import org.spikewright.table.Row;
 import org.spikewright.table.RowSink;
+import org.spikewright.table.TableShape.EmptyRows;
+import org.spikewright.table.TextForm;
 
 /**
- * Hands rows on, but for rows in which nothing stands. Remembers where it was, and keeps what the
- * sink throws apart from what the file provokes.
+ * Hands rows on, mostly but for rows in which nothing stands. Remembers where it was, and keeps
+ * what the sink throws apart from what the file provokes.
  */
 final class Delivery implements RowSink {
   private final RowSink sink;
+  private final EmptyRows emptyRows;
   private Row last;
 
-  Delivery(RowSink sink) {
+  Delivery(RowSink sink, EmptyRows emptyRows) {
     this.sink = sink;
+    this.emptyRows = emptyRows;
+  }
+
+  @Override
+  public void begins(TextForm form) {
+    try {
+      sink.begins(form);
+    } catch (RuntimeException | StackOverflowError e) {
+      throw new SinkThrew(e);
+    }
   }
 
   @Override
   public boolean accept(Row row) {
-    if (row.isBlank()) {
+    if (emptyRows == EmptyRows.PASSED_OVER && row.isBlank()) {
       return true;
     }
     last = row;

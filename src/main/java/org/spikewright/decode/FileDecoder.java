@@ -22,8 +22,9 @@ public final class FileDecoder {
 
   /**
    * Reads a file and hands its rows on in file order, as they are met; rows in which nothing stands
-   * are passed over, and row numbers still count them. A fault may come after rows were handed on:
-   * they then count for nothing. Memory is bounded whatever the size of the file.
+   * are passed over unless the shape wants them, and row numbers still count them. A fault may come
+   * after rows were handed on: they then count for nothing. Memory is bounded whatever the size of
+   * the file.
    *
    * <p>This is the one place that catches what a file's content can provoke. What the sink throws
    * comes out as it is; so do errors of the virtual machine such as {@link OutOfMemoryError}.
@@ -38,7 +39,7 @@ public final class FileDecoder {
    */
   public static Optional<DecodeFault> read(
       Path file, String shownName, TableShape shape, RowSink sink) {
-    Delivery delivery = new Delivery(sink);
+    Delivery delivery = new Delivery(sink, shape.emptyRows());
     try {
       decode(file, shownName, shape, delivery);
       return Optional.empty();

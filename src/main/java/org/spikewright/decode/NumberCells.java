@@ -20,7 +20,7 @@ final class NumberCells {
 
   /** The cell of a number written in digits; unusable when they are no finite decimal number. */
   Cell ofDigits(String digits, boolean date) {
-    String raw = digits.strip();
+    String raw = plainWhole(digits.strip());
     if (!isPlainDecimal(raw)) {
       return new Cell.Unusable(Shown.plain(raw, 40) + " (not a finite number)");
     }
@@ -32,6 +32,11 @@ final class NumberCells {
       return new Cell.Unusable(Shown.plain(raw, 40) + " (a number too small to be held)");
     }
     return date ? moment(value, raw) : new Cell.Number(value, raw);
+  }
+
+  /** Some programs store 1 as 1.0; a person sees 1, and as a name it is the same. */
+  private static String plainWhole(String raw) {
+    return raw.endsWith(".0") && raw.length() > 2 ? raw.substring(0, raw.length() - 2) : raw;
   }
 
   /** The cell of a binary number; its digits are the fewest that read back as the same number. */

@@ -2,13 +2,13 @@ package org.spikewright.decode;
 
 import java.io.IOException;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.Comparator;
-import java.util.HashSet;
 import java.util.List;
 import java.util.Optional;
-import java.util.Set;
 import java.util.stream.Collectors;
-import org.apache.commons.csv.CSVRecord;
+import org.spikewright.table.HeaderCells;
+import org.spikewright.table.TextForm;
 
 /** Works out a text file's separator: the one under which one row holds all header words. */
 final class SeparatorSearch {
@@ -16,10 +16,21 @@ final class SeparatorSearch {
 
   private static final int FIELDS_SHOWN = 40;
 
-  private final List<String> words;
+  /**
+   * What was worked out.
+   *
+   * @param how by what
+   */
+  record Found(char separator, String how) {}
 
-  private SeparatorSearch(List<String> words) {
-    this.words = words.stream().map(String::strip).distinct().toList();
+  private final HeaderCells header;
+
+  private SeparatorSearch(HeaderCells header) {
+    this.header =
+        new HeaderCells(
+            header.words().stream().map(String::strip).distinct().toList(),
+            header.patterns(),
+            header.rows());
   }
 
   /**
@@ -27,9 +38,9 @@ final class SeparatorSearch {
    *
    * @throws Unreadable when none or more than one fits
    */
-  static char in(TextFile file, char quote, List<String> headerWords) throws IOException {
-    SeparatorSearch search = new SeparatorSearch(headerWords);
-    if (search.words.isEmpty()) {
+  static Found in(TextFile file, char quote, HeaderCells header) throws IOException {
+    SeparatorSearch search = new SeparatorSearch(header);
+    if (search.header.isEmpty()) {
       throw new Unreadable(
           "the file",
           "no separator declared, and no header by which to work it out",
@@ -44,17 +55,22 @@ final class SeparatorSearch {
     }
     List<Trial> fitting = trials.stream().filter(Trial::fits).toList();
     if (fitting.size() == 1) {
-      return fitting.get(0).separator();
+      return new Found(
+          fitting.get(0).separator(), "worked out: line " + fitting.get(0).line() + " is a header");
     }
     throw fitting.isEmpty() ? noneFits(trials) : severalFit(fitting);
   }
 
   private Trial tried(TextFile file, char separator, char quote) throws IOException {
-    Trial best = new Trial(separator, 0, words, List.of(), Optional.empty());
+    List<String> all = header.missing(List.of());
+    Trial best = new Trial(separator, 0, all, List.of(), Optional.empty());
+    List<String> above = List.of();
     try (CsvRecords records = new CsvRecords(file, separator, quote)) {
-      for (int row = 0; row < Limits.HEADER_ROWS && !best.fits() && records.hasNext(); row++) {
-        List<String> fields = fields(records.next());
-        List<String> missing = missingFrom(fields);
+      for (int row = 0; row < Limits.HEADER_ROWS && !best.fits() && records.next(); row++) {
+        List<String> own = fields(records.record());
+        List<String> fields = header.rows() == 1 ? own : HeaderCells.joined(above, own);
+        above = own;
+        List<String> missing = header.missing(fields);
         if (missing.size() < best.missing().size()) {
           best = new Trial(separator, records.line(), missing, fields, Optional.empty());
         }
@@ -65,13 +81,8 @@ final class SeparatorSearch {
     }
   }
 
-  private static List<String> fields(CSVRecord csv) {
-    return csv.stream().map(String::strip).toList();
-  }
-
-  private List<String> missingFrom(List<String> fields) {
-    Set<String> known = new HashSet<>(fields);
-    return words.stream().filter(word -> !known.contains(word)).toList();
+  private static List<String> fields(String[] record) {
+    return Arrays.stream(record).map(String::strip).toList();
   }
 
   private static Unreadable noneFits(List<Trial> trials) {
@@ -96,14 +107,10 @@ final class SeparatorSearch {
         "the file",
         "a header under more than one separator: "
             + fitting.stream()
-                .map(trial -> named(trial.separator()) + " (line " + trial.line() + ")")
+                .map(trial -> TextForm.named(trial.separator()) + " (line " + trial.line() + ")")
                 .collect(Collectors.joining(", ")),
         "one separator that fits",
         "declare the separator in the mapping");
-  }
-
-  private static String named(char separator) {
-    return separator == '\t' ? "TAB" : String.valueOf(separator);
   }
 
   /**
@@ -134,10 +141,10 @@ final class SeparatorSearch {
 
     String account() {
       if (line == 0) {
-        return named(separator) + " (no header found)";
+        return TextForm.named(separator) + " (no header found)";
       }
       String words = missing.stream().map(Shown::quoted).collect(Collectors.joining(", "));
-      return named(separator) + " (line " + line + " lacks " + words + ")";
+      return TextForm.named(separator) + " (line " + line + " lacks " + words + ")";
     }
   }
 }

@@ -12,13 +12,17 @@ import java.util.Optional;
  * A text file and how its bytes become characters.
  *
  * @param path where it is
- * @param charset by its byte-order mark, else as declared, else UTF-8
+ * @param charset by its byte-order mark, else UTF-8 where it is that, else as declared
  * @param markBytes length of the byte-order mark
  * @param how in words, why this encoding was taken
  */
 record TextFile(Path path, Charset charset, int markBytes, String how) {
 
-  /** Looks for a byte-order mark; without one the declared encoding counts, else UTF-8. */
+  /**
+   * Looks for a byte-order mark; without one a file that holds UTF-8 is UTF-8, whatever is
+   * declared; else the declared encoding counts. Where none is declared, UTF-8 is taken, and the
+   * first byte that is none refuses the file.
+   */
   static TextFile of(Path path, Optional<Charset> declared) {
     byte[] head = new byte[3];
     try (InputStream in = Files.newInputStream(path)) {
@@ -36,9 +40,13 @@ record TextFile(Path path, Charset charset, int markBytes, String how) {
     if (head[0] == (byte) 0xFE && head[1] == (byte) 0xFF) {
       return new TextFile(path, StandardCharsets.UTF_16BE, 2, marked);
     }
-    return declared
-        .map(charset -> new TextFile(path, charset, 0, "as declared"))
-        .orElseGet(() -> new TextFile(path, StandardCharsets.UTF_8, 0, "as no other is declared"));
+    if (declared.isEmpty()) {
+      return new TextFile(path, StandardCharsets.UTF_8, 0, "as no other is declared");
+    }
+    boolean utf8 = declared.get().equals(StandardCharsets.UTF_8);
+    return !utf8 && Utf8Check.holdsUtf8(path)
+        ? new TextFile(path, StandardCharsets.UTF_8, 0, "as its bytes are that throughout")
+        : new TextFile(path, declared.get(), 0, "as declared");
   }
 
   /**

@@ -14,6 +14,7 @@ import org.apache.poi.hssf.record.FormatRecord;
 import org.apache.poi.hssf.record.Record;
 import org.apache.poi.hssf.record.SSTRecord;
 import org.spikewright.table.RowSink;
+import org.spikewright.table.SheetRule;
 
 /**
  * Follows the records of an XLS workbook: first those of the whole book, then sheet after sheet.
@@ -22,7 +23,7 @@ import org.spikewright.table.RowSink;
  */
 final class XlsBook {
   private final String shownName;
-  private final List<String> wanted;
+  private final List<SheetRule> wanted;
   private final RowSink sink;
   private final List<BoundSheetRecord> sheets = new ArrayList<>();
   private final XlsCells.Book book = new XlsCells.Book();
@@ -35,7 +36,7 @@ final class XlsBook {
   private List<BoundSheetRecord> inFileOrder = List.of();
   private Optional<XlsCells> current = Optional.empty();
 
-  XlsBook(String shownName, List<String> wanted, RowSink sink) {
+  XlsBook(String shownName, List<SheetRule> wanted, RowSink sink) {
     this.shownName = shownName;
     this.wanted = wanted;
     this.sink = sink;

@@ -11,13 +11,14 @@ import org.apache.poi.hssf.record.RecordFactoryInputStream;
 import org.apache.poi.poifs.filesystem.DirectoryNode;
 import org.apache.poi.poifs.filesystem.POIFSFileSystem;
 import org.spikewright.table.RowSink;
+import org.spikewright.table.SheetRule;
 
 /** Reads XLS workbooks of the editions from 1997 on, record by record. */
 final class XlsDecoder {
   private XlsDecoder() {}
 
   /** Hands the rows on, after the list of sheets is known. */
-  static void read(Path file, String shownName, List<String> wanted, RowSink sink)
+  static void read(Path file, String shownName, List<SheetRule> wanted, RowSink sink)
       throws IOException {
     checkSize(file);
     try (POIFSFileSystem compound = new POIFSFileSystem(file.toFile(), true)) {

@@ -5,13 +5,14 @@ import java.nio.file.Path;
 import java.util.List;
 import javax.xml.stream.XMLStreamException;
 import org.spikewright.table.RowSink;
+import org.spikewright.table.SheetRule;
 
 /** Reads XLSX workbooks, row by row. Macros, formulas' texts and layout are passed over. */
 final class XlsxDecoder {
   private XlsxDecoder() {}
 
   /** Checks every part that is needed, then hands the rows on. */
-  static void read(Path file, String shownName, List<String> wanted, RowSink sink)
+  static void read(Path file, String shownName, List<SheetRule> wanted, RowSink sink)
       throws IOException, XMLStreamException {
     try (ZipParts parts = new ZipParts(file)) {
       XlsxWorkbook workbook = XlsxWorkbook.in(parts);

@@ -12,6 +12,9 @@ final class MeasuringOrder {
   /** Up to so many flasks every order is looked at. */
   private static final int EVERY_ORDER = 7;
 
+  /** A drift that is not steady counts for this much, so that a level is not measured in one go. */
+  private static final double BOWED = 0.1;
+
   private final double[] pull;
   private int[] best;
   private double least = Double.POSITIVE_INFINITY;
@@ -44,6 +47,17 @@ final class MeasuringOrder {
       sum += pull[order[place]] * place;
     }
     return Math.abs(sum) / Math.max(1, order.length - 1);
+  }
+
+  /** The same for a drift that falls to the middle and rises again. */
+  private double bowed(int[] order) {
+    double middle = (order.length - 1) / 2.0;
+    double sum = 0;
+    for (int place = 0; place < order.length; place++) {
+      double off = (place - middle) / Math.max(middle, 1);
+      sum += pull[order[place]] * off * off;
+    }
+    return Math.abs(sum);
   }
 
   private void extend(List<Integer> chosen) {
@@ -85,7 +99,7 @@ final class MeasuringOrder {
 
   /** Whether an order is kept because it is clearly better than all before. */
   private boolean keep(int[] order) {
-    double effect = effect(pull, order);
+    double effect = effect(pull, order) + BOWED * bowed(order);
     if (isMonotone(order) || !(effect < least * (1 - 1e-9) - 1e-12)) {
       return false;
     }

@@ -92,9 +92,9 @@ public final class PlanWords {
     return plan.order().stream().map(String::valueOf).collect(Collectors.joining(", "));
   }
 
-  /** A share with two digits: {@code 4.3 %}. */
+  /** A share with two digits: {@code 4.3 %}; what is too small to matter is said so. */
   public static String percent(double share) {
-    return Numbers.rounded(100 * share, 2) + " %";
+    return share < 1e-4 ? "less than 0.01 %" : Numbers.rounded(100 * share, 2) + " %";
   }
 
   /** A volume in the unit that a bench would use. */

@@ -51,6 +51,10 @@ public sealed interface SeriesFit {
     if (!(line.slope() > 0)) {
       return new Unfitted("the signal does not rise with the additions");
     }
+    if (flasks.stream().mapToDouble(Flask::meanSignal).distinct().count() == 1) {
+      // Only the volume factors make a line of a display that stands still.
+      return new Unfitted("all signals are equal");
+    }
     return NativeEstimate.of(line)
         .map(estimate -> result(series, flasks, line, estimate))
         .filter(SeriesFit::isFinite)

@@ -15,7 +15,7 @@ import org.spikewright.mapping.Tally;
 final class Arrivals {
   private static final String COLUMNS =
       "SELECT number, name, sha256, arrived_at, lab_day, outcome, row_count, readings, rejections,"
-          + " skipped, repeated, reason, archive_name, filed_as,"
+          + " skipped, checks, calibrations, repeated, reason, archive_name, filed_as,"
           + " (SELECT t.sha256 FROM text_version t WHERE t.id = mapping) FROM arrival ";
 
   private final Sql sql;
@@ -59,12 +59,14 @@ final class Arrivals {
       String archiveName) {
     sql.run(
         "UPDATE arrival SET outcome = ?, row_count = ?, readings = ?, rejections = ?, skipped = ?,"
-            + " repeated = ?, reason = ?, archive_name = ?, archive_key = ? WHERE number = ?",
+            + " checks = ?, calibrations = ?, repeated = ?, reason = ?, archive_name = ?, archive_key = ? WHERE number = ?",
         outcome.word(),
         tally.rows(),
         tally.readings(),
         tally.rejections(),
         tally.skipped(),
+        tally.checks(),
+        tally.calibrations(),
         repeated,
         reason,
         archiveName,
@@ -117,15 +119,21 @@ final class Arrivals {
         row.getLong(1),
         Sql.text(row, 2),
         row.getString(3),
-        Optional.ofNullable(row.getString(15)).orElse(""),
+        Optional.ofNullable(row.getString(17)).orElse(""),
         Instant.ofEpochMilli(row.getLong(4)),
         LocalDate.ofEpochDay(row.getLong(5)),
         Arrived.Result.of(row.getString(6)),
-        new Tally(row.getLong(7), row.getLong(8), row.getLong(9), row.getLong(10)),
-        row.getLong(11),
-        Sql.text(row, 12),
-        Sql.text(row, 13),
-        Optional.ofNullable(row.getString(14)).map(StoredText::decode));
+        new Tally(
+            row.getLong(7),
+            row.getLong(8),
+            row.getLong(9),
+            row.getLong(10),
+            row.getLong(11),
+            row.getLong(12)),
+        row.getLong(13),
+        Sql.text(row, 14),
+        Sql.text(row, 15),
+        Optional.ofNullable(row.getString(16)).map(StoredText::decode));
   }
 
   private static Optional<Long> asOptional(OptionalLong number) {

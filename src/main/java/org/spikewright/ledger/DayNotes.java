@@ -1,9 +1,11 @@
 package org.spikewright.ledger;
 
+import java.time.Instant;
 import java.util.Arrays;
 import java.util.HashSet;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
 import java.util.OptionalLong;
 import java.util.Set;
 
@@ -90,6 +92,22 @@ final class DayNotes {
     }
     if (known && row.delimitedBy() != Ids.NONE) {
       delimitedToFollow.add(row.subject(), row.delimitedBy());
+    }
+  }
+
+  /** The lab day of a reading beside the samples: that of its time, else of its arrival. */
+  long dayOf(Optional<Instant> measuredAt) {
+    return measuredAt.map(time -> days.of(time.toEpochMilli())).orElse(arrivalDay);
+  }
+
+  /**
+   * A reading beside the samples tells something about series that no long pause divides from it.
+   */
+  void freshBesideSamples(long day, Optional<Instant> measuredAt) {
+    bring(day);
+    if (measuredAt.isPresent()) {
+      touch(days.of(measuredAt.get().toEpochMilli() - pauseMillis));
+      touch(days.of(measuredAt.get().toEpochMilli() + pauseMillis));
     }
   }
 

@@ -4,6 +4,7 @@ import java.util.List;
 import org.spikewright.mapping.MappedSink;
 import org.spikewright.mapping.Rejection;
 import org.spikewright.mapping.Tally;
+import org.spikewright.reading.BatchReading;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.SampleId;
 import org.spikewright.reading.Subject;
@@ -21,6 +22,8 @@ public final class Delivery implements MappedSink, AutoCloseable {
   private final DayNotes notes;
   private final ReadingWriter readings;
   private final Batched rejections;
+  private final BatchReadings besideSamples;
+  private boolean broughtBesideSamples;
   private long rejected;
   private boolean open = true;
 
@@ -31,6 +34,7 @@ public final class Delivery implements MappedSink, AutoCloseable {
     this.number = number;
     this.notes = notes;
     this.readings = new ReadingWriter(sql, ids, notes, number);
+    this.besideSamples = new BatchReadings(sql);
     this.rejections =
         new Batched(
             sql,
@@ -42,6 +46,16 @@ public final class Delivery implements MappedSink, AutoCloseable {
   public void reading(Reading reading) {
     requireOpen();
     readings.add(reading);
+  }
+
+  @Override
+  public void batchReading(BatchReading reading) {
+    requireOpen();
+    long day = notes.dayOf(reading.measuredAt());
+    if (besideSamples.add(ids, reading, day, number)) {
+      broughtBesideSamples = true;
+      notes.freshBesideSamples(day, reading.measuredAt());
+    }
   }
 
   @Override
@@ -109,6 +123,9 @@ public final class Delivery implements MappedSink, AutoCloseable {
   public Arrived refuse(Tally tally, String reason, String archiveName) {
     if (readings.taken() > 0) {
       throw new IllegalStateException("a delivery with readings cannot be refused and kept");
+    }
+    if (broughtBesideSamples) {
+      besideSamples.forget(number);
     }
     return end(Arrived.Result.REFUSED, tally, reason, archiveName);
   }

@@ -30,7 +30,7 @@ final class FileQueries {
     return sql.list(
         "SELECT a.number, a.name, a.arrived_at, a.size, a.sha256, t.name, t.sha256, a.outcome,"
             + " a.row_count, a.readings, a.rejections, a.skipped, a.repeated, a.reason,"
-            + " a.archive_name, a.filed_as"
+            + " a.archive_name, a.filed_as, a.checks + a.calibrations"
             + " FROM arrival a LEFT JOIN text_version t ON t.id = a.mapping WHERE"
             + OF_DAY
             + "ORDER BY a.number",
@@ -109,6 +109,7 @@ final class FileQueries {
         row.getLong(10),
         row.getLong(11),
         row.getLong(12),
+        row.getLong(17),
         row.getLong(13),
         Sql.text(row, 14),
         filedAs == null ? Sql.text(row, 15) : StoredText.decode(filedAs));

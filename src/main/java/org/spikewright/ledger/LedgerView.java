@@ -5,7 +5,9 @@ import java.time.Instant;
 import java.time.LocalDate;
 import java.util.List;
 import java.util.Optional;
+import org.spikewright.analysis.ControlHistory;
 import org.spikewright.analysis.Recall;
+import org.spikewright.reading.BatchReading;
 import org.spikewright.reading.LabCalendar;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Subject;
@@ -21,6 +23,7 @@ import org.spikewright.summary.ResultRow;
 public sealed class LedgerView implements AutoCloseable permits Ledger {
   private final Sql reads;
   private final LabCalendar calendar;
+  private final long pauseMillis;
   private final Arrivals arrivals;
   private final ReadingQueries readings;
   private final FileQueries files;
@@ -30,6 +33,7 @@ public sealed class LedgerView implements AutoCloseable permits Ledger {
   LedgerView(Sql reads, LabCalendar calendar, Duration longestPause) {
     this.reads = reads;
     this.calendar = calendar;
+    this.pauseMillis = longestPause.toMillis();
     this.arrivals = new Arrivals(reads);
     this.readings = new ReadingQueries(reads, new DayIndex(calendar), longestPause.toMillis());
     this.files = new FileQueries(reads);
@@ -79,6 +83,26 @@ public sealed class LedgerView implements AutoCloseable permits Ledger {
   /** The same of several subjects, in their order; asked together they cost far less. */
   public final List<List<Recorded>> readings(List<Subject> subjects, LocalDate day, long upTo) {
     return readings.readings(subjects, day, upTo);
+  }
+
+  /**
+   * Readings of drift checks and calibration solutions that can speak of a lab day's series: those
+   * of the day and those that no long pause divides from it, and those of its untimed batches.
+   *
+   * @return by subject, time (untimed first), batch and order
+   */
+  public final List<BatchReading> besideSamples(LocalDate day, long upTo) {
+    return new BatchReadings(reads).of(day, new DayIndex(calendar), pauseMillis, upTo);
+  }
+
+  /**
+   * What controls came to on earlier lab days, as the first summary after the close of this day
+   * could know it: later revisions of the day get the same answer.
+   *
+   * @param moment of the revision that asks
+   */
+  public final ControlHistory controlHistory(LocalDate day, Instant moment) {
+    return new ControlPoints(reads).before(day, moment);
   }
 
   /**

@@ -3,8 +3,10 @@ package org.spikewright.ledger;
 import java.sql.PreparedStatement;
 import java.sql.SQLException;
 import java.sql.Types;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import org.spikewright.reading.Signal;
+import org.spikewright.reading.Spread;
 
 /**
  * A reading as numbers, on its way into the ledger.
@@ -26,6 +28,9 @@ record NewRow(
     long origin,
     long line,
     long delimitedBy) {
+
+  /** Parts a mean's text from its spread; the last two of them count, whatever the text holds. */
+  private static final char BEHIND = '\u001f';
 
   static final String INSERT =
       "INSERT INTO reading (subject, read_at, batch, preparation, flask, replicate, nth,"
@@ -69,7 +74,7 @@ record NewRow(
       insert.setNull(8, Types.DOUBLE);
     }
     insert.setInt(9, state(signal));
-    insert.setString(10, StoredText.encode(signal.text()));
+    insert.setString(10, text(signal));
     insert.setLong(11, facts);
     insert.setLong(12, origin);
     insert.setLong(13, line);
@@ -86,7 +91,7 @@ record NewRow(
     return signal instanceof Signal.Value number ? number.standard() : OptionalDouble.empty();
   }
 
-  /** 0 for a number. */
+  /** 0 for a number, 4 for a number that is a mean with a spread. */
   static int state(Signal signal) {
     if (signal instanceof Signal.NoNumber word) {
       return switch (word.state()) {
@@ -95,16 +100,41 @@ record NewRow(
         case MISSING -> 3;
       };
     }
-    return 0;
+    return signal instanceof Signal.Value value && value.spread().isPresent() ? 4 : 0;
+  }
+
+  /** The text as stored; behind that of a mean stand its spread and the number of readings. */
+  static String text(Signal signal) {
+    String text = StoredText.encode(signal.text());
+    return signal instanceof Signal.Value value && value.spread().isPresent()
+        ? text + spread(value.spread().get())
+        : text;
+  }
+
+  /** A spread as it is stored behind the text. */
+  static String spread(Spread spread) {
+    return BEHIND + ExactDouble.text(spread.sd()) + BEHIND + spread.readings();
   }
 
   static Signal signal(int state, double value, String text, OptionalDouble standard) {
     return switch (state) {
-      case 0 -> new Signal.Value(value, text, standard);
+      case 0 -> new Signal.Value(value, text, standard, Optional.empty());
       case 1 -> new Signal.NoNumber(Signal.State.OVER_RANGE, text);
       case 2 -> new Signal.NoNumber(Signal.State.BELOW_RANGE, text);
       case 3 -> new Signal.NoNumber(Signal.State.MISSING, text);
+      case 4 -> mean(value, text);
       default -> throw new IllegalStateException("no signal state " + state);
     };
+  }
+
+  private static Signal mean(double value, String text) {
+    int readings = text.lastIndexOf(BEHIND);
+    int sd = text.lastIndexOf(BEHIND, readings - 1);
+    Spread spread =
+        new Spread(
+            ExactDouble.parse(text.substring(sd + 1, readings)),
+            Integer.parseInt(text.substring(readings + 1)));
+    return new Signal.Value(
+        value, text.substring(0, sd), OptionalDouble.empty(), Optional.of(spread));
   }
 }

@@ -65,7 +65,8 @@ final class ReadingWriter {
       long facts,
       long batch,
       boolean delimits,
-      long arrival) {}
+      long arrival,
+      String text) {}
 
   ReadingWriter(Sql sql, Ids ids, DayNotes notes, long arrival) {
     this.sql = sql;
@@ -160,7 +161,7 @@ final class ReadingWriter {
   private Newest newest(NewRow row) {
     return sql.first(
             "SELECT r.nth, r.signal, r.state, r.facts, o.batch, o.delimits, o.arrival,"
-                + " r.standard"
+                + " r.standard, r.text"
                 + " FROM reading r JOIN origin o ON o.id = r.origin"
                 + " WHERE r.subject = ? AND r.read_at = ? AND r.batch = ? AND r.preparation = ?"
                 + " AND r.flask = ? AND r.replicate = ? ORDER BY r.nth DESC LIMIT 1",
@@ -173,7 +174,8 @@ final class ReadingWriter {
                     found.getLong(4),
                     found.getLong(5),
                     found.getInt(6) != 0,
-                    found.getLong(7)),
+                    found.getLong(7),
+                    found.getString(9)),
             row.subject(),
             row.at(),
             row.batch(),
@@ -197,7 +199,7 @@ final class ReadingWriter {
                 row.subject(),
                 row.at(),
                 row.replicate(),
-                StoredText.encode(row.signal().text()),
+                NewRow.text(row.signal()),
                 row.flask(),
                 row.preparation(),
                 newest.arrival(),
@@ -217,7 +219,14 @@ final class ReadingWriter {
         && newest.state() == NewRow.state(row.signal())
         && newest.standard().equals(NewRow.standard(row.signal()))
         && newest.facts() == row.facts()
+        && sameSpread(newest, row)
         && delimitedBy == row.delimitedBy();
+  }
+
+  private static boolean sameSpread(Newest newest, NewRow row) {
+    return !(row.signal() instanceof Signal.Value mean)
+        || mean.spread().isEmpty()
+        || newest.text().endsWith(NewRow.spread(mean.spread().get()));
   }
 
   /** Mostly that of the reading before. */

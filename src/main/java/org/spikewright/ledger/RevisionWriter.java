@@ -9,6 +9,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalLong;
+import org.spikewright.analysis.ControlPoint;
 import org.spikewright.analysis.NightEvidence;
 import org.spikewright.analysis.PoolKey;
 import org.spikewright.fit.PooledSeries;
@@ -29,6 +30,7 @@ public final class RevisionWriter implements AutoCloseable {
   private final long settings;
   private final Batched places;
   private final List<Shown> shown = new ArrayList<>();
+  private List<ControlPoint> controls = List.of();
   private boolean open = true;
 
   private record Shown(SeriesKey key, long version) {}
@@ -95,6 +97,21 @@ public final class RevisionWriter implements AutoCloseable {
       throw new IllegalStateException("the pools of a day in progress are provisional");
     }
     new PoolStore(sql).store(start.labDay(), start.programVersion(), evidence, toRemember, ids);
+  }
+
+  /**
+   * Takes what the controls of the day came to; it is recorded where the revision is.
+   *
+   * @param points in order; of this lab day
+   */
+  public void controls(List<ControlPoint> points) {
+    requireOpen();
+    for (ControlPoint point : points) {
+      if (!point.labDay().equals(start.labDay())) {
+        throw new IllegalArgumentException("a control of another lab day: " + point);
+      }
+    }
+    controls = List.copyOf(points);
   }
 
   /**
@@ -179,6 +196,7 @@ public final class RevisionWriter implements AutoCloseable {
       places.add(day(), revision(), place + 1, shown.get(place).version());
     }
     places.flush();
+    new ControlPoints(sql).add(ids, start.labDay(), revision(), controls);
   }
 
   private Object[] identity(SeriesKey key) {

@@ -25,8 +25,8 @@ public final class AmountReader {
 
   /** Reads a cell. A cell that the file stores as a number needs a declared unit. */
   public Understood<Measured> read(Fact fact, Cell cell, Optional<Unit> declared) {
-    Optional<Unit> unit =
-        declared.isEmpty() && fact.isInSignalUnits() ? Optional.of(Unit.ONE) : declared;
+    boolean bare = fact.isInSignalUnits() || fact.kind() == Fact.Kind.SPREAD;
+    Optional<Unit> unit = declared.isEmpty() && bare ? Optional.of(Unit.ONE) : declared;
     if (cell instanceof Cell.Number number) {
       return unit.isPresent()
           ? checked(fact, number.raw(), number.value(), unit.get(), OptionalDouble.empty())

@@ -18,6 +18,8 @@ public enum Fact {
   PREPARATION("preparation"),
   RESULT_UNIT("result_unit"),
   SIGNAL("signal", Kind.SIGNAL, Bound.ANY, "", Dimension.NUMBER),
+  SIGNAL_SD("signal_sd", Kind.SPREAD, Bound.NOT_NEGATIVE, "0.002", Dimension.NUMBER),
+  READINGS("readings", Kind.SPREAD, Bound.AT_LEAST_ONE, "3", Dimension.NUMBER),
   INTERNAL_STANDARD("internal_standard", Kind.SIGNAL, Bound.ANY, "", Dimension.NUMBER),
   MEASURED_AT("measured_at", Kind.TIME, Bound.ANY, ""),
   ADDITION_VOLUME("addition_volume", Kind.AMOUNT, Bound.NOT_NEGATIVE, "0.5 mL", Dimension.VOLUME),
@@ -35,6 +37,12 @@ public enum Fact {
   DIGEST_VOLUME("digest_volume", Kind.AMOUNT, Bound.ABOVE_ZERO, "50 mL", Dimension.VOLUME),
   DIGEST_MASS("digest_mass", Kind.AMOUNT, Bound.ABOVE_ZERO, "50 g", Dimension.MASS),
   DRY_MASS("dry_mass", Kind.AMOUNT, Bound.FRACTION, "85 %", Dimension.NUMBER),
+  CALIBRATION_CONCENTRATION(
+      "calibration_concentration",
+      Kind.AMOUNT,
+      Bound.NOT_NEGATIVE,
+      "5 µg/L",
+      Concentration.CONCENTRATIONS),
   BASELINE("baseline", Kind.AMOUNT, Bound.ANY, "0.003", Dimension.NUMBER),
   METHOD_BLANK("method_blank", Kind.AMOUNT, Bound.ANY, "0.1 µg/L", Concentration.CONCENTRATIONS),
   METHOD_BLANK_DILUTION(
@@ -60,6 +68,8 @@ public enum Fact {
     NAME,
     /** The signal: a number or a declared word. */
     SIGNAL,
+    /** How the readings behind a mean signal scatter: a number. */
+    SPREAD,
     /** A date and time. */
     TIME,
     /** A number with its unit. */

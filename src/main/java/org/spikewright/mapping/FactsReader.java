@@ -10,6 +10,7 @@ import java.util.Optional;
 import java.util.function.Predicate;
 import org.spikewright.mapping.Rejection.Reason;
 import org.spikewright.quantity.Measured;
+import org.spikewright.quantity.Quantity;
 import org.spikewright.quantity.Unit;
 import org.spikewright.reading.Accuracies;
 import org.spikewright.reading.FlaskFacts;
@@ -70,7 +71,7 @@ final class FactsReader {
   }
 
   private static boolean isOfFlask(Fact fact) {
-    return fact.kind() == Fact.Kind.AMOUNT
+    return fact.kind() == Fact.Kind.AMOUNT && fact != Fact.CALIBRATION_CONCENTRATION
         || fact.kind() == Fact.Kind.DILUTION
         || fact.kind() == Fact.Kind.TOOL
         || fact == Fact.PREPARATION
@@ -165,6 +166,16 @@ final class FactsReader {
       troubles.add(lookup.missing(fact, fact.expectation() + whose, true));
     }
     return value;
+  }
+
+  /** A quantity of the lookup's row that is none of a flask's facts. */
+  Optional<Quantity> quantity(Fact fact, List<Trouble> troubles) {
+    Optional<Given> given = lookup.find(fact);
+    if (given.isEmpty()) {
+      troubles.add(lookup.missing(fact, fact.expectation(), false));
+      return Optional.empty();
+    }
+    return understood(fact, given.get(), "", troubles).map(Measured::quantity);
   }
 
   /** The named stock that the row, or the mapping for all rows, names. */

@@ -33,7 +33,7 @@ final class FileState {
   }
 
   private Optional<MappedFile.Unmappable> readFileName() {
-    for (Places.FileName rule : mapping.places().fileName()) {
+    for (Places.Named rule : mapping.places().fileName()) {
       Matcher matcher = rule.pattern().matcher(path);
       if (!matcher.matches()) {
         return Optional.of(

@@ -1,12 +1,13 @@
 package org.spikewright.mapping;
 
-import java.text.Normalizer;
 import java.util.ArrayList;
 import java.util.Collection;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import org.spikewright.table.Cell;
+import org.spikewright.table.HeaderCells;
 import org.spikewright.table.Row;
 
 /**
@@ -20,6 +21,19 @@ import org.spikewright.table.Row;
  */
 record Header(
     Row row, Map<String, Integer> columns, List<String> names, List<String> repeated, int width) {
+
+  /** Reads two rows as one header, which stands where the lower one does. */
+  static Header of(Row upper, Row lower) {
+    List<Cell> joined =
+        HeaderCells.joined(shown(upper), shown(lower)).stream()
+            .map(name -> name.isEmpty() ? Cell.BLANK : new Cell.Text(name))
+            .toList();
+    return of(new Row(lower.source(), lower.number(), joined));
+  }
+
+  private static List<String> shown(Row row) {
+    return row.cells().stream().map(Cell::shown).toList();
+  }
 
   /** Reads a row as a header. */
   static Header of(Row row) {
@@ -42,7 +56,7 @@ record Header(
 
   /** Blanks around a name, runs of blanks or line ends in it, and its Unicode form do not count. */
   static String fold(String name) {
-    return Normalizer.normalize(name.strip().replaceAll("\\s+", " "), Normalizer.Form.NFC);
+    return HeaderCells.fold(name);
   }
 
   /** The column with a name, counted from 0. */

@@ -1,10 +1,12 @@
 package org.spikewright.mapping;
 
+import java.util.ArrayList;
 import java.util.Collection;
 import java.util.List;
 import java.util.Optional;
 import java.util.stream.Collectors;
 import org.spikewright.mapping.MappedFile.Unmappable;
+import org.spikewright.table.Cell;
 import org.spikewright.table.Row;
 import org.spikewright.table.Source;
 
@@ -15,16 +17,31 @@ final class HeaderSearch {
 
   private static final int NAMES_SHOWN = 40;
 
+  private final TableRules table;
   private final HeaderRule rule;
   private final Collection<String> needed;
   private final String mapping;
+  private final long mostRows;
   private long looked;
+  private Optional<Row> above = Optional.empty();
   private Optional<Header> best = Optional.empty();
 
+  /** Looks for the first header, below a preamble. */
   HeaderSearch(Mapping mapping) {
-    this.rule = mapping.header();
+    this(mapping, ROWS_LOOKED_AT);
+  }
+
+  private HeaderSearch(Mapping mapping, long mostRows) {
+    this.table = mapping.table();
+    this.rule = table.header();
     this.needed = mapping.neededHeaders();
     this.mapping = mapping.name();
+    this.mostRows = mostRows;
+  }
+
+  /** Looks for a further header, however far below. */
+  static HeaderSearch again(Mapping mapping) {
+    return new HeaderSearch(mapping, Long.MAX_VALUE);
   }
 
   /** What the search came to. */
@@ -44,14 +61,18 @@ final class HeaderSearch {
     if (row.isBlank()) {
       return new Found.NotYet();
     }
-    if (++looked > ROWS_LOOKED_AT) {
+    if (++looked > mostRows) {
       return new Found.Wrong(notFound(row.source()));
     }
-    Header header = Header.of(row);
-    if (isHeader(header, row)) {
+    Optional<Row> upper = table.headerRows() == 1 ? Optional.empty() : above;
+    Header header = upper.map(over -> Header.of(over, row)).orElseGet(() -> Header.of(row));
+    boolean complete = table.headerRows() == 1 || upper.isPresent();
+    if (complete && isHeader(header, upper.orElse(row))) {
       return fitting(header);
     }
-    if (rule instanceof HeaderRule.AtRow at && row.number() > at.number()) {
+    above = Optional.of(row);
+    // With two rows the lower one may stand far below an upper one at the declared place.
+    if (rule instanceof HeaderRule.AtRow at && upper.orElse(row).number() > at.number()) {
       return new Found.Wrong(notFound(row.source()));
     }
     if (best.isEmpty() || lacks(header) < lacks(best.get())) {
@@ -60,23 +81,61 @@ final class HeaderSearch {
     return new Found.NotYet();
   }
 
-  private int lacks(Header header) {
-    return header.missing(needed).size();
+  /** The upper row of a header of two that was found. */
+  Optional<Row> above() {
+    return table.headerRows() == 1 ? Optional.empty() : above;
   }
 
+  /** Whether a row within a table is worth being looked at as another header. */
+  boolean mayBegin(Row row) {
+    if (table.headerRows() > 1 || rule instanceof HeaderRule.AtRow) {
+      return false;
+    }
+    Optional<String> telling =
+        rule instanceof HeaderRule.HoldsCell holds
+            ? Optional.of(holds.words())
+            : needed.stream().findFirst();
+    for (Cell cell : row.cells()) {
+      if (cell instanceof Cell.Text text
+          && (telling.isEmpty() || text.text().strip().equals(telling.get().strip()))) {
+        return true;
+      }
+    }
+    return false;
+  }
+
+  private int lacks(Header header) {
+    return missing(header).size();
+  }
+
+  /** Names that are not there, and the pattern of the signals' columns if none matches it. */
+  private List<String> missing(Header header) {
+    List<String> missing = new ArrayList<>(header.missing(needed));
+    table
+        .layout()
+        .pattern()
+        .filter(pattern -> TableView.matching(pattern, header).isEmpty())
+        .ifPresent(pattern -> missing.add(pattern.pattern()));
+    return missing;
+  }
+
+  /** Whether a row, the upper one of two, is the header. */
   private boolean isHeader(Header header, Row row) {
     if (rule instanceof HeaderRule.HoldsCell cell) {
-      return header.find(cell.words()).isPresent();
+      boolean holds =
+          header.find(cell.words()).isPresent() || Header.of(row).find(cell.words()).isPresent();
+      // Of two rows joined, the upper one may be a line above the header.
+      return holds && (table.headerRows() == 1 || missing(header).isEmpty());
     }
     if (rule instanceof HeaderRule.AtRow at) {
       return row.number() == at.number();
     }
-    return header.missing(needed).isEmpty();
+    return missing(header).isEmpty();
   }
 
   private Found fitting(Header header) {
     String place = header.row().position().within();
-    List<String> missing = header.missing(needed);
+    List<String> missing = missing(header);
     if (!missing.isEmpty()) {
       return new Found.Wrong(
           new Unmappable(place, lacking(header, missing), expected(), advice(header, missing)));
@@ -114,7 +173,7 @@ final class HeaderSearch {
       return new Unmappable(
           sheet, "no rows", expected(), "export again, or take the file away if it is empty");
     }
-    List<String> missing = best.get().missing(needed);
+    List<String> missing = missing(best.get());
     return new Unmappable(
         best.get().row().position().within(),
         lacking(best.get(), missing),

@@ -1,10 +1,17 @@
 package org.spikewright.mapping;
 
+import java.util.List;
+
 /** What came of a whole file. */
 public sealed interface MappedFile {
 
-  /** Its rows were mapped. */
-  record Mapped(Tally tally) implements MappedFile {}
+  /**
+   * Its rows were mapped.
+   *
+   * @param tally what became of them
+   * @param workedOut in words, what the mapping left open and how it was taken
+   */
+  record Mapped(Tally tally, List<String> workedOut) implements MappedFile {}
 
   /**
    * The mapping does not fit the file; nothing of it is to be used.

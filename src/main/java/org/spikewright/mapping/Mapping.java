@@ -3,6 +3,7 @@ package org.spikewright.mapping;
 import java.util.LinkedHashSet;
 import java.util.List;
 import java.util.Set;
+import org.spikewright.quantity.NumberGrammar;
 import org.spikewright.reading.Shelf;
 import org.spikewright.table.TableShape;
 
@@ -15,7 +16,7 @@ import org.spikewright.table.TableShape;
  * @param text the mapping file's text
  * @param files which files it claims
  * @param shape how a file is cut into cells
- * @param header how the header is found
+ * @param table how the table lies in the file
  * @param notation how numbers, units and ratios are written
  * @param places where facts stand
  * @param words signals that are no numbers
@@ -30,7 +31,7 @@ public record Mapping(
     String text,
     List<PathPattern> files,
     TableShape shape,
-    HeaderRule header,
+    TableRules table,
     Notation notation,
     Places places,
     SignalWords words,
@@ -58,11 +59,11 @@ public record Mapping(
 
   /** The headers that a table must have, in the order of the mapping's parts, each once. */
   public Set<String> neededHeaders() {
-    return neededHeaders(places, rows);
+    return neededHeaders(places, rows, table.layout());
   }
 
   /** As {@link #neededHeaders()}, of the parts alone. */
-  public static Set<String> neededHeaders(Places places, RowRules rows) {
+  public static Set<String> neededHeaders(Places places, RowRules rows, LayoutRule layout) {
     Set<String> headers = new LinkedHashSet<>();
     for (Fact fact : Fact.values()) {
       Places.Column column = places.columns().get(fact);
@@ -70,9 +71,47 @@ public record Mapping(
         headers.addAll(column.headers());
       }
     }
+    headers.addAll(layout.headers());
     places.labels().forEach(label -> headers.add(label.header()));
     rows.skips().forEach(skip -> headers.add(skip.header()));
     rows.roles().ifPresent(roles -> headers.add(roles.header()));
     return headers;
+  }
+
+  /** The same with other places. */
+  Mapping with(Places other) {
+    return new Mapping(
+        name,
+        instrument,
+        sha256,
+        text,
+        files,
+        shape,
+        table,
+        notation,
+        other,
+        words,
+        rows,
+        method,
+        shelf);
+  }
+
+  /** The same with another grammar of numbers. */
+  Mapping with(NumberGrammar numbers) {
+    Notation other = notation.with(numbers);
+    return new Mapping(
+        name,
+        instrument,
+        sha256,
+        text,
+        files,
+        shape,
+        table,
+        other,
+        places,
+        words,
+        rows,
+        method,
+        shelf);
   }
 }

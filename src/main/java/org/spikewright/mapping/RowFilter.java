@@ -16,7 +16,7 @@ final class RowFilter {
     /** To be mapped. */
     record Measured(Role role) implements Kind {}
 
-    /** Left out by the mapping's own words, or of a role that holds no additions. */
+    /** Left out by the mapping's own words. */
     record LeftOut() implements Kind {}
 
     /** Not to be told. */
@@ -102,8 +102,7 @@ final class RowFilter {
               Said.quoted(text),
               "one of " + words(roles)));
     }
-    boolean holdsAdditions = role.get() != Role.CALIBRATION && role.get() != Role.DRIFT_CHECK;
-    return holdsAdditions ? MEASURED.get(role.get()) : LEFT_OUT;
+    return MEASURED.get(role.get());
   }
 
   private static String words(RowRules.Roles roles) {

@@ -29,16 +29,18 @@ final class RowLookup {
 
   private record InLabel(int label, String group, Form form, String words) implements Place {}
 
-  private record InFileName(Given given, String words) implements Place {}
+  /** Outside of the row: the same for every row of this table. */
+  private record Around(Optional<Given> given, String words) implements Place {}
 
   private final Map<Fact, List<Place>> places = new EnumMap<>(Fact.class);
   private final List<Places.Label> labels;
   private final int[] labelColumns;
   private final List<Optional<Matcher>> matches = new ArrayList<>();
   private Row row;
+  private boolean besideSamples;
 
   /** Binds the mapping's places to the columns of a header that has them all. */
-  RowLookup(Places rules, Header header, Map<Fact, String> fromFileName) {
+  RowLookup(Places rules, Header header, Map<Fact, List<Outside>> around) {
     labels = rules.labels();
     labelColumns =
         labels.stream().mapToInt(label -> header.find(label.header()).orElseThrow()).toArray();
@@ -55,22 +57,11 @@ final class RowLookup {
               new InLabel(i, group.name(), group.form(), "label '" + labels.get(i).header() + "'"));
         }
       }
-      if (fromFileName.containsKey(fact)) {
-        Form form = fileForm(rules, fact);
-        Cell cell = new Cell.Text(fromFileName.get(fact));
-        Given given = new Given(List.of(cell), form, -1, found.size(), fact.word());
-        found.add(new InFileName(given, "the file's name"));
+      for (Outside outside : around.getOrDefault(fact, List.of())) {
+        found.add(new Around(outside.given(fact, found.size()), outside.words()));
       }
       places.put(fact, List.copyOf(found));
     }
-  }
-
-  private static Form fileForm(Places rules, Fact fact) {
-    return rules.fileName().stream()
-        .filter(name -> name.groups().containsKey(fact))
-        .findFirst()
-        .map(name -> name.groups().get(fact).form())
-        .orElse(Form.PLAIN);
   }
 
   private static Place inColumn(Places.Column column, Header header) {
@@ -79,9 +70,19 @@ final class RowLookup {
     return new InColumn(indexes, column.form(), String.join("' and '", column.headers()));
   }
 
+  /**
+   * Takes a row of a drift check or a calibration solution: a label that does not match the pattern
+   * of samples' labels is a name as it stands.
+   */
+  void beginBesideSamples(Row next) {
+    begin(next);
+    besideSamples = true;
+  }
+
   /** Takes the next row and matches its labels; returns what is wrong with them. */
   List<Trouble> begin(Row next) {
     row = next;
+    besideSamples = false;
     matches.clear();
     List<Trouble> troubles = List.of();
     for (int i = 0; i < labels.size(); i++) {
@@ -115,6 +116,17 @@ final class RowLookup {
         return given;
       }
     }
+    return besideSamples && fact == Fact.SAMPLE ? wholeLabel() : Optional.empty();
+  }
+
+  private Optional<Given> wholeLabel() {
+    for (int i = 0; i < labels.size(); i++) {
+      Cell cell = row.cell(labelColumns[i]);
+      if (matches.get(i).isEmpty() && !cell.isBlank()) {
+        return Optional.of(
+            new Given(List.of(cell), Form.PLAIN, labelColumns[i], 0, labels.get(i).header()));
+      }
+    }
     return Optional.empty();
   }
 
@@ -122,8 +134,8 @@ final class RowLookup {
     if (place instanceof InColumn column) {
       return inColumn(column, ordinal);
     }
-    if (place instanceof InFileName file) {
-      return Optional.of(file.given());
+    if (place instanceof Around around) {
+      return around.given();
     }
     InLabel label = (InLabel) place;
     return matches

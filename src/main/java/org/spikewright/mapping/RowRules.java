@@ -7,7 +7,8 @@ import org.spikewright.reading.Role;
 
 /**
  * Which rows are left out, and what the others were measured for. Rows of calibration solutions and
- * drift checks hold no addition series: they count as declared skips.
+ * drift checks hold no addition series; they are read beside it. Where no concentration of the
+ * calibration solutions is mapped, their rows count as declared skips.
  *
  * @param skips rows to leave out
  * @param roles the column that names roles, if there is one

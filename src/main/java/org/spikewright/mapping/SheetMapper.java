@@ -10,14 +10,19 @@ import java.util.Optional;
 import java.util.Set;
 import java.util.stream.Stream;
 import org.spikewright.mapping.FactsReader.Facts;
+import org.spikewright.quantity.Quantity;
 import org.spikewright.reading.Addition;
 import org.spikewright.reading.Batch;
+import org.spikewright.reading.BatchReading;
+import org.spikewright.reading.CalibrationPoint;
+import org.spikewright.reading.CheckReading;
 import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Role;
 import org.spikewright.reading.SampleId;
 import org.spikewright.reading.Signal;
 import org.spikewright.reading.Subject;
+import org.spikewright.table.Position;
 import org.spikewright.table.Row;
 
 /** Maps the data rows of one table, below its header. */
@@ -26,6 +31,9 @@ final class SheetMapper {
   sealed interface Fate {
     /** It is a reading. */
     record Read(Reading reading) implements Fate {}
+
+    /** It is a reading of a drift check or a calibration solution. */
+    record OfBatch(BatchReading reading) implements Fate {}
 
     /** It could not be used. */
     record Refused(Rejection rejection) implements Fate {}
@@ -43,20 +51,22 @@ final class SheetMapper {
   private final NameReader names;
   private final FactsReader facts;
   private final SignalReader signals;
+  private final SpreadReader spreads;
   private final RowFilter filter;
   private final Set<Fact> namedFacts;
   private final boolean batchInRow;
   private final Map<FlaskFacts, Map<Addition, FlaskFacts>> summed = new HashMap<>();
   private Subjects subjects = new Subjects("");
 
-  SheetMapper(Mapping mapping, Header header, FileState file) {
+  SheetMapper(Mapping mapping, Header header, FileState file, Map<Fact, List<Outside>> around) {
     this.mapping = mapping;
     this.header = header;
     this.file = file;
-    this.lookup = new RowLookup(mapping.places(), header, file.fromFileName());
+    this.lookup = new RowLookup(mapping.places(), header, around);
     this.names = new NameReader(mapping.places(), lookup);
     this.facts = new FactsReader(mapping, lookup, names);
     this.signals = new SignalReader(mapping, lookup);
+    this.spreads = new SpreadReader(mapping, lookup);
     this.filter = new RowFilter(mapping.rows(), header);
     this.namedFacts = EnumSet.noneOf(Fact.class);
     Stream.of(Fact.values()).filter(mapping.places()::isNamed).forEach(namedFacts::add);
@@ -72,7 +82,40 @@ final class SheetMapper {
     if (kind instanceof RowFilter.Kind.Unclear unclear) {
       return refused(row, List.of(unclear.trouble()));
     }
-    return map(row, ((RowFilter.Kind.Measured) kind).role());
+    Role role = ((RowFilter.Kind.Measured) kind).role();
+    return switch (role) {
+      case SAMPLE, BLANK, CONTROL -> map(row, role);
+      case DRIFT_CHECK -> besideSamples(row, Optional.empty());
+      case CALIBRATION ->
+          namedFacts.contains(Fact.CALIBRATION_CONCENTRATION)
+              ? besideSamples(row, Optional.of(Fact.CALIBRATION_CONCENTRATION))
+              : SKIPPED;
+    };
+  }
+
+  /** A row of a drift check, or of a calibration solution whose concentration is a fact. */
+  private Fate besideSamples(Row row, Optional<Fact> concentration) {
+    lookup.beginBesideSamples(row);
+    List<Trouble> troubles = new ArrayList<>(2);
+    Optional<Subject> subject = subject(troubles);
+    Optional<Batch> batch = batch(troubles);
+    Optional<Quantity> known = concentration.flatMap(fact -> facts.quantity(fact, troubles));
+    Optional<Instant> time = time(troubles);
+    Optional<Signal> signal = signals.read(Optional.empty(), troubles);
+    if (!troubles.isEmpty()) {
+      return new Fate.Refused(Trouble.rejection(row, troubles));
+    }
+    String when = time.map(Instant::toString).orElse("");
+    String what = concentration.map(Fact::word).orElse("");
+    FileState.Counted same =
+        new FileState.Counted(subject.get(), batch.get().name(), what + "\n", when);
+    Position position = row.at(signalColumn(row));
+    int ordinal = file.count(same);
+    return new Fate.OfBatch(
+        known.isPresent()
+            ? new CalibrationPoint(
+                subject.get(), batch.get(), time, ordinal, signal.get(), position, known.get())
+            : new CheckReading(subject.get(), batch.get(), time, ordinal, signal.get(), position));
   }
 
   private Fate map(Row row, Role role) {
@@ -88,7 +131,10 @@ final class SheetMapper {
     Optional<Facts.Known> known = subject.flatMap(whose -> facts(whose.analyte(), role, troubles));
     boolean placed = troubles.isEmpty();
     Optional<Instant> time = time(troubles);
-    Optional<Signal> signal = signals.read(known.map(Facts.Known::facts), troubles);
+    Optional<Signal> signal =
+        signals
+            .read(known.map(Facts.Known::facts), troubles)
+            .flatMap(read -> spreads.with(read, troubles));
     if (!placed) {
       return refused(row, troubles);
     }

@@ -57,7 +57,8 @@ final class SignalReader {
       return Optional.empty();
     }
     return Optional.of(
-        new Signal.Value(analyte.value(), analyte.text(), OptionalDouble.of(divisor.value())));
+        new Signal.Value(
+            analyte.value(), analyte.text(), OptionalDouble.of(divisor.value()), analyte.spread()));
   }
 
   private Trouble useless(Signal.Value divisor, double baseline) {

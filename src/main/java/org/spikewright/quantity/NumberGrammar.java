@@ -5,9 +5,9 @@ import java.util.OptionalDouble;
 
 /**
  * The strict grammar of a number: an optional sign, ASCII digits with at most one decimal mark,
- * optionally grouped in threes by the thousands mark, an optional decimal exponent. Nothing else is
- * a number: no {@code NaN}, {@code 1d}, {@code 0x1p3}, no digits of other scripts, no value that
- * overflows.
+ * optionally grouped in threes by the thousands mark (then it does not begin with 0), an optional
+ * decimal exponent. Nothing else is a number: no {@code NaN}, {@code 1d}, {@code 0x1p3}, no digits
+ * of other scripts, no value that overflows.
  *
  * @param decimalMark {@code '.'} or {@code ','}
  * @param thousandsMark the grouping mark, if the source uses one; never the decimal mark
@@ -118,7 +118,8 @@ public record NumberGrammar(char decimalMark, Optional<Character> thousandsMark)
     if (thousandsMark.isEmpty() || i >= text.length() || text.charAt(i) != thousandsMark.get()) {
       return i;
     }
-    if (i == from || i - from > 3) {
+    // Nobody groups 0.123; where the mark is a point elsewhere, this would be off by 1000.
+    if (i == from || i - from > 3 || text.charAt(from) == '0') {
       return -1;
     }
     while (i < text.length() && text.charAt(i) == thousandsMark.get()) {

@@ -1,5 +1,6 @@
 package org.spikewright.reading;
 
+import java.util.Optional;
 import java.util.OptionalDouble;
 
 /** What the instrument said. */
@@ -14,11 +15,21 @@ public sealed interface Signal {
    * @param text as it stood in the cell
    * @param standard the internal standard's signal of the same reading, above its baseline; empty
    *     where there is none
+   * @param spread of the readings whose mean the value is; empty for a single reading, and beside
+   *     an internal standard: how a ratio scatters does not follow from how its signals do
    */
-  record Value(double value, String text, OptionalDouble standard) implements Signal {
-    /** A number without an internal standard. */
+  record Value(double value, String text, OptionalDouble standard, Optional<Spread> spread)
+      implements Signal {
+    /** Holds one of the two at most. */
+    public Value {
+      if (standard.isPresent() && spread.isPresent()) {
+        throw new IllegalArgumentException("a spread beside an internal standard");
+      }
+    }
+
+    /** A single reading without an internal standard. */
     public Value(double value, String text) {
-      this(value, text, OptionalDouble.empty());
+      this(value, text, OptionalDouble.empty(), Optional.empty());
     }
   }
 

@@ -2,6 +2,7 @@ package org.spikewright.series;
 
 import java.math.BigDecimal;
 import java.math.MathContext;
+import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
 import java.util.OptionalDouble;
@@ -10,6 +11,7 @@ import org.spikewright.reading.FlaskFacts;
 import org.spikewright.reading.InternalStandard;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
+import org.spikewright.reading.Spread;
 
 /**
  * One flask of a series (in one vessel: its state after an addition), as the line sees it.
@@ -24,7 +26,7 @@ import org.spikewright.reading.Signal;
  *     internal standard where there is one, before the volume factor; NaN when no reading is a
  *     number
  * @param replicateSd standard deviation of those readings; NaN with fewer than two
- * @param numbers how many readings are numbers
+ * @param numbers how many readings are numbers, those behind a mean counted each
  */
 public record Flask(
     String label,
@@ -40,16 +42,36 @@ public record Flask(
   /** Beyond these, units that were converted may leave their trace. */
   private static final MathContext LEVEL_DIGITS = new MathContext(9);
 
+  /** A reading by itself does not scatter. */
+  private static final Spread SINGLE = new Spread(0, 1);
+
   /** A flask with the mean of its readings. */
   static Flask of(FlaskDraft draft, double x, double volumeFactor) {
     double[] signals = new double[draft.readings().size()];
+    List<Spread> spreads = new ArrayList<>();
     int numbers = 0;
+    boolean means = false;
     for (Recorded recorded : draft.readings()) {
       if (recorded.reading().signal() instanceof Signal.Value signal) {
         signals[numbers++] = beforeTheLine(signal, draft.facts());
+        spreads.add(signal.spread().orElse(SINGLE));
+        means |= signal.spread().isPresent();
       }
     }
     signals = Arrays.copyOf(signals, numbers);
+    if (means) {
+      Together together = Together.of(signals, spreads);
+      return new Flask(
+          draft.label(),
+          draft.facts(),
+          x,
+          volumeFactor,
+          draft.readings(),
+          draft.secondRun(),
+          together.mean(),
+          together.sd(),
+          together.readings());
+    }
     double mean = mean(signals);
     return new Flask(
         draft.label(),
@@ -61,6 +83,27 @@ public record Flask(
         mean,
         standardDeviation(signals, mean),
         numbers);
+  }
+
+  /** The readings behind means of several: what all of them together would have given. */
+  private record Together(double mean, double sd, int readings) {
+    static Together of(double[] means, List<Spread> spreads) {
+      int readings = 0;
+      double sum = 0;
+      for (int i = 0; i < means.length; i++) {
+        readings += spreads.get(i).readings();
+        sum += spreads.get(i).readings() * means[i];
+      }
+      double mean = means.length == 1 ? means[0] : sum / readings;
+      double squares = 0;
+      for (int i = 0; i < means.length; i++) {
+        Spread own = spreads.get(i);
+        squares += (own.readings() - 1) * own.sd() * own.sd();
+        squares += own.readings() * (means[i] - mean) * (means[i] - mean);
+      }
+      double sd = means.length == 1 ? spreads.get(0).sd() : Math.sqrt(squares / (readings - 1));
+      return new Together(mean, sd, readings);
+    }
   }
 
   /** The baseline first, then the internal standard, whose own baseline comes off it. */

@@ -8,8 +8,11 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.TreeMap;
 import java.util.stream.Collectors;
+import org.spikewright.analysis.PoolKey;
 import org.spikewright.judgement.FlagKind;
 import org.spikewright.judgement.Verdict;
+import org.spikewright.reading.Design;
+import org.spikewright.reading.Subject;
 import org.spikewright.series.SeriesKey;
 
 /**
@@ -20,6 +23,8 @@ import org.spikewright.series.SeriesKey;
  * @param analytes by analyte, then by verdict
  * @param flags series by flag, only those that occur
  * @param tested series with a statistical flag
+ * @param pooled series whose reported interval rests on a pool
+ * @param oddSlopes series with an odd slope, by pool
  * @param first the results that need a person first, at most {@link #FIRST}
  * @param plotted the first series that has a line and stands on the Series sheet
  */
@@ -29,6 +34,8 @@ record Counts(
     Map<String, Map<Verdict, Integer>> analytes,
     Map<FlagKind, Integer> flags,
     int tested,
+    int pooled,
+    Map<PoolKey, Integer> oddSlopes,
     List<ResultRow> first,
     Optional<SeriesKey> plotted) {
 
@@ -44,6 +51,8 @@ record Counts(
     Map<String, Map<Verdict, Integer>> analytes = new TreeMap<>();
     Map<FlagKind, Integer> flags = new EnumMap<>(FlagKind.class);
     int tested = 0;
+    int pooled = 0;
+    Map<PoolKey, Integer> oddSlopes = new TreeMap<>();
     List<ResultRow> first = new ArrayList<>();
     SeriesKey plotted = null;
     for (ResultRow row : night.results()) {
@@ -52,6 +61,10 @@ record Counts(
       add(instruments, row.key().subject().instrument(), verdict);
       add(analytes, row.key().subject().analyte(), verdict);
       tested += count(row, flags) ? 1 : 0;
+      pooled += row.intervalBasis().equals("pool") ? 1 : 0;
+      if (row.flags().contains(FlagKind.ODD_SLOPE.shortName())) {
+        pool(row).ifPresent(pool -> oddSlopes.merge(pool, 1, Integer::sum));
+      }
       if (first.size() < FIRST && (verdict == Verdict.REPEAT || verdict == Verdict.REVIEW)) {
         first.add(row);
       }
@@ -60,7 +73,24 @@ record Counts(
       }
     }
     return new Counts(
-        verdicts, instruments, analytes, flags, tested, first, Optional.ofNullable(plotted));
+        verdicts,
+        instruments,
+        analytes,
+        flags,
+        tested,
+        pooled,
+        oddSlopes,
+        first,
+        Optional.ofNullable(plotted));
+  }
+
+  private static Optional<PoolKey> pool(ResultRow row) {
+    Subject subject = row.key().subject();
+    return Arrays.stream(Design.values())
+        .filter(design -> design.word().equals(row.design()))
+        .findFirst()
+        .map(
+            design -> new PoolKey(subject.instrument(), subject.analyte(), subject.line(), design));
   }
 
   /** Counts a row's flags, each kind once; whether a statistical one is among them. */

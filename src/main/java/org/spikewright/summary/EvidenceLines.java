@@ -6,7 +6,9 @@ import java.util.Locale;
 import java.util.OptionalDouble;
 import java.util.stream.Collectors;
 import org.spikewright.fit.Budget;
+import org.spikewright.fit.KnownAdditions;
 import org.spikewright.judgement.Borrowed;
+import org.spikewright.judgement.ElectrodeResult;
 import org.spikewright.judgement.SeriesResult;
 import org.spikewright.quantity.Numbers;
 
@@ -20,6 +22,34 @@ final class EvidenceLines {
     this.result = result;
     this.evidence = RowEvidence.of(result);
     this.unit = " " + result.series().toResult().unit().symbol();
+  }
+
+  /** Of an electrode, for whose curve worksheets have no function. */
+  static List<String> of(ElectrodeResult result) {
+    KnownAdditions.Fitted fit = result.fit();
+    String unit = " " + result.series().toResult().unit().symbol();
+    StringBuilder curve = new StringBuilder("Curve of the electrode: slope ");
+    curve.append(Numbers.rounded(fit.slope(), 4).replace('-', '−')).append(" mV per decade");
+    if (fit.slopeToTheory().isPresent()) {
+      double share = 100 * fit.slopeToTheory().getAsDouble();
+      curve.append(String.format(Locale.ROOT, ", %.1f %% of theory", share));
+    }
+    curve.append("; ").append(fit.df()).append(" degrees of freedom");
+    if (fit.residualSd().isPresent()) {
+      curve.append("; the potentials lie ").append(n(fit.residualSd().getAsDouble()));
+      curve.append(" mV from it (residual sd)");
+    }
+    StringBuilder spread = new StringBuilder("Result " + n(result.value()) + unit);
+    if (result.standardError().isPresent()) {
+      spread.append("; 95 % interval of the fit ");
+      spread.append(range(result.lower95(), result.upper95())).append(unit);
+    }
+    if (result.expandedUncertainty().isPresent()) {
+      spread.append("; U = ").append(n(result.expandedUncertainty().getAsDouble())).append(unit);
+      spread.append(", of the fit alone");
+    }
+    spread.append(". Worksheets have no function for this curve: nothing here is computed live.");
+    return List.of(curve.append('.').toString(), spread.toString());
   }
 
   static List<String> of(SeriesResult result) {

@@ -17,6 +17,7 @@ import java.time.Instant;
  * @param readings rows that became a reading
  * @param rejections rows not used
  * @param skipped rows that the mapping skips
+ * @param besideSamples rows of drift checks and calibration solutions that were read
  * @param repeated readings that were known already
  * @param reason why it was refused, or what is to be noted; empty when nothing is
  * @param archivedAs where it lies now, relative to the watched folder
@@ -34,6 +35,44 @@ public record FileEntry(
     long readings,
     long rejections,
     long skipped,
+    long besideSamples,
     long repeated,
     String reason,
-    String archivedAs) {}
+    String archivedAs) {
+
+  /** A delivery without drift checks and calibration solutions. */
+  public FileEntry(
+      long arrival,
+      String name,
+      Instant arrivedAt,
+      long size,
+      String sha256,
+      String mapping,
+      String mappingSha256,
+      String outcome,
+      long rows,
+      long readings,
+      long rejections,
+      long skipped,
+      long repeated,
+      String reason,
+      String archivedAs) {
+    this(
+        arrival,
+        name,
+        arrivedAt,
+        size,
+        sha256,
+        mapping,
+        mappingSha256,
+        outcome,
+        rows,
+        readings,
+        rejections,
+        skipped,
+        0,
+        repeated,
+        reason,
+        archivedAs);
+  }
+}

@@ -17,6 +17,7 @@ final class FilesSheet {
           ColumnPlan.number("Readings", 9),
           ColumnPlan.number("Rows not used", 9),
           ColumnPlan.number("Rows skipped", 9),
+          ColumnPlan.number("Checks, calibration", 12),
           ColumnPlan.number("Known already", 9),
           ColumnPlan.text("Mapping", 16),
           ColumnPlan.text("Reason or remark", 60),
@@ -30,7 +31,7 @@ final class FilesSheet {
   static SheetPlan of(Night night) {
     // The hashes are for a search on screen; on paper they would make everything else small.
     SheetPlan.Layout layout =
-        new SheetPlan.Layout(SheetPlan.Kind.ROWS, Optional.of("FilesTable"), 13);
+        new SheetPlan.Layout(SheetPlan.Kind.ROWS, Optional.of("FilesTable"), 14);
     return SheetPlan.table(
         NAME, COLUMNS, Lazily.map(night.files(), file -> cells(file, night)), layout);
   }
@@ -45,6 +46,7 @@ final class FilesSheet {
         CellPlan.count(file.readings()),
         CellPlan.count(file.rejections()),
         CellPlan.count(file.skipped()),
+        CellPlan.count(file.besideSamples()),
         CellPlan.count(file.repeated()),
         CellPlan.text(file.mapping()),
         CellPlan.text(file.reason(), Look.WRAPPED),

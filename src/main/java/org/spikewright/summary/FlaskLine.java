@@ -30,6 +30,7 @@ import org.spikewright.series.Flask;
  * @param signal as fitted, after the volume factor; empty when not used
  * @param fitted the line's signal there; empty when not used
  * @param residual signal minus fitted; empty when not used
+ * @param weight of the flask in its line, their mean being 1; empty where all weigh the same
  * @param deletedT its deleted residual t; empty where that does not exist
  * @param remark why it was not used, or that it is the odd one; may be empty
  */
@@ -40,6 +41,7 @@ record FlaskLine(
     OptionalDouble signal,
     OptionalDouble fitted,
     OptionalDouble residual,
+    OptionalDouble weight,
     OptionalDouble deletedT,
     String remark) {
 
@@ -86,6 +88,9 @@ record FlaskLine(
         OptionalDouble.of(result.line().y()[i]),
         OptionalDouble.of(result.line().at(x)),
         OptionalDouble.of(result.line().residual(i)),
+        result.line().isUnweighted()
+            ? OptionalDouble.empty()
+            : OptionalDouble.of(result.line().weights()[i]),
         deleted.isPresent() ? finite(deleted.get().t()) : OptionalDouble.empty(),
         odd ? ODD : "");
   }
@@ -101,18 +106,19 @@ record FlaskLine(
         finite(fitted),
         finite(flask.y() - fitted),
         OptionalDouble.empty(),
+        OptionalDouble.empty(),
         "");
   }
 
   private static FlaskLine unused(Flask flask, Outcome outcome) {
     OptionalDouble none = OptionalDouble.empty();
-    return new FlaskLine(flask, false, none, none, none, none, none, why(flask, outcome));
+    return new FlaskLine(flask, false, none, none, none, none, none, none, why(flask, outcome));
   }
 
   private static FlaskLine secondRun(Flask flask) {
     OptionalDouble none = OptionalDouble.empty();
     return new FlaskLine(
-        flask, false, none, none, none, none, none, "second run: the first gives the result");
+        flask, false, none, none, none, none, none, none, "second run: the first gives the result");
   }
 
   private static String why(Flask flask, Outcome outcome) {

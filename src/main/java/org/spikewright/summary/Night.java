@@ -4,6 +4,8 @@ import java.time.Instant;
 import java.time.LocalDate;
 import java.time.ZoneId;
 import java.util.List;
+import org.spikewright.analysis.Evidence;
+import org.spikewright.analysis.NightEvidence;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.Verdict;
@@ -25,6 +27,8 @@ import org.spikewright.judgement.Verdict;
  * @param refused by arrival and place
  * @param settings in order; the limits follow from {@code criteria} and need not be among them
  * @param criteria the limits of judgement
+ * @param evidence what the lab day's pools say
+ * @param controls what the night's controls, blanks, checks and series say about each other
  */
 public record Night(
     LocalDate labDay,
@@ -39,7 +43,9 @@ public record Night(
     List<FileEntry> files,
     Iterable<RefusedRow> refused,
     List<Setting> settings,
-    CriteriaBook criteria) {
+    CriteriaBook criteria,
+    NightEvidence evidence,
+    Evidence.Found controls) {
 
   /** Up to so many series, the Series sheet holds every one. */
   static final int EVERY_SERIES = 2000;

@@ -6,7 +6,13 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.stream.IntStream;
+import org.spikewright.analysis.BlankResult;
+import org.spikewright.analysis.CheckResult;
+import org.spikewright.analysis.ControlResult;
+import org.spikewright.analysis.DuplicateResult;
+import org.spikewright.analysis.Evidence;
 import org.spikewright.judgement.Criterion;
+import org.spikewright.judgement.Limit;
 import org.spikewright.judgement.Verdict;
 import org.spikewright.quantity.Numbers;
 import org.spikewright.reading.Subject;
@@ -17,6 +23,9 @@ final class OverviewSheet {
 
   /** How many analytes have a column of their own in the chart. */
   private static final int ANALYTES = 24;
+
+  /** How many findings of the night as a whole it names. */
+  private static final int FINDINGS = 8;
 
   private static final String OTHERS = "all others";
 
@@ -46,11 +55,13 @@ final class OverviewSheet {
     title();
     verdicts();
     alarms();
+    together();
     first();
     flags();
     breakdown("By instrument", counts.instruments());
     Map<String, Map<Verdict, Integer>> analytes = largest(counts.analytes());
     int firstAnalyte = breakdown("By analyte", analytes);
+    controls();
     files();
     cautions();
     SheetPlan sheet =
@@ -99,10 +110,11 @@ final class OverviewSheet {
 
   private void alarms() {
     heading("How far to trust this");
-    double rate = night.criteria().general().of(Criterion.FALSE_ALARMS).value();
-    double expected = rate * night.seriesCount();
+    Limit rate = night.criteria().general().of(Criterion.FALSE_ALARMS);
+    double expected = rate.on() ? rate.value() * night.seriesCount() : 0;
     row(CellPlan.text("false alarms expected"), CellPlan.number(expected, "0.0"));
     row(CellPlan.text("statistical flags raised"), CellPlan.count(counts.tested()));
+    row(CellPlan.text("intervals from a pool"), CellPlan.count(counts.pooled()));
     row(
         CellPlan.text("live checks that differ"),
         new CellPlan.Formula(
@@ -110,10 +122,36 @@ final class OverviewSheet {
             CellPlan.count(index.differing())));
     row(
         CellPlan.text(
-            "Expected: at most "
-                + Numbers.plain(rate)
-                + " a straight series; raised: bent or odd-flask.",
+            rate.on()
+                ? "Expected: at most "
+                    + Numbers.plain(rate.value())
+                    + " a faultless series. Raised: series that are bent, noisy, of odd slope, with"
+                    + " an odd flask or level, or a suspected slip."
+                : "The statistical tests of single series are switched off.",
             Look.FAINT));
+    blank();
+  }
+
+  /** What the night's series show together. */
+  private void together() {
+    heading("The night's series together");
+    if (night.evidence().isProvisional()) {
+      row(CellPlan.text("Pools provisional: the day is in progress.", Look.STRONG));
+    }
+    List<String> findings =
+        NoiseSheet.of(night, index).stream().flatMap(pool -> pool.findings().stream()).toList();
+    findings.stream().limit(FINDINGS).forEach(finding -> row(CellPlan.text(finding)));
+    if (findings.size() > FINDINGS) {
+      int more = findings.size() - FINDINGS;
+      row(CellPlan.text("and " + more + " more: see " + NoiseSheet.NAME, Look.FAINT));
+    }
+    if (findings.isEmpty()) {
+      row(
+          CellPlan.text(
+              night.evidence().pools().isEmpty()
+                  ? "no pools: no series of three flasks or more"
+                  : "no bend, level or drift in common; see " + NoiseSheet.NAME));
+    }
     blank();
   }
 
@@ -210,6 +248,27 @@ final class OverviewSheet {
 
   private static int total(Map<Verdict, Integer> verdicts) {
     return verdicts.values().stream().mapToInt(Integer::intValue).sum();
+  }
+
+  private void controls() {
+    heading("Controls");
+    Evidence.Found found = night.controls();
+    counted("", "in", "out", "not judged");
+    counted("controls", found.controls().stream().map(ControlResult::verdict).toList());
+    counted("duplicates", found.duplicates().stream().map(DuplicateResult::verdict).toList());
+    counted("blanks", found.blanks().stream().map(BlankResult::verdict).toList());
+    counted("drift checks", found.checks().stream().map(CheckResult::verdict).toList());
+    row(CellPlan.text("see Controls", Look.FAINT));
+    blank();
+  }
+
+  private void counted(String name, List<ControlResult.Verdict> verdicts) {
+    List<CellPlan> cells = new ArrayList<>();
+    cells.add(CellPlan.text(name));
+    for (ControlResult.Verdict verdict : ControlResult.Verdict.values()) {
+      cells.add(CellPlan.count(verdicts.stream().filter(verdict::equals).count()));
+    }
+    rows.add(cells);
   }
 
   private void files() {

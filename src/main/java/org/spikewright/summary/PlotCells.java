@@ -2,14 +2,16 @@ package org.spikewright.summary;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalDouble;
 import org.spikewright.judgement.Verdict;
 
 /**
  * The cells of the Plot sheet: the choice (B3), facts of the chosen series (B4 to B6), single
- * numbers (E, F), and one row a flask (H to N): number, x, signal, residual, odd signal, odd
- * residual, replicates' sd. Below the numbers in E, F stand the two ends of the line and of the
- * interval. A formula without a result gives {@code #N/A}, which charts leave out.
+ * numbers (E, F), and one row a flask (H to O): number, x, signal, residual, odd signal, odd
+ * residual, replicates' sd, and where a night has electrodes the signal of their curve. Below the
+ * numbers in E, F stand the two ends of the line and of the interval. A formula without a result
+ * gives {@code #N/A}, which charts leave out.
  */
 final class PlotCells {
   private static final int FIRST = 4;
@@ -123,7 +125,8 @@ final class PlotCells {
           label("residual"),
           label("odd signal"),
           label("odd residual"),
-          label("spread"));
+          label("spread"),
+          label(hasCurves() ? "curve" : ""));
     }
     int i = row - FIRST;
     if (i < 0 || i >= flasks) {
@@ -136,7 +139,25 @@ final class PlotCells {
         ofFlask(row, 'L', 'K', i),
         odd(row, 'J', 'L', i),
         odd(row, 'K', 'M', i),
-        spread(row, i));
+        spread(row, i),
+        hasCurves() ? curve(row, i) : CellPlan.EMPTY);
+  }
+
+  private boolean hasCurves() {
+    return index.curves() > 0;
+  }
+
+  /** What was fitted, where that is no line. */
+  private CellPlan curve(int row, int i) {
+    String cell = cell('K', row);
+    String found = "IF(ISNUMBER(" + cell + ")," + cell + ",NA())";
+    return formula(
+        "IF(AND($H" + row + "<=$F$4,ISNA($F$5))," + found + ",NA())", at(flasks('O'), i));
+  }
+
+  /** The electrode's curve; empty on a night without one. */
+  Optional<ChartPlan.Cells> curve() {
+    return hasCurves() ? Optional.of(flasks('O')) : Optional.empty();
   }
 
   /** A number of a flask, from its row on the Series sheet. */
@@ -187,9 +208,17 @@ final class PlotCells {
     List<Double> cached = new ArrayList<>();
     for (int i = 0; i < flasks; i++) {
       cached.add(
-          i < chosen.flasks().size() ? value(column, chosen.flasks().get(i)) : beyond(column));
+          i < chosen.flasks().size() ? shown(column, chosen.flasks().get(i)) : beyond(column));
     }
     return new ChartPlan.Cells(range(column, FIRST, FIRST + flasks - 1), cached);
+  }
+
+  private double shown(char column, FlaskLine line) {
+    if (column == 'O') {
+      boolean hasLine = chosen.entry().slope().isPresent();
+      return hasLine ? Double.NaN : line.fitted().orElse(Double.NaN);
+    }
+    return value(column, line);
   }
 
   private static double beyond(char column) {

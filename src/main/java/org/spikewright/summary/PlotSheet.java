@@ -35,6 +35,7 @@ final class PlotSheet {
           ColumnPlan.text("", 12),
           ColumnPlan.text("", 12),
           ColumnPlan.text("", 12),
+          ColumnPlan.text("", 12),
           ColumnPlan.text("", 12));
 
   private PlotSheet() {}
@@ -90,7 +91,7 @@ final class PlotSheet {
             cells.lineY()));
     signals.add(
         trace(
-            "95 % interval of the result",
+            "95 % interval, as reported",
             ChartPlan.Stroke.INTERVAL, cells.intervalX(), cells.intervalY()));
     signals.add(
         new ChartPlan.Trace(
@@ -99,6 +100,10 @@ final class PlotSheet {
             x,
             cells.flasks('J'),
             List.of(cells.flasks('N'))));
+    cells
+        .curve()
+        .ifPresent(
+            curve -> signals.add(trace("the electrode's curve", ChartPlan.Stroke.LINE, x, curve)));
     signals.add(trace("odd flask", ChartPlan.Stroke.CROSSES, x, cells.flasks('L')));
     List<ChartPlan.Trace> residuals = new ArrayList<>();
     residuals.add(trace("residual", ChartPlan.Stroke.POINTS, x, cells.flasks('K')));

@@ -32,7 +32,8 @@ import org.spikewright.series.Ungrouped;
  * @param value the result, in {@code unit}
  * @param unit the unit of the result; empty when there is no series
  * @param reported the text to report; empty when nothing can be reported
- * @param standardUncertainty combined; empty where the fit has no uncertainty
+ * @param standardUncertainty combined, of an electrode that of the fit alone; empty where the fit
+ *     has no uncertainty
  * @param expandedUncertainty likewise
  * @param coverageFactor likewise
  * @param lower95 lower end of the reported fit interval, in {@code unit}; empty when unbounded
@@ -105,9 +106,21 @@ public record ResultRow(
             e -> OptionalDouble.of(e.value())),
         origin.unit,
         outcome.reported(),
-        number(budget, made -> OptionalDouble.of(made.standardUncertainty())),
-        number(budget, made -> OptionalDouble.of(made.expandedUncertainty())),
-        number(budget, made -> OptionalDouble.of(made.coverageFactor())),
+        either(
+            budget,
+            made -> OptionalDouble.of(made.standardUncertainty()),
+            electrode,
+            ElectrodeResult::standardError),
+        either(
+            budget,
+            made -> OptionalDouble.of(made.expandedUncertainty()),
+            electrode,
+            ElectrodeResult::expandedUncertainty),
+        either(
+            budget,
+            made -> OptionalDouble.of(made.coverageFactor()),
+            electrode,
+            found -> found.fit().t()),
         either(result, SeriesResult::reportedLower95, electrode, ElectrodeResult::lower95),
         either(result, SeriesResult::reportedUpper95, electrode, ElectrodeResult::upper95),
         either(result, SeriesResult::standardError, electrode, ElectrodeResult::standardError),

@@ -44,7 +44,11 @@ record SeriesBlock(
         remarks,
         flasks,
         outcome.result().map(result -> LiveCells.of(result, flasks, firstFlask)),
-        outcome.result().map(EvidenceLines::of).orElse(List.of()));
+        outcome
+            .result()
+            .map(EvidenceLines::of)
+            .or(() -> outcome.electrode().map(EvidenceLines::of))
+            .orElse(List.of()));
   }
 
   private static List<String> remarks(Outcome outcome) {
@@ -66,7 +70,7 @@ record SeriesBlock(
 
   /** How many rows, with the empty one at the end. */
   int height() {
-    int numbers = live.isPresent() ? LiveCells.HEIGHT : 0;
+    int numbers = live.map(LiveCells::height).orElse(0);
     return 2 + remarks.size() + flasks.size() + numbers + evidence.size();
   }
 
@@ -154,6 +158,7 @@ record SeriesBlock(
         CellPlan.number(line.deletedT(), "0.00"),
         CellPlan.text(line.used() ? "yes" : "no"),
         CellPlan.text(line.remark(), line.used() ? Look.STRONG : Look.PLAIN),
+        CellPlan.number(line.weight(), "0.000"),
         CellPlan.text(String.join("; ", line.files())),
         CellPlan.text(String.join("; ", line.cells())));
   }

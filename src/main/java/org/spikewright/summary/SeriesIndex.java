@@ -23,6 +23,8 @@ import org.spikewright.series.SeriesKey;
  * @param mostFlasks the largest number of flask rows of a series
  * @param differing how many live checks differ from the stored numbers
  * @param forReview how many series for review have something to prepare
+ * @param curves how many series have an electrode's curve instead of a line
+ * @param pools flasks of each pool beside its noise
  * @param plotted the flasks of the series that the Plot sheet shows first
  */
 record SeriesIndex(
@@ -31,6 +33,8 @@ record SeriesIndex(
     int mostFlasks,
     int differing,
     int forReview,
+    int curves,
+    PoolFlasks pools,
     List<FlaskLine> plotted) {
 
   /** No series begins below this row, so that the sheet never continues on a second one. */
@@ -49,8 +53,8 @@ record SeriesIndex(
    * @param slope signal per axis unit
    * @param signalIntercept signal
    * @param concentration where the line meets zero, as a positive number on the axis
-   * @param lower95 on the axis
-   * @param upper95 on the axis
+   * @param lower95 lower end of the reported interval, on the axis
+   * @param upper95 upper end likewise
    * @param topX largest addition, on the axis
    * @param advice what to do, for series to repeat only
    * @param repeat what to prepare; empty for series beyond the {@link #MOST_PLANS} that are planned
@@ -77,11 +81,13 @@ record SeriesIndex(
   static SeriesIndex of(Night night, Optional<SeriesKey> toPlot) {
     Map<SeriesKey, Entry> entries = new HashMap<>();
     List<FlaskLine> plotted = List.of();
+    PoolFlasks pools = new PoolFlasks();
     int row = SeriesSheet.HEAD_ROWS + 1;
     int mostFlasks = 0;
     int differing = 0;
     int plans = 0;
     int forReview = 0;
+    int curves = 0;
     for (Outcome outcome : night.outcomes()) {
       if (!holds(night, outcome.verdict()) || row > LAST_START) {
         continue;
@@ -95,6 +101,8 @@ record SeriesIndex(
           repeat.filter(advice -> !(advice instanceof RepeatAdvice.Nothing)).isPresent();
       plans += planned ? 1 : 0;
       forReview += planned && outcome.verdict() == Verdict.REVIEW ? 1 : 0;
+      outcome.result().ifPresent(pools::add);
+      curves += outcome.electrode().isPresent() ? 1 : 0;
       entries.put(outcome.gathered().key(), entry(outcome, block, repeat));
       mostFlasks = Math.max(mostFlasks, block.flasks().size());
       differing += block.differing();
@@ -103,7 +111,8 @@ record SeriesIndex(
       }
       row += block.height();
     }
-    return new SeriesIndex(entries, row - 1, mostFlasks, differing, forReview, plotted);
+    return new SeriesIndex(
+        entries, row - 1, mostFlasks, differing, forReview, curves, pools, plotted);
   }
 
   private static Entry entry(Outcome outcome, SeriesBlock block, Optional<RepeatAdvice> repeat) {
@@ -118,8 +127,8 @@ record SeriesIndex(
         line.map(found -> FlaskLine.finite(found.slope())).orElse(none),
         line.map(found -> FlaskLine.finite(found.signalIntercept())).orElse(none),
         result.map(found -> FlaskLine.finite(found.estimate().value())).orElse(none),
-        result.map(found -> found.estimate().lower95()).orElse(none),
-        result.map(found -> found.estimate().upper95()).orElse(none),
+        result.map(found -> found.reportedEstimate().lower95()).orElse(none),
+        result.map(found -> found.reportedEstimate().upper95()).orElse(none),
         block.flasks().stream()
             .map(FlaskLine::x)
             .filter(OptionalDouble::isPresent)

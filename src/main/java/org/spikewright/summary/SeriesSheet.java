@@ -14,7 +14,7 @@ final class SeriesSheet {
 
   private static final List<ColumnPlan> COLUMNS =
       List.of(
-          ColumnPlan.text("Flask", 12),
+          ColumnPlan.text("Flask", 14),
           ColumnPlan.number("Addition", 11),
           ColumnPlan.text("Unit", 15),
           ColumnPlan.number("x, referred to the aliquot", 12),
@@ -29,6 +29,7 @@ final class SeriesSheet {
           ColumnPlan.number("Deleted residual t", 11),
           ColumnPlan.text("Used", 13),
           ColumnPlan.text("Remark", 32),
+          ColumnPlan.number("Weight", 10),
           ColumnPlan.text("Source file", 26),
           ColumnPlan.text("Source cells", 44));
 

@@ -30,9 +30,12 @@ public record SummaryPlan(String title, String creator, Instant moment, List<She
             RepeatSheet.of(night, counts, index),
             SeriesSheet.of(night, index),
             PlotSheet.of(night, counts, index),
+            NoiseSheet.of(night, counts, index),
+            ControlsSheet.of(night),
             FilesSheet.of(night),
             RefusedSheet.of(night),
             SettingsSheet.of(night),
-            PlotData.of(night, index)));
+            PlotData.of(night, index),
+            NoiseData.of(night, index)));
   }
 }

@@ -51,7 +51,6 @@ final class Words {
       case ADDITIONS_TOO_SMALL -> "the additions are small beside what is there";
       case ADDITIONS_TOO_LARGE -> "the additions are large beside what is there";
       case UNEVEN_ADDITIONS -> "the additions leave a wide gap, or repeat";
-      case OVER_RANGE_USED -> "a reading above the instrument's range was used";
       case OUTSIDE_WORKING_RANGE -> "the result lies outside the method's working range";
       case SCATTERED_READINGS -> "the readings of one flask scatter";
       case BLANK_MISSING -> "the method asks for a blank and there is none";
@@ -61,7 +60,6 @@ final class Words {
       case RECOVERY_OUT -> "a recovery of the batch is out of its limits";
       case DUPLICATES_APART -> "duplicates of the batch lie apart";
       case SERIES_DISAGREE -> "series of one sample disagree";
-      case INCOMPLETE -> "flasks are missing and no longer waited for";
       case SIMILAR_ID -> "two sample IDs differ only in case or blanks";
       case OVER_RANGE -> "a reading above the instrument's range";
       case LEFT_OUT -> "a reading below range, or missing, was left out";
@@ -82,7 +80,7 @@ final class Words {
   /** Whether a flag is one of the statistical tests that share the false-alarm rate. */
   static boolean isTested(FlagKind kind) {
     return switch (kind) {
-      case BENT, ODD_FLASK, NOISY, SUSPECTED_SLIP, ODD_SLOPE -> true;
+      case BENT, ODD_FLASK, ODD_LEVEL, NOISY, SUSPECTED_SLIP, ODD_SLOPE -> true;
       default -> false;
     };
   }

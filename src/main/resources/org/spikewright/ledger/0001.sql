@@ -98,7 +98,8 @@ CREATE TABLE reading (
   nth INTEGER NOT NULL,
   -- NULL where the instrument gave no number
   signal DOUBLE PRECISION,
-  -- 0 a number, 1 over range, 2 below range, 3 missing
+  -- 0 a number, 1 over range, 2 below range, 3 missing; 4 a mean of several readings, behind
+  -- whose text stand their standard deviation and number, each after a U+001F
   state INTEGER NOT NULL,
   text TEXT NOT NULL,
   facts INTEGER NOT NULL,

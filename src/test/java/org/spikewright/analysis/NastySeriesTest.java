@@ -141,7 +141,7 @@ class NastySeriesTest {
     try {
       List<Outcome> outcomes = new ArrayList<>();
       List<Fitted> fitted = night.stream().map(Fitted::of).toList();
-      Analysis.of(fitted, JUDGE, BOOK, Recall.NOTHING).forEach(outcomes::add);
+      Analysis.of(fitted, JUDGE, DayFacts.of(BOOK)).forEach(outcomes::add);
       assertThat(outcomes).as(seen).hasSameSizeAs(night);
       return outcomes;
     } catch (RuntimeException trouble) {

@@ -138,7 +138,7 @@ class ProofTest {
               .map(StatedSeries::gathered)
               .toList();
       List<Fitted> fitted = series.stream().map(Fitted::of).toList();
-      Analysis analysis = Analysis.of(fitted, JUDGE, BOOK, Recall.NOTHING);
+      Analysis analysis = Analysis.of(fitted, JUDGE, DayFacts.of(BOOK));
       for (Fitted one : fitted.subList(0, fault.touched())) {
         Outcome outcome = analysis.outcome(one);
         Set<FlagKind> flags = EnumSet.noneOf(FlagKind.class);

@@ -5,8 +5,12 @@ import static org.assertj.core.api.Assertions.assertThat;
 import java.io.IOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
+import java.util.ArrayList;
 import java.util.List;
 import java.util.stream.Stream;
+import org.apache.poi.ss.usermodel.SheetVisibility;
+import org.apache.poi.ss.usermodel.Workbook;
+import org.apache.poi.ss.usermodel.WorkbookFactory;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 import org.junit.jupiter.params.ParameterizedTest;
@@ -39,6 +43,25 @@ class DemoCommandTest {
     assertThat(copy.resolve("summaries/summary-2026-03-04-r1.xlsx")).isRegularFile();
     assertThat(files(copy)).isEqualTo(made);
     assertThat(files(EXAMPLE)).isEqualTo(before);
+  }
+
+  @Test
+  void theClosingLinesNameEverySheetOfTheWorkbook() throws IOException {
+    Path copy = folder.resolve("copy");
+    String said = demo(EXAMPLE, copy).out();
+    String named = said.substring(said.indexOf("The workbook: "));
+    Path workbook = copy.resolve("summaries/summary-2026-03-04-r1.xlsx");
+    try (Workbook book = WorkbookFactory.create(workbook.toFile(), null, true)) {
+      List<String> visible = new ArrayList<>();
+      for (int i = 0; i < book.getNumberOfSheets(); i++) {
+        if (book.getSheetVisibility(i) == SheetVisibility.VISIBLE) {
+          visible.add(book.getSheetName(i));
+        }
+      }
+      assertThat(visible)
+          .hasSizeGreaterThan(6)
+          .allSatisfy(name -> assertThat(named).contains(name));
+    }
   }
 
   @Test

@@ -12,8 +12,8 @@ import java.util.TreeMap;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 import org.spikewright.analysis.Analysis;
+import org.spikewright.analysis.DayFacts;
 import org.spikewright.analysis.Fitted;
-import org.spikewright.analysis.Recall;
 import org.spikewright.fit.PooledSeries;
 import org.spikewright.fit.SimulatedNight;
 import org.spikewright.judgement.CriteriaBook;
@@ -88,7 +88,7 @@ class SameFlagsTest {
     List<StatedSeries> night = StatedSeries.night(made, new Random(1));
     TreeMap<String, String> expected = new TreeMap<>();
     List<Fitted> fitted = night.stream().map(StatedSeries::gathered).map(Fitted::of).toList();
-    for (Outcome outcome : Analysis.of(fitted, JUDGE, BOOK, Recall.NOTHING)) {
+    for (Outcome outcome : Analysis.of(fitted, JUDGE, DayFacts.of(BOOK))) {
       expected.put(
           outcome.gathered().key().subject().sample().text(),
           said(outcome.verdict().word(), outcome));

@@ -22,6 +22,7 @@ import org.spikewright.reading.MethodFacts;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Role;
 import org.spikewright.reading.Signal;
+import org.spikewright.reading.Spread;
 import org.spikewright.table.Cell;
 import org.spikewright.table.Row;
 import org.spikewright.table.Source;
@@ -41,7 +42,7 @@ class ExamplesTest {
   void allLoad() {
     MappingFolder folder = MappingFolder.load(MAPPINGS, LISBON);
     assertThat(folder.faults()).isEmpty();
-    assertThat(folder.good()).hasSize(9);
+    assertThat(folder.good()).hasSize(15);
   }
 
   @Test
@@ -49,8 +50,10 @@ class ExamplesTest {
     String text = Files.readString(MAPPINGS.resolve("reference-all-keys.toml"));
     MappingKeys.KEYS.forEach(
         (section, keys) -> {
-          if (!section.equals("label") && !section.equals("file") && !section.equals("fixed")) {
-            for (String key : keys) {
+          boolean ofFacts =
+              List.of("label", "file", "fixed", "layout", "block", "sheet").contains(section);
+          for (String key : keys) {
+            if (!ofFacts || Fact.of(key).isEmpty()) {
               assertThat(text).as(section).containsPattern("(?m)^(#: )?\\[?" + key + "( *=|\\])");
             }
           }
@@ -251,6 +254,116 @@ class ExamplesTest {
   }
 
   @Test
+  void wideByReplicate() {
+    Trial trial =
+        Trial.text(
+            mapping("wide-by-replicate.toml"),
+            "flame/a.csv",
+            ";",
+            "Sample;Spike;Abs 1;Abs 2;Abs 3",
+            ";µL;;;",
+            "W-1;0;0,101;0,103;0,099",
+            "W-1;50;0,201;OVER;",
+            "Mean;;0,15;;");
+    assertThat(trial.tally()).isEqualTo(new Tally(7, 6, 0, 1));
+    assertThat(trial.readings)
+        .extracting(Reading::replicate)
+        .containsExactly("1", "2", "3", "1", "2", "3");
+    assertThat(trial.readings.get(2).position().within()).isEqualTo("line 3, column 5");
+    assertThat(trial.readings.get(3).facts().addition().amount()).hasToString("50 µL");
+  }
+
+  @Test
+  void wideByAnalyte() {
+    Trial trial =
+        Trial.text(
+            mapping("wide-by-analyte.toml"),
+            "plasma/a.csv",
+            ",",
+            "Sample,Tube,Spike,Acquired,Cd 228.8 signal,Cd 228.8 RSD,Pb 283.3 signal,Pb 283.3 RSD",
+            "W-1,1,0,2025-01-15 18:00,1000,2.5,900,",
+            "W-1,2,0.5,2025-01-15 18:01,2000,1.5,1800,1");
+    assertThat(trial.tally()).isEqualTo(new Tally(4, 3, 1, 0));
+    Reading second = trial.readings.get(1);
+    assertThat(second.subject().analyte()).isEqualTo("Cd");
+    assertThat(second.subject().line()).isEqualTo("228.8");
+    assertThat(second.signal()).isEqualTo(mean(2000, "2000", new Spread(30, 3)));
+    assertThat(trial.rejections.get(0).column()).isEqualTo("signal_sd");
+    assertThat(trial.rejections.get(0).position().within()).isEqualTo("line 2, column 8");
+  }
+
+  @Test
+  void wideByFlask() {
+    Trial trial =
+        Trial.text(
+            mapping("wide-by-flask.toml"),
+            "colour/a.csv",
+            "\t",
+            "Sample\tReading\t0 mL\t0,5 mL\t1 mL",
+            "W-1\t1\t0,10\t0,15\t0,20",
+            "W-1\t2\t0,11\t\t0,21");
+    assertThat(trial.tally()).isEqualTo(new Tally(6, 6, 0, 0));
+    assertThat(trial.readings)
+        .extracting(reading -> reading.facts().addition().amount().toString())
+        .containsExactly("0 mL", "0.5 mL", "1 mL", "0 mL", "0.5 mL", "1 mL");
+    assertThat(trial.readings.get(4).signal()).isInstanceOf(Signal.NoNumber.class);
+  }
+
+  @Test
+  void meanAndSd() {
+    Trial trial =
+        Trial.text(
+            mapping("mean-and-sd.toml"),
+            "furnace2/a.csv",
+            ",",
+            "Sample,Position,Added µL,Mean,SD,n",
+            "W-1,1,0,0.1234,0.0021,3",
+            "W-1,2,5,0.2234,,1",
+            "W-1,3,10,0.3234,,3");
+    assertThat(trial.tally()).isEqualTo(new Tally(3, 2, 1, 0));
+    assertThat(trial.readings.get(0).signal())
+        .isEqualTo(mean(0.1234, "0.1234", new Spread(0.0021, 3)));
+    assertThat(trial.readings.get(1).signal()).isEqualTo(new Signal.Value(0.2234, "0.2234"));
+  }
+
+  @Test
+  void blocks() {
+    Trial trial =
+        Trial.text(
+            mapping("blocks.toml"),
+            "bench3/a.txt",
+            "\t",
+            "Element\tAdded\tRep\tAbs",
+            "Sample: W-1 (tap)",
+            "Cd\t0\t1\t0.10",
+            "\t\t2\t0.11",
+            "\t1\t1\t0.20",
+            "Sample: W-2",
+            "Pb\t0\t1\t0.30",
+            "End of export",
+            "printed 18:00");
+    assertThat(trial.tally()).isEqualTo(new Tally(8, 4, 0, 4));
+    assertThat(trial.readings)
+        .extracting(reading -> reading.subject().sample() + " " + reading.subject().analyte())
+        .containsExactly("W-1 Cd", "W-1 Cd", "W-1 Cd", "W-2 Pb");
+  }
+
+  @Test
+  void oneFileASample() {
+    Trial trial =
+        Trial.text(
+            mapping("one-file-a-sample.toml"),
+            "voltammetry2/B7/W-17.csv",
+            ";",
+            "Added;Current",
+            "0 µL;1,5",
+            "100 µL;2,5");
+    assertThat(trial.tally()).isEqualTo(new Tally(2, 2, 0, 0));
+    assertThat(trial.readings.get(1).subject().sample().text()).isEqualTo("W-17");
+    assertThat(trial.readings.get(1).batch().name()).isEqualTo("B7");
+  }
+
+  @Test
   void weighed() {
     Trial trial =
         Trial.text(
@@ -266,7 +379,8 @@ class ExamplesTest {
     assertThat(first.facts().aliquot().get()).hasToString("10.003 g");
     assertThat(first.facts().addition().amount()).hasToString("0 g");
     assertThat(first.facts().internalStandard().get().mass().get()).hasToString("0.1002 g");
-    assertThat(first.signal()).isEqualTo(new Signal.Value(10040, "10040", OptionalDouble.of(5025)));
+    assertThat(first.signal())
+        .isEqualTo(new Signal.Value(10040, "10040", OptionalDouble.of(5025), Optional.empty()));
     assertThat(trial.readings.get(1).signal())
         .isEqualTo(new Signal.NoNumber(Signal.State.OVER_RANGE, "SAT"));
     assertThat(trial.rejections.get(0).column()).isEqualTo("Counts Tl");
@@ -327,5 +441,9 @@ class ExamplesTest {
     assertThat(second.found()).isEqualTo("the name 'furnace', which a.toml has already");
     assertThat(loaded.faults()).hasSizeGreaterThan(2);
     assertThat(MappingFolder.load(folder.resolve("none"), LISBON).faults()).hasSize(1);
+  }
+
+  private static Signal mean(double value, String text, Spread spread) {
+    return new Signal.Value(value, text, OptionalDouble.empty(), Optional.of(spread));
   }
 }

@@ -126,9 +126,9 @@ class KeysTest {
             "no files",
             "no design in [fixed]",
             "no unit in [result]",
-            "no sample in [columns], [label], [file] or [fixed]",
-            "no analyte in [columns], [label], [file] or [fixed]",
-            "no signal in [columns], [label], [file]");
+            "no sample in [columns], [layout], [label], [block], [sheet], [file] or [fixed]",
+            "no analyte in [columns], [layout], [label], [block], [sheet], [file] or [fixed]",
+            "no signal in [columns], [layout], [label], [block], [sheet], [file]");
     assertThat(Reader.SETTINGS.faults(""))
         .extracting(ConfigFault::found)
         .containsExactlyInAnyOrder(
@@ -271,6 +271,54 @@ class KeysTest {
             "[label]\npattern = '(?<id>.*)'\ncolumn = \"x\"\nflask = \"ib\"\n[columns]",
             7,
             "\"id\""),
+        Arguments.of("[columns]", "[table]\nheader_rows = 3\n[columns]", 5, "1 or 2"),
+        Arguments.of("[columns]", "[table]\ntables = \"al\"\n[columns]", 5, "\"all\""),
+        Arguments.of(
+            "[columns]", "[table]\ntables = \"all\"\nheader = 3\n[columns]", 5, "a cell of the"),
+        Arguments.of(
+            "[columns]", "[table]\nheader_rows = 2\ntables = \"all\"\n[columns]", 6, "footer"),
+        Arguments.of("[columns]", "[table]\ncarry_down = \"sampel\"\n[columns]", 5, "\"sample\""),
+        Arguments.of("[columns]", "[table]\ncarry_down = \"signal\"\n[columns]", 5, "\"sample\""),
+        Arguments.of("[columns]", "[table]\nsheet = 0\n[columns]", 5, "number from 1"),
+        Arguments.of("[columns]", "[layout]\nkind = \"wide\"\n[columns]", 5, "wide by analyte"),
+        Arguments.of(
+            "[columns]", "[layout]\nkind = \"long\"\ncolumns = \"A\"\n[columns]", 6, "kind"),
+        Arguments.of(
+            "[columns]",
+            "[layout]\nkind = \"wide by replicate\"\n[columns]",
+            5,
+            "listed in columns"),
+        Arguments.of(
+            "[columns]",
+            "[layout]\nkind = \"wide by replicate\"\ncolumns = \"A\"\n[columns]",
+            10,
+            "signal in [columns]"),
+        Arguments.of(
+            "[columns]",
+            "[layout]\nkind = \"wide by replicate\"\ncolumns = \"A\"\n[columns]",
+            11,
+            "the headers under [layout]"),
+        Arguments.of(
+            "[columns]",
+            "[layout]\nkind = \"wide by analyte\"\npattern = '(?<replicate>.)'\n[columns]",
+            6,
+            "(?<analyte>"),
+        Arguments.of(
+            "[columns]",
+            "[layout]\nkind = \"wide by analyte\"\npattern = '(?<analyte>.)'\n"
+                + "beside = { line = \"{analite} nm\" }\n[columns]",
+            7,
+            "did you mean analyte"),
+        Arguments.of(
+            "[columns]",
+            "[layout]\nkind = \"wide by analyte\"\npattern = '(?<analyte>.)'\n"
+                + "beside = { line = \"nm\" }\n[columns]",
+            7,
+            "or the column in [columns]"),
+        Arguments.of("\"Rep\"", "\"Rep\"\nsignal_sd = \"sd\"", 9, "readings beside it"),
+        Arguments.of("\"made up\"", "\"made up\"\nreadings = 2.5", 12, "one whole number"),
+        Arguments.of("[columns]", "[block]\npattern = '('\n[columns]", 5, "regular"),
+        Arguments.of("[columns]", "[sheet]\nanalyte = \"a\"\n[columns]", 4, "no pattern"),
         Arguments.of("[columns]", "[roles]\ncolumn = \"x\"\n[columns]", 4, "at least one role"),
         Arguments.of(
             "[result]",
@@ -310,6 +358,16 @@ class KeysTest {
     assertThat(Reader.MAPPING.faults(text))
         .singleElement()
         .satisfies(fault -> assertThat(fault.found()).isEqualTo("role in [fixed] beside [roles]"));
+  }
+
+  @Test
+  void readingsKnownByTheirMeanAloneCannotBePointsOfTheLine() {
+    String text =
+        GOOD.replace("\"Rep\"", "\"Rep\"\nreadings = \"n\"\nsignal_sd = \"sd\"")
+            .replace("[result]", "[method]\nunit = \"reading\"\n[result]");
+    assertThat(Reader.MAPPING.faults(text))
+        .singleElement()
+        .satisfies(fault -> assertThat(fault.expected()).startsWith("unit = \"flask\""));
   }
 
   @Test

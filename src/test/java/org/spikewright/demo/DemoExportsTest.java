@@ -49,11 +49,12 @@ class DemoExportsTest {
   }
 
   @Test
-  void the_furnace_puts_calibration_and_rinses_among_the_samples() {
+  void the_furnace_puts_calibration_checks_and_rinses_among_the_samples() {
     List<String> lines =
         new String(exports.get("furnace/run_0304_am.csv"), FurnaceExport.ENCODING).lines().toList();
     assertThat(lines.stream().filter(line -> line.startsWith("Cal "))).hasSize(4);
-    assertThat(lines.stream().filter(line -> line.startsWith("Rinse;"))).hasSize(9);
+    assertThat(lines.stream().filter(line -> line.startsWith("Rinse;"))).hasSize(12);
+    assertThat(lines.stream().filter(line -> line.contains(";Check;"))).hasSize(2);
   }
 
   @Test

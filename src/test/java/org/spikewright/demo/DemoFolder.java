@@ -55,19 +55,21 @@ public final class DemoFolder {
     text.append("# What the invented samples of watch-folder-example hold. Written by ")
         .append(DemoFolder.class.getName())
         .append(".\n")
-        .append("sample,analyte,instrument,true_concentration,unit,scenario,note\n");
+        .append("sample,analyte,instrument,true_concentration,unit,scenario,flag,verdict,note\n");
     for (DemoNight.Export export : DemoNight.exports()) {
       for (SeriesPlan plan : export.plans()) {
         text.append(
             String.format(
                 Locale.ROOT,
-                "%s,%s,%s,%s,%s,%s,\"%s\"\n",
+                "%s,%s,%s,%s,%s,%s,%s,%s,\"%s\"\n",
                 plan.sample(),
                 plan.recipe().analyte(),
                 plan.recipe().instrument(),
                 plan.truth(),
                 plan.recipe().unit(),
                 plan.scenario().words(),
+                plan.scenario().flag(),
+                plan.scenario().verdict(),
                 plan.note()));
       }
     }

@@ -22,6 +22,9 @@ final class FurnaceExport {
   /** Microlitres of stock in a millilitre of each calibration solution. */
   private static final int[] STANDARDS = {0, 1, 2, 4};
 
+  private static final double CHECK_AREA = 0.23;
+  private static final double CHECK_SD = 0.01;
+
   private final DemoNight.Export export;
   private final String batch;
   private final StringBuilder text = new StringBuilder();
@@ -56,12 +59,14 @@ final class FurnaceExport {
     line(HEADER);
     calibration(element);
     List<ReadingRow> readings = export.readings();
+    check(element, readings.get(0).at().minusSeconds(60));
     for (int i = 0; i < readings.size(); i++) {
       if (i > 0 && readings.get(i).plan() != readings.get(i - 1).plan()) {
         rinse(element, readings.get(i).at().minusSeconds(70));
       }
       reading(readings.get(i));
     }
+    check(element, readings.get(readings.size() - 1).at().plusSeconds(130));
   }
 
   private void reading(ReadingRow row) {
@@ -72,7 +77,7 @@ final class FurnaceExport {
             row.plan().recipe().analyte(),
             Integer.toString(row.flask()),
             Integer.toString(row.replicate()),
-            "Sample",
+            row.plan().scenario().type(),
             number(row.plan().aliquotMillilitres()),
             Integer.toString(row.additionMicrolitres()),
             comma(row.signal()),
@@ -92,6 +97,17 @@ final class FurnaceExport {
       notSample("Cal " + number(concentration), element, type, said, at);
       at = at.plusSeconds(150);
     }
+  }
+
+  /** The drift check: one solution, read before the samples and after them. */
+  private void check(String element, LocalDateTime at) {
+    if (!export.checked()) {
+      return;
+    }
+    double drawn = Measurement.random("check " + element + " " + at).nextGaussian();
+    double area = CHECK_AREA * (1 + CHECK_SD * drawn);
+    String label = "CHK-" + element.toUpperCase(Locale.ROOT);
+    notSample(label, element, "Check", String.format(Locale.ROOT, "%.4f", area), at);
   }
 
   private void rinse(String element, LocalDateTime at) {

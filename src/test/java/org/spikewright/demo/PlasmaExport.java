@@ -37,7 +37,8 @@ final class PlasmaExport {
           "Intensity",
           "Acquired",
           "Batch",
-          "Site");
+          "Site",
+          "Type");
   static final List<String> SEDIMENT_COLUMNS =
       List.of("Test portion (g)", "Digest (mL)", "Dilution", "Dry mass (%)");
 
@@ -127,15 +128,16 @@ final class PlasmaExport {
     row.createCell(6).setCellValue(Double.parseDouble(reading.signal()));
     row.createCell(7).setCellValue(reading.at());
     row.getCell(7).setCellStyle(date);
-    row.createCell(8).setCellValue(isSolid(plan) ? "PS-0304" : "PW-0304");
+    row.createCell(8).setCellValue(isSolid(plan) ? plan.digest().batch() : "PW-0304");
     row.createCell(9).setCellValue(plan.site());
+    row.createCell(10).setCellValue(plan.scenario().type());
   }
 
   private static void digest(XSSFRow row, Digest digest) {
-    row.createCell(10).setCellValue(digest.portionGrams());
-    row.createCell(11).setCellValue(digest.volumeMillilitres());
-    row.createCell(12).setCellValue("1 + " + (digest.dilution() - 1));
-    row.createCell(13).setCellValue(digest.dryPercent());
+    row.createCell(11).setCellValue(digest.portionGrams());
+    row.createCell(12).setCellValue(digest.volumeMillilitres());
+    row.createCell(13).setCellValue("1 + " + (digest.dilution() - 1));
+    row.createCell(14).setCellValue(digest.dryPercent());
   }
 
   private static boolean isSolid(SeriesPlan plan) {

@@ -53,11 +53,17 @@ record SeriesPlan(
     return (flask - 1) * recipe.stepMicrolitres();
   }
 
-  /** What is in a flask counted from 1, in µg/L. */
+  /** What is in a flask counted from 1, in µg/L, when all went as planned. */
   double inFlask(int flask) {
+    return inFlask(flask, 1);
+  }
+
+  /** The same with a stock of so many times the strength it should have. */
+  double inFlask(int flask, double strength) {
     int addition = additionMicrolitres(flask);
     double nanograms =
-        digest.solution(truth) * aliquotMillilitres + recipe.stockMilligramsPerLitre() * addition;
+        digest.solution(truth) * aliquotMillilitres
+            + strength * recipe.stockMilligramsPerLitre() * addition;
     return nanograms / recipe.volume(addition);
   }
 }

@@ -155,7 +155,8 @@ class NightDetectionTest {
   @ParameterizedTest(name = "level {0} wrong by {1}")
   @CsvSource({"1,-0.3", "1,0.3", "2,-0.3", "2,0.3", "3,-0.3", "3,0.3", "4,-0.3", "4,0.3"})
   void a_wrong_volume_at_one_level_is_flagged_and_the_level_named(int level, double wrong) {
-    double named = wrongLevels(400, level, wrong, 41);
+    // The lowest level moves the line least; the others are found every time.
+    double named = wrongLevels(level == 1 ? 1_000 : 200, level, wrong, 41);
     System.out.printf(
         Locale.ROOT,
         "level %d wrong by %+.0f %%: named in %.1f %%%n",

@@ -22,6 +22,7 @@ import org.spikewright.reading.Preparation;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
 import org.spikewright.reading.Signal;
+import org.spikewright.reading.Spread;
 import org.spikewright.reading.Subject;
 import org.spikewright.table.Position;
 import org.spikewright.table.Source;
@@ -88,6 +89,39 @@ class ExactlyOnceTest {
       assertThat(only(ledger, "S1", Samples.DAY, 2).superseded()).isEqualTo(1);
       assertThat(only(ledger, "S1", Samples.DAY, 3).reading()).isEqualTo(first);
       assertThat(only(ledger, "S1", Samples.DAY, 3).superseded()).isEqualTo(2);
+    }
+  }
+
+  private static Reading mean(Reading reading, String text, Spread spread) {
+    return new Reading(
+        reading.subject(),
+        reading.batch(),
+        reading.flask(),
+        true,
+        reading.replicate(),
+        true,
+        reading.measuredAt(),
+        new Signal.Value(0.1, text, OptionalDouble.empty(), Optional.of(spread)),
+        reading.facts(),
+        reading.position());
+  }
+
+  @Test
+  void aMeanKeepsItsSpreadAndAnotherSpreadIsACorrection() {
+    Reading plain = Samples.timed("S1", 0, 1, Samples.MORNING, 0.1);
+    Reading mean = mean(plain, "0.1\u001f\0x", new Spread(0.1 + 0.2, 3));
+    Reading other = mean(plain, "0.1", new Spread(0.1 + 0.2, 13));
+    try (Ledger ledger = Samples.open(folder.resolve("a.db"))) {
+      Samples.deliver(ledger, "run1.csv", List.of(mean));
+      assertThat(Samples.deliver(ledger, "run2.csv", List.of(mean)).repeated()).isEqualTo(1);
+      Samples.deliver(ledger, "run3.csv", List.of(other));
+      Samples.deliver(ledger, "run4.csv", List.of(plain));
+      Samples.deliver(ledger, "run5.csv", List.of(other));
+      assertThat(only(ledger, "S1", Samples.DAY, 2).reading()).isEqualTo(mean);
+      assertThat(only(ledger, "S1", Samples.DAY, 3).reading()).isEqualTo(other);
+      assertThat(only(ledger, "S1", Samples.DAY, 4).reading()).isEqualTo(plain);
+      assertThat(only(ledger, "S1", Samples.DAY, 5).reading()).isEqualTo(other);
+      assertThat(only(ledger, "S1", Samples.DAY, 5).superseded()).isEqualTo(3);
     }
   }
 

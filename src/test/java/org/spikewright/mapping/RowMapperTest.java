@@ -12,6 +12,8 @@ import org.junit.jupiter.params.provider.CsvSource;
 import org.spikewright.mapping.Rejection.Reason;
 import org.spikewright.reading.Addition;
 import org.spikewright.reading.Batch;
+import org.spikewright.reading.CalibrationPoint;
+import org.spikewright.reading.CheckReading;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Role;
 import org.spikewright.reading.Signal;
@@ -239,6 +241,44 @@ class RowMapperTest {
         .containsExactly("1", "2", "1", "1", "3");
     assertThat(trial.readings).extracting(Reading::replicateMapped).containsOnly(false);
     assertThat(trial.readings.get(0).batch()).isEqualTo(new Batch("run7.csv", true));
+  }
+
+  @Test
+  void driftChecksAndCalibrationSolutionsAreReadBesideTheSamples() {
+    String toml =
+        PLAIN.replace(
+                "[columns]",
+                "[columns]\ncalibration_concentration = { header = \"Conc\", unit = \"µg/L\" }")
+            + """
+              [roles]
+              column = "Type"
+              sample = "Unk*"
+              calibration = "Std*"
+              drift_check = "CCV"
+              """;
+    Trial trial =
+        Trial.text(
+            Trial.mapping(toml),
+            "a.csv",
+            ",",
+            HEADER + ",Type,Conc",
+            "Std 1,Cd,0.1,2025-01-15 18:28,,Std,5",
+            "Std 2,Cd,0.2,2025-01-15 18:29,,Std,",
+            "CCV,Cd,0.11,2025-01-15 18:30,,CCV,",
+            "W-1,Cd,0.1,2025-01-15 18:31,0,Unk,",
+            "CCV,Cd,oops,2025-01-15 18:32,,CCV,");
+    assertThat(trial.tally()).isEqualTo(new Tally(5, 1, 2, 0, 1, 1));
+    assertThat(trial.besideSamples.get(0))
+        .isInstanceOfSatisfying(
+            CalibrationPoint.class,
+            point -> {
+              assertThat(point.concentration()).hasToString("5 µg/L");
+              assertThat(point.subject().sample().text()).isEqualTo("Std 1");
+            });
+    assertThat(trial.besideSamples.get(1)).isInstanceOf(CheckReading.class);
+    assertThat(trial.rejections)
+        .extracting(Rejection::column)
+        .containsExactly("calibration_concentration", "Abs");
   }
 
   @Test

@@ -9,6 +9,7 @@ import java.util.List;
 import java.util.Optional;
 import org.spikewright.config.Loaded;
 import org.spikewright.config.MappingFile;
+import org.spikewright.reading.BatchReading;
 import org.spikewright.reading.Reading;
 import org.spikewright.table.Cell;
 import org.spikewright.table.Row;
@@ -19,6 +20,7 @@ public final class Trial implements MappedSink {
   /** What came out. */
   public final List<Reading> readings = new ArrayList<>();
 
+  public final List<BatchReading> besideSamples = new ArrayList<>();
   public final List<Rejection> rejections = new ArrayList<>();
   public MappedFile file;
 
@@ -27,6 +29,11 @@ public final class Trial implements MappedSink {
   @Override
   public void reading(Reading reading) {
     readings.add(reading);
+  }
+
+  @Override
+  public void batchReading(BatchReading reading) {
+    besideSamples.add(reading);
   }
 
   @Override

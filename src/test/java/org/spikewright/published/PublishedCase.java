@@ -24,6 +24,7 @@ import org.spikewright.mapping.MappedSink;
 import org.spikewright.mapping.Mapping;
 import org.spikewright.mapping.Rejection;
 import org.spikewright.mapping.RowMapper;
+import org.spikewright.reading.BatchReading;
 import org.spikewright.reading.LabCalendar;
 import org.spikewright.reading.Reading;
 import org.spikewright.reading.Recorded;
@@ -139,6 +140,11 @@ public final class PublishedCase {
     @Override
     public void reading(Reading reading) {
       recorded.add(new Recorded(reading, 1, ARRIVED, 0));
+    }
+
+    @Override
+    public void batchReading(BatchReading reading) {
+      throw new AssertionError("not expected: " + reading);
     }
 
     @Override

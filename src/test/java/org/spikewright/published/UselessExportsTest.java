@@ -11,6 +11,7 @@ import org.junit.jupiter.api.io.TempDir;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.Arguments;
 import org.junit.jupiter.params.provider.MethodSource;
+import org.spikewright.judgement.Flag;
 import org.spikewright.judgement.FlagKind;
 import org.spikewright.judgement.Outcome;
 import org.spikewright.judgement.Verdict;
@@ -125,9 +126,12 @@ class UselessExportsTest {
               Verdict.REPEAT,
               FlagKind.NO_ADDITIONS,
               FlagKind.NO_UNSPIKED_FLASK),
-          // In one vessel an equal signal in a growing volume is a rising amount: a line, far too
-          // flat.
-          new Export("equal signals", RISING, read("5", "5", "5", "5"), Verdict.REPEAT),
+          new Export(
+              "equal signals",
+              RISING,
+              read("5", "5", "5", "5"),
+              Verdict.REPEAT,
+              FlagKind.SLOPE_NOT_ESTABLISHED),
           new Export(
               "zeros",
               RISING,
@@ -199,7 +203,8 @@ class UselessExportsTest {
       lines[i + 1] = "BW-1," + i + "," + export.added()[i] + "," + export.signals()[i] + ",2";
     }
     Outcome outcome = HandBench.read(folder, bench.mapping(), lines).only();
-    assertThat(outcome.flags()).extracting(flag -> flag.kind()).contains(export.flags());
+    assertThat(outcome.flags().stream().map(Flag::kind).toList())
+        .containsAll(List.of(export.flags()));
     assertThat(outcome.verdict()).isEqualTo(export.verdict());
     assertThat(outcome.flags())
         .isNotEmpty()

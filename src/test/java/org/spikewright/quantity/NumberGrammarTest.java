@@ -102,6 +102,24 @@ class NumberGrammarTest {
   }
 
   @Test
+  void digitsWithAMarkAmongThemGiveTheNearestDouble() {
+    long seed = 99;
+    Random random = new Random(seed);
+    for (int i = 0; i < 100_000; i++) {
+      int length = 1 + random.nextInt(18);
+      StringBuilder text = new StringBuilder();
+      for (int digit = 0; digit < length; digit++) {
+        text.append((char) ('0' + random.nextInt(10)));
+      }
+      text.insert(random.nextInt(length + 1), '.');
+      assertThat(NumberGrammar.POINT.parse(text.toString()))
+          .as("seed %s, %s", seed, text)
+          .hasValue(Double.parseDouble(text.toString()));
+    }
+    assertThat(NumberGrammar.POINT.parse(".")).isEmpty();
+  }
+
+  @Test
   void neverThrowsAndNeverGivesWhatIsNotFinite() {
     long seed = 7;
     Random random = new Random(seed);

@@ -3,7 +3,9 @@ package org.spikewright.quantity;
 import static org.assertj.core.api.Assertions.assertThat;
 import static org.assertj.core.api.Assertions.assertThatThrownBy;
 
+import java.math.BigDecimal;
 import java.util.OptionalDouble;
+import java.util.Random;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
@@ -28,6 +30,23 @@ class NumbersTest {
   void printsTheShortestTextThatReadsBack(double value, String printed) {
     assertThat(Numbers.plain(value)).isEqualTo(printed);
     assertThat(Double.parseDouble(Numbers.plain(value))).isEqualTo(value + 0.0);
+  }
+
+  @Test
+  void aShortDecimalIsPrintedAsItIsAndReadsBackAsItWas() {
+    long seed = 4711;
+    Random random = new Random(seed);
+    for (int i = 0; i < 100_000; i++) {
+      BigDecimal decimal =
+          BigDecimal.valueOf(random.nextLong() % 1_000_000_000_000L, random.nextInt(9));
+      double value = decimal.doubleValue();
+      String exact = value == 0 ? "0" : decimal.stripTrailingZeros().toPlainString();
+      if (value == 0 || Math.abs(value) >= 1e-6) {
+        assertThat(Numbers.plain(value)).as("seed %s, %s", seed, decimal).isEqualTo(exact);
+      }
+      double any = value * random.nextDouble();
+      assertThat(Double.parseDouble(Numbers.plain(any))).as("seed %s", seed).isEqualTo(any + 0.0);
+    }
   }
 
   @Test

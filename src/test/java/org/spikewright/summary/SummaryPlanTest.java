@@ -8,6 +8,7 @@ import java.util.concurrent.atomic.AtomicInteger;
 import org.junit.jupiter.api.Test;
 import org.spikewright.judgement.Verdict;
 import org.spikewright.testkit.Nights;
+import org.spikewright.testkit.PooledNights;
 
 class SummaryPlanTest {
 
@@ -35,10 +36,13 @@ class SummaryPlanTest {
             "To repeat",
             "Series",
             "Plot",
+            "Noise",
+            "Controls",
             "Files",
             "Refused rows",
             "Settings",
-            "Plot data");
+            "Plot data",
+            "Noise data");
   }
 
   @Test
@@ -47,7 +51,7 @@ class SummaryPlanTest {
     List<List<CellPlan>> series = rows(sheet(plan, "Series"));
     int links = 0;
     for (List<CellPlan> row : sheet(plan, "Results").rows()) {
-      CellPlan.Link link = (CellPlan.Link) row.get(18);
+      CellPlan.Link link = (CellPlan.Link) row.get(20);
       List<CellPlan> heading = series.get(link.row() - 1);
       assertThat(text(heading.get(0))).isEqualTo(text(row.get(3)));
       assertThat(text(heading.get(1))).startsWith(text(row.get(0)) + " · " + text(row.get(1)));
@@ -77,6 +81,26 @@ class SummaryPlanTest {
     SeriesIndex index = SeriesIndex.of(Nights.large(300), java.util.Optional.empty());
     assertThat(index.entries()).hasSize(300);
     assertThat(index.differing()).isZero();
+  }
+
+  @Test
+  void storedAndLiveNumbersAgreeOnWeightedLinesAndOnTheIntervalsOfPools() {
+    Night night = PooledNights.closed();
+    SeriesIndex index = SeriesIndex.of(night, java.util.Optional.empty());
+    assertThat(index.differing()).isZero();
+    int weighted = 0;
+    int pooled = 0;
+    for (var outcome : night.outcomes()) {
+      SeriesBlock block = SeriesBlock.of(outcome, 10);
+      assertThat(block.rows()).hasSize(block.height());
+      if (block.live().isPresent()) {
+        LiveCells live = block.live().get();
+        weighted += live.quantities().get(0).formula().startsWith("SUMPRODUCT") ? 1 : 0;
+        pooled += live.pooled().stream().filter(LiveCells.Quantity::isChecked).count() == 7 ? 1 : 0;
+      }
+    }
+    assertThat(weighted).isEqualTo(PooledNights.WEIGHTED);
+    assertThat(pooled).isEqualTo(PooledNights.LINES);
   }
 
   @Test
@@ -139,7 +163,9 @@ class SummaryPlanTest {
             night.files(),
             night.refused(),
             night.settings(),
-            night.criteria());
+            night.criteria(),
+            night.evidence(),
+            night.controls());
     SummaryPlan.of(counted).sheets().forEach(SummaryPlanTest::rows);
     assertThat(walks).hasValue(2);
   }
@@ -147,7 +173,7 @@ class SummaryPlanTest {
   @Test
   void aNightWithoutSeriesHasEverySheet() {
     SummaryPlan plan = SummaryPlan.of(Nights.empty());
-    assertThat(plan.sheets()).hasSize(9);
+    assertThat(plan.sheets()).hasSize(12);
     assertThat(text(rows(sheet(plan, "Plot")).get(0).get(0))).isEqualTo("No series to plot");
     assertThat(text(sheet(plan, "To repeat").head().get(0).get(0))).isEqualTo("Nothing to repeat");
   }

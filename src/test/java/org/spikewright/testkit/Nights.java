@@ -11,6 +11,14 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.Random;
+import org.spikewright.analysis.Analysis;
+import org.spikewright.analysis.ControlBook;
+import org.spikewright.analysis.ControlHistory;
+import org.spikewright.analysis.DayFacts;
+import org.spikewright.analysis.Evidence;
+import org.spikewright.analysis.Fitted;
+import org.spikewright.analysis.NightEvidence;
+import org.spikewright.analysis.Recall;
 import org.spikewright.judgement.CriteriaBook;
 import org.spikewright.judgement.Judge;
 import org.spikewright.judgement.Outcome;
@@ -33,6 +41,7 @@ import org.spikewright.reading.Role;
 import org.spikewright.reading.SampleId;
 import org.spikewright.reading.Signal;
 import org.spikewright.reading.Subject;
+import org.spikewright.series.Gathered;
 import org.spikewright.series.Gathering;
 import org.spikewright.series.GatheringRules;
 import org.spikewright.summary.FileEntry;
@@ -106,6 +115,14 @@ public final class Nights {
   /** A night of these outcomes. */
   public static Night night(
       List<Outcome> outcomes, List<FileEntry> files, Iterable<RefusedRow> refused) {
+    return night(outcomes, files, refused, NightEvidence.NONE);
+  }
+
+  private static Night night(
+      List<Outcome> outcomes,
+      List<FileEntry> files,
+      Iterable<RefusedRow> refused,
+      NightEvidence evidence) {
     List<Outcome> byKey =
         outcomes.stream().sorted(Comparator.comparing(o -> o.gathered().key())).toList();
     List<ResultRow> rows =
@@ -117,7 +134,7 @@ public final class Nights {
         LAB_DAY,
         1,
         MOMENT,
-        false,
+        evidence.isProvisional(),
         ZONE,
         "Brackwater Trace Laboratory",
         rows.size(),
@@ -126,7 +143,30 @@ public final class Nights {
         files,
         refused,
         settings(),
-        CriteriaBook.defaults());
+        CriteriaBook.defaults(),
+        evidence,
+        Evidence.NONE.found());
+  }
+
+  /** The small night with what its series say about each other. */
+  public static Night with(Evidence.Found evidence) {
+    Night night = small();
+    return new Night(
+        night.labDay(),
+        night.revision(),
+        night.moment(),
+        night.inProgress(),
+        night.zone(),
+        night.laboratory(),
+        night.seriesCount(),
+        night.results(),
+        night.outcomes(),
+        night.files(),
+        night.refused(),
+        night.settings(),
+        night.criteria(),
+        night.evidence(),
+        evidence);
   }
 
   private static int urgency(Verdict verdict) {
@@ -223,10 +263,25 @@ public final class Nights {
   }
 
   private static Outcome judged(Subject subject, List<Recorded> readings) {
-    return JUDGE.judge(new Gathering(RULES).gather(subject, readings).get(0));
+    return JUDGE.judge(gathered(subject, readings));
   }
 
-  private static Recorded recorded(
+  static Gathered gathered(Subject subject, List<Recorded> readings) {
+    return new Gathering(RULES).gather(subject, readings).get(0);
+  }
+
+  /** A night of these series, looked at together. */
+  static Night together(List<Gathered> series, Recall recall) {
+    List<Gathered> ordered = series.stream().sorted(Comparator.comparing(Gathered::key)).toList();
+    CriteriaBook book = CriteriaBook.defaults();
+    DayFacts facts = new DayFacts(book, recall, ControlBook.EMPTY, List.of(), ControlHistory.NONE);
+    Analysis analysis = Analysis.of(Fitted.each(ordered), JUDGE, facts);
+    List<Outcome> outcomes = new ArrayList<>();
+    analysis.forEach(outcomes::add);
+    return night(outcomes, files(), refused(), analysis.learnt().pools());
+  }
+
+  static Recorded recorded(
       Subject subject,
       String flask,
       int replicate,

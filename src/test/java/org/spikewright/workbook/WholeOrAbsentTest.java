@@ -131,7 +131,9 @@ class WholeOrAbsentTest {
         night.files(),
         night.refused(),
         night.settings(),
-        night.criteria());
+        night.criteria(),
+        night.evidence(),
+        night.controls());
   }
 
   private List<String> names() throws IOException {

@@ -6,13 +6,11 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import org.spikewright.analysis.ControlBook;
 import org.spikewright.reading.Shelf;
 
-/** Reads the tables of stocks and glassware, each with the faults of its own file. */
-final class ShelfReader {
-  static final String STOCKS = "stocks";
-  static final String GLASSWARE = "glassware";
-
+/** Reads the tables beside the configuration, each with the faults of its own file. */
+final class TablesReader {
   private final Map<String, Faults> faults = new LinkedHashMap<>();
 
   /** The text of a table's file, which is there. */
@@ -22,15 +20,27 @@ final class ShelfReader {
     return TomlText.read(file, own);
   }
 
-  /** What the tables hold; where a fault was found, some of it is missing. */
-  Shelf read(SettingsText text) {
+  /** The stocks and the glassware; where a fault was found, some of it is missing. */
+  Shelf shelf(SettingsText text) {
     return new Shelf(
-        text.stocks()
-            .map(table -> StocksFile.read(table, faultsOf(STOCKS, table)))
+        text.table(SettingsText.STOCKS)
+            .map(table -> StocksFile.read(table, faultsOf(SettingsText.STOCKS, table)))
             .orElse(Map.of()),
-        text.glassware()
-            .map(table -> GlasswareFile.read(table, faultsOf(GLASSWARE, table)))
+        text.table(SettingsText.GLASSWARE)
+            .map(table -> GlasswareFile.read(table, faultsOf(SettingsText.GLASSWARE, table)))
             .orElse(Map.of()));
+  }
+
+  /** What the laboratory knows of its controls; likewise. */
+  ControlBook controls(SettingsText text) {
+    return text.table(SettingsText.CONTROLS)
+        .map(
+            table -> {
+              Faults own = faultsOf(SettingsText.CONTROLS, table);
+              return ControlsSection.book(
+                  Section.of(table.parse(own), "", At.START, ControlsSection.KEYS.get(""), own));
+            })
+        .orElse(ControlBook.EMPTY);
   }
 
   private Faults faultsOf(String table, TomlText text) {
