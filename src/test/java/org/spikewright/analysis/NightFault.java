@@ -24,6 +24,7 @@ record NightFault(String words, int touched, Set<FlagKind> names, double least, 
 
   private static final int FEW = 6;
   private static final int THREE = 3;
+  private static final int ONE = 1;
 
   /** Makes a night. */
   interface Maker {
@@ -46,12 +47,8 @@ record NightFault(String words, int touched, Set<FlagKind> names, double least, 
           bend(0.05, NIGHT, 0.35),
           bend(0.10, NIGHT, 0.98),
           bend(0.20, NIGHT, 0.98),
-          slip(
-              "one odd flask, 10 standard deviations off, in 3 of 60",
-              THREE,
-              EnumSet.of(FlagKind.ODD_FLASK, FlagKind.ODD_LEVEL),
-              0.75,
-              NightFault::oddFlask),
+          oddFlask(ONE, 0.75),
+          oddFlask(THREE, 0.4),
           slip(
               "one addition 30 % too large, in 3 of 60",
               THREE,
@@ -101,6 +98,15 @@ record NightFault(String words, int touched, Set<FlagKind> names, double least, 
         (random, plan) ->
             SimulatedNight.bent(
                 random, plan, touched, SimulatedNight.curvatureFor(bias, plan.flasks())));
+  }
+
+  private static NightFault oddFlask(int touched, double least) {
+    return slip(
+        "one odd flask, 10 standard deviations off, in " + touched + " of 60",
+        touched,
+        EnumSet.of(FlagKind.ODD_FLASK, FlagKind.ODD_LEVEL),
+        least,
+        NightFault::oddFlask);
   }
 
   private static NightFault slip(

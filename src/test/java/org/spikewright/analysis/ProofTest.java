@@ -44,10 +44,11 @@ class ProofTest {
 
   private static final int CLEAN_NIGHTS = 600;
 
-  /** For each cell of the table of detection, where a fault touches a few series of a night. */
-  private static final int NIGHTS = 200;
+  /** For each cell of the table of detection. */
+  private static final int TOUCHED = 600;
 
-  private static final int NIGHTS_TOUCHED_WHOLE = 30;
+  private static final int LEAST_NIGHTS = 30;
+  private static final int MOST_NIGHTS = 400;
 
   private static final Set<FlagKind> SERIES_TESTS =
       EnumSet.of(
@@ -203,7 +204,7 @@ class ProofTest {
   }
 
   private static Found found(NightFault fault, int flasks) {
-    int nights = fault.touched() == NightFault.NIGHT ? NIGHTS_TOUCHED_WHOLE : NIGHTS;
+    int nights = Math.max(LEAST_NIGHTS, Math.min(MOST_NIGHTS, TOUCHED / fault.touched()));
     int[] count = {0, 0, 0};
     simulate(
         fault,
